@@ -1,0 +1,195 @@
+"""Dial, face and renderers put together: what both ways in, command line and workbench, stand on."""
+
+from __future__ import annotations
+
+import os
+import tempfile
+from collections.abc import Iterable, Sequence
+from dataclasses import dataclass
+from functools import cached_property
+from os import PathLike, fspath
+from pathlib import Path
+from typing import overload
+
+import numpy as np
+from numpy.typing import ArrayLike
+
+from dialgen import dialfile
+from dialgen.dial import Chain, Dial, build
+from dialgen.dialfile import Source
+from dialgen.drawing import Drawing, Purpose
+from dialgen.errors import DialFileError, Fault, InputError, OutputError, Refused
+from dialgen.face.compose import compose
+from dialgen.face.plate import check_holes, outliner
+from dialgen.face.review import review
+from dialgen.face.ruling import RuledScale, rule
+from dialgen.lettering import numeral_width
+from dialgen.renderers import Options, render
+from dialgen.stage import Array
+
+DEFAULT_MARGIN_MM = 3.0
+
+
+@dataclass(frozen=True, eq=False)
+class Face:
+    """A dial file made into a face: ask it for angles and values, or draw it.
+
+    Scales count from 1, in the file's order.
+    """
+
+    source: Source
+    dial: Dial
+    scales: tuple[RuledScale, ...]
+
+    def chain(self, scale: int = 1) -> Chain:
+        """Return the chain of a scale.
+
+        Raises:
+            InputError: there is no such scale.
+        """
+        if not 1 <= scale <= len(self.scales):
+            raise InputError(f"there is no scale {scale}; the dial has {len(self.scales)}")
+        return self.dial.scales[scale - 1].chain
+
+    @overload
+    def angle(self, value: float, scale: int = 1) -> float: ...
+    @overload
+    def angle(self, value: ArrayLike, scale: int = 1) -> float | Array: ...
+    def angle(self, value: ArrayLike, scale: int = 1) -> float | Array:
+        """Return the pointer's angle in degrees at a value, or at an array of values.
+
+        Raises:
+            NoSuchValue: a value that the scale cannot show, or beyond the stops.
+        """
+        return _like(value, self.chain(scale).angle(np.asarray(value, dtype=float)))
+
+    @overload
+    def value(self, angle: float, scale: int = 1) -> float: ...
+    @overload
+    def value(self, angle: ArrayLike, scale: int = 1) -> float | Array: ...
+    def value(self, angle: ArrayLike, scale: int = 1) -> float | Array:
+        """Return the value shown at an angle in degrees, or at an array of angles.
+
+        Raises:
+            NoSuchValue: an angle beyond the stops, or where no value stands.
+        """
+        return _like(angle, self.chain(scale).value(np.asarray(angle, dtype=float)))
+
+    @cached_property
+    def drawing(self) -> Drawing:
+        """The face as a display list, on a page that is exactly the plate."""
+        return compose(self.dial, self.scales)
+
+    def warnings(self) -> tuple[Fault, ...]:
+        """Return what should be known of the dial and its face, each at its place in the file."""
+        remarks = (*self.dial.remarks, *review(self.drawing, self.scales, outliner(self.dial.file.plate)))
+        return tuple(dict.fromkeys(self.source.fault(r.key, r.message) for r in remarks))
+
+    def render(
+        self,
+        suffix: str,
+        *,
+        margin_mm: float = DEFAULT_MARGIN_MM,
+        layers: Iterable[Purpose] = tuple(Purpose),
+        options: Options = Options(),  # noqa: B008  (frozen)
+    ) -> bytes:
+        """Return the face as a file of the kind that ``suffix`` (".svg" ...) names, at true size.
+
+        Args:
+            suffix: the file's ending, with its point.
+            margin_mm: paper around the plate on every side.
+            layers: the purposes to draw.
+            options: the renderer's own choices.
+
+        Raises:
+            InputError: an ending that is not known.
+            MissingExtra: the renderer's library is not installed.
+        """
+        return render(self.drawing.with_margin(margin_mm).only(frozenset(layers)), suffix, options)
+
+    def draw(
+        self,
+        path: str | PathLike[str],
+        *,
+        margin_mm: float = DEFAULT_MARGIN_MM,
+        layers: Iterable[Purpose] = tuple(Purpose),
+        options: Options = Options(),  # noqa: B008  (frozen)
+    ) -> None:
+        """Write the face to ``path``, whose ending says in which format; see `render`.
+
+        Raises:
+            OutputError: the file cannot be written; one already there is left as it was.
+        """
+        data = self.render(
+            Path(fspath(path)).suffix.lower(), margin_mm=margin_mm, layers=layers, options=options
+        )
+        write_files([(Path(fspath(path)), data)])
+
+
+def load(path: str | PathLike[str]) -> Face:
+    """Return the face that the dial file at ``path`` describes.
+
+    Raises:
+        DialFileError: the file cannot be read or is wrong, with every fault found and its place.
+    """
+    file, source = dialfile.read(path)
+    shape = outliner(file.plate)
+    errors = list(check_holes(file.plate))
+    try:
+        dial = build(file)
+        scales = rule(dial, shape, numeral_width)
+    except Refused as refused:
+        errors += refused.errors
+    except InputError as error:
+        errors.append(error)
+    if errors:
+        raise source.refusal(source.fault_of(error) for error in errors)
+    return Face(source, dial, scales)
+
+
+def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
+    """Write files whole: each to a neighbour first, and all into place only when all are written.
+
+    Raises:
+        OutputError: one cannot be written; then none is touched.
+    """
+    waiting: list[tuple[str, Path]] = []
+    try:
+        for path, data in files:
+            waiting.append((_written_beside(path, data), path))
+        while waiting:
+            temporary, path = waiting[0]
+            os.replace(temporary, path)
+            waiting.pop(0)
+    except OSError as error:
+        reason = error.strerror or str(error)
+        raise OutputError(
+            f"{path}: cannot be written: {reason}; give a path in a folder you may write to"
+        ) from None
+    finally:
+        for temporary, _ in waiting:
+            Path(temporary).unlink(missing_ok=True)
+
+
+def _written_beside(path: Path, data: bytes) -> str:
+    if path.is_dir():
+        raise IsADirectoryError(21, "it is a folder", str(path))
+    handle, name = tempfile.mkstemp(prefix=f".{path.name[:40]}.", suffix=".tmp", dir=path.parent)
+    try:
+        with os.fdopen(handle, "wb") as file:
+            file.write(data)
+        # mkstemp makes files for the owner alone; a drawing gets the usual rights.
+        mask = os.umask(0)
+        os.umask(mask)
+        os.chmod(name, path.stat().st_mode & 0o777 if path.exists() else 0o666 & ~mask)
+    except BaseException:
+        Path(name).unlink(missing_ok=True)
+        raise
+    return name
+
+
+def _like(given: ArrayLike, made: Array) -> float | Array:
+    return float(made) if np.ndim(given) == 0 else made
+
+
+__all__ = ["DEFAULT_MARGIN_MM", "DialFileError", "Face", "load", "write_files"]

@@ -1,0 +1,12 @@
+"""The table of circuits: a row for each kind that a dial file may name."""
+
+from __future__ import annotations
+
+from dialgen.circuit.direct import Direct
+from dialgen.circuit.multiplier import Multiplier
+from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.shunt import Shunt
+
+CIRCUITS: dict[str, type] = {
+    circuit.kind: circuit for circuit in (Direct, Shunt, Multiplier, SeriesOhmmeter, ShuntOhmmeter)
+}

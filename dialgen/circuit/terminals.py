@@ -1,0 +1,87 @@
+"""What a circuit needs to know of the coil behind it and of the scale before it."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from dataclasses import dataclass
+from typing import ClassVar, Protocol
+
+from dialgen.errors import InputError
+from dialgen.stage import Stage
+
+CURRENT_KEY = ("movement", "current")
+RESISTANCE_KEY = ("movement", "resistance")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Coil:
+    """The movement as a two-terminal part; either figure may be unknown until it is needed."""
+
+    current: float | None = None
+    resistance: float | None = None
+
+    def current_a(self, purpose: str) -> float:
+        """Return the full-deflection current.
+
+        Raises:
+            InputError: it is not given; the message says what needs it.
+        """
+        if self.current is None:
+            raise InputError(
+                f'{purpose} needs the full-deflection current; add current = "1 mA"', CURRENT_KEY
+            )
+        return self.current
+
+    def resistance_ohm(self, purpose: str) -> float:
+        """Return the resistance at the terminals; raises as `current_a` does."""
+        if self.resistance is None:
+            raise InputError(
+                f'{purpose} needs the coil\'s resistance; add resistance = "75 ohm"', RESISTANCE_KEY
+            )
+        return self.resistance
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Terminals:
+    """What a circuit sees: the coil on one side, the law's signals on the other.
+
+    Args:
+        coil: the movement.
+        signal: the law, from a bare face value to the signal.
+        rest_signal: the signal where nothing is applied, or that of the scale's start.
+        full_value: the face value at the scale's end.
+        unit: the SI unit of the signal.
+    """
+
+    coil: Coil
+    signal: Callable[[float], float]
+    rest_signal: float
+    full_value: float
+    unit: str | None
+
+    def range(self, given: float | None) -> float:
+        """Return the range that is given, or the signal at the scale's end.
+
+        Raises:
+            InputError: none is given and the scale has no finite signal at its end.
+        """
+        signal = self.signal(self.full_value) if given is None else given
+        if not abs(signal) < float("inf"):
+            raise InputError("the scale has no finite end to take the range from; give range", ("range",))
+        return signal
+
+
+class Circuit(Protocol):
+    """A circuit as the dial file states it; `dialgen.circuit.kinds` has the table of them."""
+
+    kind: ClassVar[str]
+    takes: ClassVar[str | None]
+
+    def stage(self, terminals: Terminals) -> Stage:
+        """Return the circuit as a stage from signal to drive.
+
+        Raises:
+            InputError: it cannot be built; keys are relative to the circuit's table, or start with
+                "movement" where the movement's own keys are at fault.
+        """
+        ...

@@ -1,0 +1,71 @@
+"""The command line: a thin way in over `dialgen.api`.
+
+Each command lives in a module of its own, imported when the command is run or its help is asked
+for, so that ``dialgen --help`` waits for nothing heavy.
+"""
+
+from __future__ import annotations
+
+import sys
+from importlib import import_module
+
+import click
+
+from dialgen import __version__
+
+_COMMANDS = {
+    "new": "a commented dial file to start from",
+    "draw": "the plate, as SVG, PDF, PNG or DXF",
+    "table": "where every mark falls",
+}
+
+_EPILOG = """\b
+A first plate:
+  dialgen new square-panel meter.toml
+  dialgen draw meter.toml -o meter.pdf -o meter.svg
+
+\b
+Completion of commands and options, for bash (zsh and fish alike):
+  eval "$(_DIALGEN_COMPLETE=bash_source dialgen)"
+"""
+
+
+class Commands(click.Group):
+    """Loads a command's module when it is asked for."""
+
+    def list_commands(self, ctx: click.Context) -> list[str]:
+        """Return the commands in the order of the work."""
+        return list(_COMMANDS)
+
+    def get_command(self, ctx: click.Context, cmd_name: str) -> click.Command | None:
+        """Return a command, or None where there is none of that name."""
+        if cmd_name not in _COMMANDS:
+            return None
+        command: click.Command = import_module(f"dialgen.cli.{cmd_name}").command
+        return command
+
+    def format_commands(self, ctx: click.Context, formatter: click.HelpFormatter) -> None:
+        """Write the commands with their line each, without importing them."""
+        with formatter.section("Commands"):
+            formatter.write_dl(list(_COMMANDS.items()))
+
+
+@click.group(
+    cls=Commands,
+    context_settings={"help_option_names": ["-h", "--help"], "max_content_width": 100},
+    epilog=_EPILOG,
+)
+@click.version_option(__version__, prog_name="dialgen")
+def program() -> None:
+    """Make true-size, printable scale plates for analogue meters from a plain dial file."""
+
+
+def main() -> None:
+    """Run the program; exit 0 done, 1 the instrument falls short, 2 the input is wrong."""
+    from dialgen.cli.report import guarded
+
+    for stream in (sys.stdout, sys.stderr):
+        # A value such as −5 or Ω must come out on any terminal, if need be as a question mark.
+        if hasattr(stream, "reconfigure"):
+            stream.reconfigure(errors="replace")
+    sys.exit(guarded(program))

@@ -1,0 +1,136 @@
+"""``dialgen table``: where every mark falls."""
+
+from __future__ import annotations
+
+import json
+import math
+from typing import TYPE_CHECKING
+
+import click
+
+from dialgen.cli.report import say_warnings
+
+if TYPE_CHECKING:
+    from dialgen.api import Face
+    from dialgen.face.ruling import Mark, RuledScale
+
+_EPILOG = """\b
+Examples:
+  dialgen table meter.toml
+  dialgen table meter.toml --json
+  dialgen table meter.toml --at 12.5 --at 30
+"""
+
+_HEAD = ("value", "drive", "angle", "x", "y", "linear face off by")
+
+
+@click.command("table", epilog=_EPILOG)
+@click.argument("file", type=click.Path())
+@click.option("--json", "as_json", is_flag=True, help="Print full figures as JSON.")
+@click.option(
+    "--at",
+    "values",
+    multiple=True,
+    type=float,
+    help="Answer for this value instead; may be given several times.",
+)
+@click.option("--scale", "only", type=click.IntRange(1), help="Of this scale alone, counted from 1.")
+def command(file: str, as_json: bool, values: tuple[float, ...], only: int | None) -> None:
+    """Print where every mark of dial file FILE falls.
+
+    Angles are degrees from straight up, clockwise; x and y millimetres from the pivot.  The last
+    column is what an evenly divided face would have been wrong by at that mark: the worth of
+    the correction.
+    """
+    from dialgen import api
+    from dialgen.errors import InputError
+
+    face = api.load(file)
+    say_warnings(face.warnings())
+    if only is not None and only > len(face.scales):
+        raise InputError(f"there is no scale {only}; the dial has {len(face.scales)}")
+    chosen = [s for i, s in enumerate(face.scales, 1) if only in (None, i)]
+    shown = [(s, _marks_at(s, values) if values else s.marks) for s in chosen]
+    if as_json:
+        click.echo(json.dumps({"scales": [_scale_json(s, marks) for s, marks in shown]}, ensure_ascii=False))
+        return
+    click.echo("\n\n".join(_scale_text(s, marks) for s, marks in shown))
+    for line in _spreads(face):
+        click.echo(line)
+
+
+def _marks_at(scale: RuledScale, values: tuple[float, ...]) -> tuple[Mark, ...]:
+    from dialgen.face.ruling import marks_at
+
+    return marks_at(scale, values)
+
+
+def _scale_json(scale: RuledScale, marks: tuple[Mark, ...]) -> dict[str, object]:
+    spec = scale.spec
+    return {
+        "unit": spec.unit,
+        "from": spec.start,
+        "to": _number(spec.end),
+        "marks": [
+            {
+                "value": _number(m.value),
+                "rank": m.rank.value if m.rank else None,
+                "label": m.label,
+                "drive": m.drive,
+                "angle": m.angle_deg,
+                "x": m.x,
+                "y": m.y,
+            }
+            for m in marks
+        ],
+    }
+
+
+def _number(value: float) -> float | str:
+    return value if math.isfinite(value) else "inf" if value > 0 else "-inf"
+
+
+def _scale_text(scale: RuledScale, marks: tuple[Mark, ...]) -> str:
+    from dialgen.face.ruling import linear_error
+    from dialgen.quantity import plain_number, shown_unit
+
+    unit = shown_unit(scale.spec.unit)
+    rows = []
+    for m in marks:
+        off = linear_error(scale, m)
+        rows.append(
+            (
+                m.label or plain_number(m.value),
+                f"{m.drive:.6f}",
+                f"{m.angle_deg:.4f}",
+                f"{m.x:.4f}",
+                f"{m.y:.4f}",
+                "" if off is None else f"{_rounded(off):+.4g}",
+            )
+        )
+    title = f"{plain_number(scale.spec.start)} to {plain_number(scale.spec.end)} {unit}".rstrip()
+    return "\n".join([title, *_columns(rows)])
+
+
+def _rounded(off: float) -> float:
+    # Rounding noise of an even scale is shown as nothing.
+    return 0.0 if abs(off) < 1e-9 else off
+
+
+def _columns(rows: list[tuple[str, ...]]) -> list[str]:
+    units = ("", "", "deg", "mm", "mm", "")
+    table = [_HEAD, units, *rows]
+    widths = [max(len(row[i]) for row in table) for i in range(len(_HEAD))]
+    return ["  ".join(cell.rjust(w) for cell, w in zip(row, widths, strict=True)).rstrip() for row in table]
+
+
+def _spreads(face: Face) -> list[str]:
+    lines = []
+    for number, scale in enumerate(face.dial.scales, 1):
+        for point in scale.correction.points:
+            if point.count > 1:
+                lines.append(
+                    f"scale {number}: {point.count} readings at {point.nominal_deg:.4g} deg nominal, "
+                    f"spread {point.spread_deg:.3g} deg, averaged"
+                )
+    return list(dict.fromkeys(lines))

@@ -1,0 +1,210 @@
+"""From a dial file to a dial: every scale's chain, or everything that is wrong with them."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass, replace
+
+import numpy as np
+
+from dialgen.circuit.terminals import Circuit, Coil
+from dialgen.dial.bench import correction, old_angle, readings_key
+from dialgen.dial.chain import Chain
+from dialgen.dial.wiring import Wiring, half_value, link, past_points, wire
+from dialgen.dialfile.models import DialFile, Movement, Scale
+from dialgen.errors import InputError, Key, NoSuchValue, Refused, Remark
+from dialgen.geometry.correction import Correction
+from dialgen.geometry.points import Observed
+from dialgen.geometry.response import EVEN
+from dialgen.geometry.sampling import check_one_way, sample_places
+from dialgen.stage import Affine, Array, Span
+
+_STOP_ROOM_DEG = 5.0
+_NO_DRIVE = 1e-12
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class ScaleDial:
+    """One scale: what the file says of it, its chain, and what its correction came from."""
+
+    spec: Scale
+    key: Key
+    chain: Chain
+    correction: Correction
+    wiring: Wiring | None
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Dial:
+    """All scales of one movement, and what should be known of them."""
+
+    file: DialFile
+    scales: tuple[ScaleDial, ...]
+    stops_deg: Span
+    remarks: tuple[Remark, ...]
+
+
+def build(file: DialFile) -> Dial:
+    """Return the dial that a file describes.
+
+    Raises:
+        Refused: with everything that is wrong, as far as one error does not hide another.
+    """
+    errors: list[InputError] = []
+    coil = Coil(current=file.movement.current, resistance=file.movement.resistance)
+    wirings = [_tried(errors, _wiring, scale, i, file.circuit, coil) for i, scale in enumerate(file.scale)]
+    if errors:
+        raise Refused(errors)
+    negative = any(w and _lowest_drive(w, s) < -_NO_DRIVE for w, s in zip(wirings, file.scale, strict=True))
+    stops = file.movement.stops or _default_stops(file.movement, negative=negative)
+    maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings[0])
+    scales, remarks = [], []
+    for i, (scale, wiring) in enumerate(zip(file.scale, wirings, strict=True)):
+        made = _tried(errors, maker.scale, scale, i, wiring)
+        if made:
+            scales.append(made[0])
+            remarks += made[1]
+    if errors:
+        raise Refused(errors)
+    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks)))
+
+
+def _tried(errors: list[InputError], make, *given):  # type: ignore[no-untyped-def]
+    """Return what ``make`` makes of ``given``, or None with its error noted."""
+    try:
+        return make(*given)
+    except InputError as error:
+        errors.append(error)
+        return None
+
+
+def _wiring(scale: Scale, index: int, shared: Circuit | None, coil: Coil) -> Wiring | None:
+    if isinstance(scale.law, Observed):
+        return None
+    return wire(scale, scale.law, ("scale", index), shared, coil)
+
+
+def _lowest_drive(wiring: Wiring, scale: Scale) -> float:
+    values = np.array([scale.start, scale.end])
+    for each in wiring.links:
+        values = each.stage.forward(values)
+    finite = values[np.isfinite(values)]
+    return float(finite.min()) if finite.size else 0.0
+
+
+def _default_stops(movement: Movement, *, negative: bool) -> Span:
+    ends = [movement.rest, movement.full]
+    if negative:
+        # Where the pointer stands at full current reversed.
+        ends.append(2 * movement.rest - movement.full)
+    return min(ends) - _STOP_ROOM_DEG, max(ends) + _STOP_ROOM_DEG
+
+
+@dataclass(frozen=True, slots=True)
+class _Maker:
+    """Makes the scales of one movement."""
+
+    movement: Movement
+    stops_deg: Span
+    circuit: Circuit | None
+    first_scale: Scale
+    first_wiring: Wiring | None
+
+    def scale(self, scale: Scale, index: int, wiring: Wiring | None) -> tuple[ScaleDial, list[Remark]]:
+        key: Key = ("scale", index)
+        if wiring is None:
+            made = self._observed(scale, key)
+            remarks = list(past_points(scale.law, scale, key))
+        else:
+            made, more = self._corrected(scale, key, wiring)
+            remarks = [*wiring.remarks, *more]
+        _check_ends(made)
+        return made, remarks
+
+    def _corrected(self, scale: Scale, key: Key, wiring: Wiring) -> tuple[ScaleDial, tuple[Remark, ...]]:
+        plain = self._chain(scale, wiring)
+        own = scale.all_readings()
+        readings, owner, table = (
+            (own, key, scale) if own else (self.movement.all_readings(), ("movement",), self.movement)
+        )
+        by_value = self._by_value(plain) if own else self._by_first_value()
+        made, remarks = correction(
+            self.movement, readings, readings_key(owner, table), self._by_drive, by_value
+        )
+        if readings:
+            last, _ = link(made.stage, np.array(self.stops_deg))
+            plain = replace(plain, links=(*plain.links, last))
+        return ScaleDial(scale, key, plain, made, wiring), remarks
+
+    def _chain(self, scale: Scale, wiring: Wiring) -> Chain:
+        links = list(wiring.links)
+        movement = self.movement
+        needle = Affine(movement.full - movement.rest, movement.rest)
+        drives = np.array([0.0, 1.0])
+        if movement.response is not EVEN:
+            made, drives = link(movement.response, drives)
+            links.append(made)
+        links.append(link(needle, drives)[0])
+        return Chain(
+            tuple(links), len(wiring.links), movement.rest, movement.full, self.stops_deg, scale.unit
+        )
+
+    def _observed(self, scale: Scale, key: Key) -> ScaleDial:
+        law = scale.law
+        assert isinstance(law, Observed)
+        if scale.all_readings():
+            raise InputError(
+                "an observed scale is its own correction; put the readings among its points",
+                readings_key(key, scale),
+            )
+        positions = [at for _, at in law.points]
+        if law.position == "old":
+            positions = [old_angle(self.movement, at) for at in positions]
+        try:
+            stage = law.curve(tuple(positions), half_value(scale, self.circuit))
+            check_one_way(stage, (scale.start, scale.end), 129)
+        except InputError as error:
+            raise error.under(*key, "law") from None
+        made, _ = link(stage, sample_places((scale.start, scale.end), 33))
+        movement = self.movement
+        chain = Chain((made,), None, movement.rest, movement.full, self.stops_deg, scale.unit)
+        return ScaleDial(scale, key, chain, Correction(stage=Affine(1.0)), None)
+
+    def _by_drive(self, drive: float) -> float:
+        movement = self.movement
+        low, high = movement.response.domain
+        if not low <= drive <= high:
+            raise NoSuchValue(
+                f"a drive of {drive:.4g} is outside the movement's response; leave this reading out"
+            )
+        deflection = float(movement.response.forward(np.array([drive]))[0])
+        return movement.rest + deflection * (movement.full - movement.rest)
+
+    def _by_first_value(self):  # type: ignore[no-untyped-def]
+        if self.first_wiring is None:
+            return _no_first_value
+        return self._by_value(self._chain(self.first_scale, self.first_wiring))
+
+    def _by_value(self, chain: Chain):  # type: ignore[no-untyped-def]
+        # A reading may lie beyond the nominal stops: the departure is what it is there to show.
+        free = replace(chain, stops_deg=(-math.inf, math.inf))
+        return lambda value: float(free.angle(np.array(value)))
+
+
+def _no_first_value(value: float) -> float:
+    raise InputError("a reading by value needs a first scale with a law and circuit; give current or voltage")
+
+
+def _check_ends(made: ScaleDial) -> None:
+    """Refuse a scale whose ends the pointer cannot reach, or whose angles do not move one way."""
+    scale, chain, key = made.spec, made.chain, made.key
+    ends: list[Array] = []
+    for name, value in (("from", scale.start), ("to", scale.end)):
+        try:
+            ends.append(chain.angle(np.array([value])))
+        except NoSuchValue as error:
+            raise NoSuchValue(error.message, (*key, name), *error.keys) from None
+    if ends[0][0] == ends[1][0]:
+        raise InputError(
+            "both ends of the scale stand at one angle; change from, to or the circuit", (*key, "to")
+        )

@@ -1,0 +1,184 @@
+"""One scale's law and circuit as links of its chain, up to the drive."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass, replace
+from typing import Any
+
+import numpy as np
+
+from dialgen.circuit.direct import Direct
+from dialgen.circuit.terminals import Circuit, Coil, Terminals
+from dialgen.dial.chain import Link
+from dialgen.dialfile.models import Scale
+from dialgen.errors import InputError, Key, Remark
+from dialgen.geometry.formula import Formula
+from dialgen.geometry.laws import Law, Linear
+from dialgen.geometry.points import Observed, Table
+from dialgen.geometry.sampling import check_one_way, sample_places
+from dialgen.quantity import split_unit
+from dialgen.stage import Affine, Array, Span, Stage
+
+_SAMPLES = 129
+_FORMULA_SAMPLES = 4097
+_NEAR_OWN = 0.01
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Wiring:
+    """A scale's way from value to drive.
+
+    Args:
+        links: value to drive.
+        terminals: what the circuit was built from.
+        circuit: the circuit itself, and the key of its table.
+        remarks: what was assumed.
+    """
+
+    links: tuple[Link, ...]
+    terminals: Terminals
+    circuit: Circuit
+    circuit_key: Key
+    remarks: tuple[Remark, ...]
+
+    def designed(self, values: Array) -> Array:
+        """Return the drives at ``values`` of the circuit as designed, whatever was built."""
+        circuit: Any = self.circuit
+        as_designed = replace(circuit, built=None) if getattr(circuit, "built", None) else circuit
+        step = values
+        for each in self.links[:-1]:
+            step = each.stage.forward(step)
+        return as_designed.stage(self.terminals).forward(step)
+
+
+def link(stage: Stage, values: Array) -> tuple[Link, Array]:
+    """Return the stage as a link, and what it makes of ``values``, by whose size it judges rounding."""
+    made = stage.forward(values)
+    finite = np.abs(made[np.isfinite(made)])
+    return Link(stage, float(finite.max()) if finite.size else 1.0), made
+
+
+def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -> Wiring:
+    """Return the links from a scale's values to the drive.
+
+    Args:
+        scale: the scale, with its span and unit.
+        law: its law.
+        key: the scale's own key, ``("scale", index)``.
+        shared: the circuit that serves scales without one of their own.
+        coil: the movement's coil.
+
+    Raises:
+        InputError: law, circuit and span do not go together.
+    """
+    prefix, unit = split_unit(scale.unit)
+    factor = 1.0 if law.takes_face_values else prefix
+    span = (scale.start * factor, scale.end * factor)
+    stage = law.stage(span)
+    _check_law(stage, law, scale, span, key)
+    circuit = scale.circuit or shared or Direct()
+    circuit_key: Key = (*key, "circuit") if scale.circuit else ("circuit",)
+    signal_unit = law.signal_unit(unit)
+    _check_units(circuit, signal_unit, law, key, circuit_key)
+    zero = law.zero(span)
+    terminals = Terminals(
+        coil=coil,
+        signal=lambda value: float(stage.forward(np.array([value * factor]))[0]),
+        rest_signal=float(stage.forward(np.array([span[0]]))[0]) if zero is None else zero,
+        full_value=scale.end,
+        unit=signal_unit,
+    )
+    try:
+        circuit_stage = circuit.stage(terminals)
+    except InputError as error:
+        raise _placed(error, circuit_key) from None
+    values = sample_places((scale.start, scale.end), 33)
+    links = []
+    for each in ([Affine(factor)] if factor != 1.0 else []) + [stage, circuit_stage]:
+        made, values = link(each, values)
+        links.append(made)
+    remarks = (*_own_current(circuit, terminals, circuit_key), *past_points(law, scale, key))
+    return Wiring(
+        links=tuple(links), terminals=terminals, circuit=circuit, circuit_key=circuit_key, remarks=remarks
+    )
+
+
+def half_value(scale: Scale, shared: Circuit | None) -> float | None:
+    """Return the half-scale value in face units of the ohms circuit beside a scale, if it has one."""
+    half = getattr(scale.circuit or shared, "half", None)
+    return half.value / split_unit(scale.unit)[0] if half is not None else None
+
+
+def _check_law(stage: Stage, law: Law, scale: Scale, span: Span, key: Key) -> None:
+    low, high = stage.domain
+    for name, value, at in (("from", scale.start, span[0]), ("to", scale.end, span[1])):
+        with np.errstate(all="ignore"):
+            fits = low <= at <= high and np.isfinite(stage.forward(np.array([at]))).all()
+        if not fits and not (math.isinf(at) and isinstance(law, Linear)):
+            raise InputError(
+                f"the {law.kind} law has no signal at {value:g}; {_law_mend(low, high)}",
+                (*key, name),
+                (*key, "law"),
+            )
+    try:
+        check_one_way(stage, span, _FORMULA_SAMPLES if isinstance(law, Formula) else _SAMPLES)
+    except InputError as error:
+        raise InputError(error.message, (*key, "law"), (*key, "from"), (*key, "to")) from None
+
+
+def _law_mend(low: float, high: float) -> str:
+    if math.isfinite(low):
+        return f"the scale must lie above {low:g}" + (f" and up to {high:g}" if math.isfinite(high) else "")
+    return "end the scale at a finite value" if math.isinf(high) else f"the scale must end below {high:g}"
+
+
+def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key, circuit_key: Key) -> None:
+    if circuit.takes is None or unit is None or circuit.takes == unit:
+        return
+    plain = isinstance(law, Linear) and law.per is None
+    names = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
+    what = names.get(unit, f"in {unit}") if unit else "a pure number"
+    raise InputError(
+        f"the {circuit.kind} takes {names[circuit.takes]}, but the scale's signal is {what}; "
+        "change the unit, the law or the circuit",
+        (*key, "unit" if plain else "law"),
+        (*circuit_key, "kind"),
+    )
+
+
+def _placed(error: InputError, circuit_key: Key) -> InputError:
+    """Put a circuit's relative keys under its table; keys of the movement are whole already."""
+    error.keys = tuple(k if k[:1] == ("movement",) else (*circuit_key, *k) for k in error.keys)
+    return error
+
+
+def _own_current(circuit: Circuit, terminals: Terminals, circuit_key: Key) -> tuple[Remark, ...]:
+    if not isinstance(circuit, Direct) or terminals.unit not in ("A", "V"):
+        return ()
+    coil = terminals.coil
+    if coil.current is None or (terminals.unit == "V" and coil.resistance is None):
+        return ()
+    own = coil.current * (coil.resistance or 0.0) if terminals.unit == "V" else coil.current
+    full = terminals.signal(terminals.full_value if circuit.full is None else circuit.full)
+    if abs(full - own) <= _NEAR_OWN * own:
+        return ()
+    text = (
+        f"full deflection is at {full:.4g} {terminals.unit} but the movement's own is {own:.4g} {terminals.unit}; "
+        "give a circuit, or full"
+    )
+    return (Remark(text, (*circuit_key, "full")),)
+
+
+def past_points(law: Law | Observed, scale: Scale, key: Key) -> tuple[Remark, ...]:
+    """Return the remark on a scale that runs beyond the points its law was given by."""
+    if not isinstance(law, (Table, Observed)):
+        return ()
+    first, last = law.ends()
+    if first <= scale.start and scale.end <= last:
+        return ()
+    text = (
+        f"the scale runs from {scale.start:g} to {scale.end:g} but the points only from {first:g} to {last:g}; "
+        "beyond them the last slope is carried on"
+    )
+    return (Remark(text, (*key, "law", "points")),)

@@ -1,0 +1,1 @@
+"""From a dial to a drawing: divisions, numerals, plate and composition."""

@@ -1,0 +1,175 @@
+"""Marks between the numerals.
+
+Between two numerals the division is 1, 2 or 5·10^n and constant: the finest with at most nine marks
+(MIL-HDBK-759B) of which none stand nearer than the least gap.  So a crowding scale coarsens from
+numeral to numeral, never between.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Sequence
+from dataclasses import dataclass
+from enum import StrEnum
+from itertools import pairwise
+
+import numpy as np
+
+from dialgen.errors import InputError
+from dialgen.face.ruler import Ruler, multiples
+from dialgen.stage import Array
+
+MOST_PARTS = 10
+MOST_MARKS = 3000
+
+
+class Rank(StrEnum):
+    """How much a mark stands out."""
+
+    NUMBERED = "numbered"
+    MIDDLE = "middle"
+    FINE = "fine"
+
+
+@dataclass(frozen=True, slots=True)
+class Division:
+    """A gap cut into equal parts: how many, and after how many of them a middle mark stands."""
+
+    parts: int
+    middle_every: int
+
+
+def legal_divisions(gap: float) -> list[Division]:
+    """Return the divisions by 1, 2 or 5·10^n that cut ``gap`` evenly into 2 to 10 parts, finest first.
+
+    >>> [d.parts for d in legal_divisions(2.0)]
+    [10, 4, 2]
+    """
+    magnitude = math.floor(math.log10(gap))
+    parts = []
+    for exponent in (magnitude - 1, magnitude):
+        for mantissa in (1, 2, 5):
+            count = gap / (mantissa * 10.0**exponent)
+            if 1.5 < count < MOST_PARTS + 0.5 and abs(count - round(count)) < 1e-6:
+                parts.append(round(count))
+    return [Division(n, _middle_every(n, parts)) for n in parts]
+
+
+def _middle_every(parts: int, legal: Sequence[int]) -> int:
+    """Return the step of the middle marks: the coarsest legal division that this one refines."""
+    if parts == 2:
+        return 1
+    coarser = [n for n in legal if n < parts and parts % n == 0]
+    return parts // min(coarser) if coarser else 0
+
+
+def divide(ruler: Ruler, numbered: Sequence[float]) -> list[tuple[float, Rank]]:
+    """Return the marks between neighbouring numbered values, ascending, without the numbered ones."""
+    gaps = [(a, b) for a, b in pairwise(numbered) if math.isfinite(b)]
+    choices = [legal_divisions(b - a) for a, b in gaps]
+    chosen = _finest_roomy(ruler, gaps, choices)
+    if ruler.is_even():
+        chosen = _levelled(gaps, choices, chosen)
+    marks = []
+    for (low, high), division in zip(gaps, chosen, strict=True):
+        if division:
+            marks += [(v, _rank(i, division)) for i, v in enumerate(_cut(low, high, division.parts), 1)]
+    return marks
+
+
+def _rank(index: int, division: Division) -> Rank:
+    return Rank.MIDDLE if division.middle_every and index % division.middle_every == 0 else Rank.FINE
+
+
+def _cut(low: float, high: float, parts: int) -> list[float]:
+    step = (high - low) / parts
+    return [float(f"{low + i * step:.12g}") for i in range(1, parts)]
+
+
+def _finest_roomy(
+    ruler: Ruler, gaps: Sequence[tuple[float, float]], choices: Sequence[Sequence[Division]]
+) -> list[Division | None]:
+    """Return for each gap its finest division whose marks are no nearer than the least gap."""
+    # All marks of all choices are placed in one call: the chain works on arrays.
+    cuts = [
+        [low, *_cut(low, high, d.parts), high]
+        for (low, high), legal in zip(gaps, choices, strict=True)
+        for d in legal
+    ]
+    if not cuts:
+        return [None] * len(gaps)
+    lengths = np.cumsum([len(cut) for cut in cuts])[:-1]
+    places = np.split(ruler.place_mm(np.concatenate(cuts)), lengths)
+    nearest = iter([float(np.diff(place).min()) for place in places])
+    chosen: list[Division | None] = []
+    for legal in choices:
+        # The list is used up whole, so that every gap reads its own distances.
+        fitting = [d for d in legal if next(nearest) >= ruler.gap_mm * (1 - 1e-9)]
+        chosen.append(fitting[0] if fitting else None)
+    return chosen
+
+
+def _levelled(
+    gaps: Sequence[tuple[float, float]],
+    choices: Sequence[Sequence[Division]],
+    chosen: Sequence[Division | None],
+) -> list[Division | None]:
+    """Return one division for all gaps of one size: on an even scale the coarsest that any needs."""
+    sizes = [float(f"{b - a:.9g}") for a, b in gaps]
+    coarsest = {}
+    for size, division in zip(sizes, chosen, strict=True):
+        parts = division.parts if division else 1
+        coarsest[size] = min(parts, coarsest.get(size, MOST_PARTS))
+    return [
+        next((d for d in legal if d.parts == coarsest[size]), None)
+        for size, legal in zip(sizes, choices, strict=True)
+    ]
+
+
+def stepped(
+    start: float, end: float, pieces: Sequence[tuple[float, float]], numbered: Sequence[float]
+) -> list[tuple[float, Rank]]:
+    """Return marks at the multiples of given steps, ascending, without the numbered values.
+
+    Args:
+        start: the scale's first value.
+        end: its last.
+        pieces: (to, step) in ascending order; each step holds from the piece before up to ``to``.
+        numbered: the numbered values.
+
+    Raises:
+        InputError: more than 3000 marks, or pieces that do not ascend within the scale.
+    """
+    marks: dict[float, float] = {}
+    low = start
+    for i, (high, step) in enumerate(pieces):
+        if not low < high or high > end:
+            raise InputError(
+                f"a piece to {high:g} does not follow {low:g} within the scale; let the pieces ascend up to {end:g}",
+                (i, "to"),
+            )
+        if (high - low) / step > MOST_MARKS:
+            raise InputError(
+                f"a step of {step:g} gives over {MOST_MARKS} marks; take a larger one", (i, "every")
+            )
+        marks.update(dict.fromkeys(multiples(step, low, high), step))
+        low = high
+    shown = np.array(sorted(numbered))
+    plain = [
+        v for v in sorted(marks) if not len(shown) or np.abs(shown - v).min() > 1e-9 * max(abs(v), 1e-12)
+    ]
+    return [(v, _explicit_rank(v, marks[v], shown)) for v in plain]
+
+
+def _explicit_rank(value: float, step: float, numbered: Array) -> Rank:
+    """Return middle for the marks that the gap's own coarser legal division would have."""
+    after = int(np.searchsorted(numbered, value))
+    if not 0 < after < len(numbered) or math.isinf(numbered[after]):
+        return Rank.FINE
+    low, high = float(numbered[after - 1]), float(numbered[after])
+    parts = (high - low) / step
+    if abs(parts - round(parts)) > 1e-6 or round(parts) < 2:
+        return Rank.FINE
+    legal = [d.parts for d in legal_divisions(high - low)]
+    division = Division(round(parts), _middle_every(round(parts), legal or [2]))
+    return _rank(round((value - low) / step), division)

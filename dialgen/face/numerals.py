@@ -1,0 +1,58 @@
+"""Where numerals stand: upright, and everywhere equally clear of the ends of their marks."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterator
+
+from dialgen.drawing import Letters, Point, Style
+from dialgen.face.looks import Look
+from dialgen.face.ruling import Mark, RuledScale
+from dialgen.lettering import letters, measure
+
+
+def mark_ends(mark: Mark, side: str, look: Look) -> tuple[Point, Point]:
+    """Return a mark's inner and outer end: from, up to or across its point on the scale line."""
+    length_mm = look.length_mm(mark.rank)
+    inner, outer = {"outward": (0.0, length_mm), "inward": (-length_mm, 0.0)}.get(
+        side, (-length_mm / 2, length_mm / 2)
+    )
+    (ux, uy), x, y = mark.direction, mark.x, mark.y
+    return (x + inner * ux, y + inner * uy), (x + outer * ux, y + outer * uy)
+
+
+def numerals(scale: RuledScale) -> Iterator[tuple[Mark, Letters]]:
+    """Yield every labelled mark with its numeral."""
+    spec, look = scale.spec, scale.look
+    style = Style(fill=look.ink)
+    for mark in scale.marks:
+        if mark.label:
+            inner, outer = mark_ends(mark, spec.marks, look)
+            ux, uy = mark.direction
+            start, away = (outer, (ux, uy)) if spec.numerals == "outside" else (inner, (-ux, -uy))
+            box = measure(mark.label, look.numeral_mm)
+            half = ((box.right - box.left) / 2, (box.top - box.bottom) / 2)
+            reach = clear_reach(half, away, look.space_mm)
+            at = (start[0] + reach * away[0], start[1] + reach * away[1])
+            yield mark, letters(mark.label, look.numeral_mm, at, style)
+
+
+def clear_reach(half: tuple[float, float], away: tuple[float, float], space_mm: float) -> float:
+    """Return how far along ``away`` a box's middle must lie to be just ``space_mm`` clear of the start.
+
+    Args:
+        half: half the box's width and height.
+        away: the unit vector from the start towards the box.
+        space_mm: the distance wanted between the start and the nearest point of the box.
+
+    >>> clear_reach((3.0, 1.0), (0.0, 1.0), 0.5)
+    1.5
+    """
+    (a, b), ux, uy = half, abs(away[0]), abs(away[1])
+    if ux > 0 and (side := (a + space_mm) / ux) * uy <= b:
+        return side
+    if uy > 0 and (side := (b + space_mm) / uy) * ux <= a:
+        return side
+    # Nearest is a corner: |reach·u - corner| = space, the farther root.
+    along = ux * a + uy * b
+    return along + math.sqrt(max(along**2 - (a * a + b * b) + space_mm**2, 0.0))

@@ -1,0 +1,143 @@
+"""The plate itself: its outline, what lies on it, holes, window and pivot."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterator
+from typing import Protocol
+
+from dialgen.dialfile.models import Plate
+from dialgen.drawing import Circle, Layer, Line, Outline, Point, Purpose, Style, Vertex
+from dialgen.errors import InputError
+
+CUT = Style(stroke="#d00000", width_mm=0.1)
+GUIDE = Style(stroke="#2060c0", width_mm=0.1)
+_CROSS_MM = 2.0
+_SLACK_MM = 1e-9
+
+
+class Outliner(Protocol):
+    """A plate's outline; coordinates from the pivot."""
+
+    @property
+    def box(self) -> tuple[float, float, float, float]:
+        """Left, bottom, width and height in millimetres."""
+        ...
+
+    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
+        """Return whether a point lies on the plate, at least ``inset_mm`` from its edge."""
+        ...
+
+    def outline(self, style: Style) -> Outline | Circle:
+        """Return the outline as a primitive."""
+        ...
+
+
+class Rectangle:
+    """A rectangular plate with rounded corners."""
+
+    def __init__(self, box: tuple[float, float, float, float], corner_mm: float) -> None:
+        self.box = box
+        self.corner_mm = corner_mm
+
+    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
+        """Return whether the point is inside, corners rounded off."""
+        left, bottom, width, height = self.box
+        across = abs(point[0] - left - width / 2) - width / 2 + self.corner_mm
+        upward = abs(point[1] - bottom - height / 2) - height / 2 + self.corner_mm
+        # Distance from the rectangle shrunk by the corner radius, outside positive.
+        outside = math.hypot(max(across, 0.0), max(upward, 0.0)) + min(max(across, upward), 0.0)
+        return outside <= self.corner_mm - inset_mm + _SLACK_MM
+
+    def outline(self, style: Style) -> Outline:
+        """Return the rectangle, clockwise from the lower left corner upwards."""
+        return rounded_rectangle(self.box, self.corner_mm, style)
+
+
+class Disc:
+    """A round plate."""
+
+    def __init__(self, centre: Point, diameter_mm: float) -> None:
+        self.centre = centre
+        self.radius_mm = diameter_mm / 2
+
+    @property
+    def box(self) -> tuple[float, float, float, float]:
+        """The bounding square."""
+        side = 2 * self.radius_mm
+        return self.centre[0] - self.radius_mm, self.centre[1] - self.radius_mm, side, side
+
+    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
+        """Return whether the point is within the circle."""
+        return math.dist(point, self.centre) <= self.radius_mm - inset_mm + _SLACK_MM
+
+    def outline(self, style: Style) -> Circle:
+        """Return the circle."""
+        return Circle(self.centre, self.radius_mm, style)
+
+
+def outliner(plate: Plate) -> Outliner:
+    """Return the outline that a plate's table describes."""
+    x, y = plate.pivot
+    if plate.size is not None:
+        return Rectangle((-x, -y, *plate.size), plate.corner)
+    radius_mm = (plate.diameter or 0.0) / 2
+    return Disc((radius_mm - x, radius_mm - y), 2 * radius_mm)
+
+
+def check_holes(plate: Plate) -> Iterator[InputError]:
+    """Yield an error for every hole whose middle is off the plate."""
+    shape = outliner(plate)
+    for i, hole in enumerate(plate.hole):
+        if not shape.holds(hole.at):
+            yield InputError(
+                f"the hole at {hole.at[0]:g}, {hole.at[1]:g} is off the plate; coordinates count from the pivot",
+                ("plate", "hole", i, "at"),
+                ("plate", "pivot"),
+            )
+
+
+def cut_layer(plate: Plate) -> Layer:
+    """Return what is cut: outline and holes."""
+    holes = [Circle(hole.at, hole.diameter / 2, CUT) for hole in plate.hole]
+    return Layer(name="outline", purpose=Purpose.CUT, items=(outliner(plate).outline(CUT), *holes))
+
+
+def guide_layer(plate: Plate) -> Layer:
+    """Return what helps to fit the plate: a cross at the pivot, and the window of the case."""
+    items: list[Line | Outline] = []
+    if outliner(plate).holds((0.0, 0.0)):
+        items = [
+            Line((-_CROSS_MM, 0.0), (_CROSS_MM, 0.0), GUIDE),
+            Line((0.0, -_CROSS_MM), (0.0, _CROSS_MM), GUIDE),
+        ]
+    if plate.window:
+        (x, y), (width, height) = plate.window.at, plate.window.size
+        items.append(
+            rounded_rectangle((x - width / 2, y - height / 2, width, height), plate.window.corner, GUIDE)
+        )
+    return Layer(name="fitting", purpose=Purpose.GUIDE, items=tuple(items))
+
+
+def rounded_rectangle(box: tuple[float, float, float, float], corner_mm: float, style: Style) -> Outline:
+    """Return a rectangle with rounded corners, clockwise."""
+    left, bottom, width, height = box
+    right, top, c = left + width, bottom + height, corner_mm
+    if c == 0:
+        corners = ((left, bottom), (left, top), (right, top), (right, bottom))
+        return Outline(tuple(Vertex(x, y) for x, y in corners), style)
+    vertices = (
+        Vertex(left, bottom + c), Vertex(left, top - c, 90.0),
+        Vertex(left + c, top), Vertex(right - c, top, 90.0),
+        Vertex(right, top - c), Vertex(right, bottom + c, 90.0),
+        Vertex(right - c, bottom), Vertex(left + c, bottom, 90.0),
+    )  # fmt: skip
+    # Where the corners meet there is no straight edge between them.
+    return Outline(tuple(_distinct(vertices)), style)
+
+
+def _distinct(vertices: tuple[Vertex, ...]) -> Iterator[Vertex]:
+    following = vertices[1:] + vertices[:1]
+    for here, there in zip(vertices, following, strict=True):
+        if here.turn_deg or math.dist((here.x, here.y), (there.x, there.y)) > 1e-9:
+            yield here

@@ -1,0 +1,73 @@
+"""What a look at the finished drawing finds: ink over the edge, and numerals over each other."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterator, Sequence
+
+from dialgen.drawing import Drawing, Layer, Letters, Line, Placed, Point, Purpose
+from dialgen.errors import Remark
+from dialgen.face.plate import Outliner
+from dialgen.face.ruling import RuledScale
+
+Box = tuple[float, float, float, float]
+
+
+def review(drawing: Drawing, scales: Sequence[RuledScale], plate: Outliner) -> tuple[Remark, ...]:
+    """Return remarks on ink over the plate's edge and on overlapping numerals."""
+    by_name = {layer.name: layer for layer in drawing.layers}
+    found: list[Remark] = []
+    for i, scale in enumerate(scales):
+        numerals = by_name.get(f"scale {i + 1} numerals")
+        found += _overlaps(numerals, (*scale.dial.key, "numbered")) if numerals else ()
+    keys = {f"scale {i + 1}": scale.dial.key for i, scale in enumerate(scales)}
+    for layer in drawing.layers:
+        if layer.purpose is Purpose.PRINT and (over := _over_edge(layer, plate)):
+            key = next((k for name, k in keys.items() if layer.name.startswith(name + " ")), ("text",))
+            found.append(Remark(f"{over} runs over the plate's edge; move it or enlarge the plate", key))
+    return tuple(found)
+
+
+def ink_box(letters: Letters) -> Box:
+    """Return the box around the ink of some lettering: left, bottom, right, top."""
+    corners = [corner for placed in letters.glyphs for corner in _corners(placed)]
+    xs, ys = [x for x, _ in corners], [y for _, y in corners]
+    return min(xs), min(ys), max(xs), max(ys)
+
+
+def _corners(placed: Placed) -> Iterator[Point]:
+    left, bottom, right, top = placed.glyph.box
+    if not placed.angle_deg:
+        yield placed.x + left * placed.size_mm, placed.y + bottom * placed.size_mm
+        yield placed.x + right * placed.size_mm, placed.y + top * placed.size_mm
+        return
+    turn = math.radians(placed.angle_deg)
+    sin, cos = math.sin(turn) * placed.size_mm, math.cos(turn) * placed.size_mm
+    for x, y in ((left, bottom), (right, bottom), (right, top), (left, top)):
+        yield placed.x + x * cos + y * sin, placed.y - x * sin + y * cos
+
+
+def _overlaps(layer: Layer, key: tuple[str | int, ...]) -> Iterator[Remark]:
+    boxes = [(item.text, ink_box(item)) for item in layer.items if isinstance(item, Letters) and item.glyphs]
+    # The last numeral of a full turn is the first one's neighbour.
+    for (one, a), (other, b) in zip(
+        boxes, boxes[1:] + boxes[:1] if len(boxes) > 2 else boxes[1:], strict=False
+    ):
+        if a[0] < b[2] and b[0] < a[2] and a[1] < b[3] and b[1] < a[3]:
+            yield Remark(f"the numerals {one} and {other} overlap; number fewer values", key)
+
+
+def _over_edge(layer: Layer, plate: Outliner) -> str | None:
+    for item in layer.items:
+        match item:
+            case Letters() if item.glyphs:
+                left, bottom, right, top = ink_box(item)
+                points = [(left, bottom), (left, top), (right, bottom), (right, top)]
+                what = f"{item.text!r}"
+            case Line():
+                points, what = [item.start, item.end], "a mark"
+            case _:
+                continue
+        if not all(plate.holds(point) for point in points):
+            return what
+    return None

@@ -1,0 +1,232 @@
+"""Formulas of x: read by a whitelist of syntax nodes, run on whole arrays, inverted by bracketing.
+
+A formula is arithmetic of numbers, x, named constants and named functions; nothing else is let
+through, so it can neither reach a file nor hang.  Powers are taken in doubles: 9**9**9 overflows
+at once instead of growing.
+"""
+
+from __future__ import annotations
+
+import ast
+import math
+import operator
+from collections.abc import Callable
+from dataclasses import dataclass
+from typing import ClassVar
+
+import numpy as np
+
+from dialgen.errors import FormulaError
+from dialgen.geometry.roots import bracketed_roots
+from dialgen.geometry.sampling import sample_places
+from dialgen.stage import EVERYWHERE, Array, Span, Stage
+
+LONGEST = 400
+_DEEPEST = 40
+
+FUNCTIONS: dict[str, Callable[..., Array]] = {
+    "sqrt": np.sqrt, "exp": np.exp, "log": np.log, "log10": np.log10, "log2": np.log2, "abs": np.abs,
+    "sin": np.sin, "cos": np.cos, "tan": np.tan, "asin": np.arcsin, "acos": np.arccos, "atan": np.arctan,
+    "sinh": np.sinh, "cosh": np.cosh, "tanh": np.tanh, "cbrt": np.cbrt,
+}  # fmt: skip
+CONSTANTS = {"pi": math.pi, "e": math.e}
+
+_BINARY: dict[type[ast.operator], Callable[[Array, Array], Array]] = {
+    ast.Add: operator.add,
+    ast.Sub: operator.sub,
+    ast.Mult: operator.mul,
+    ast.Div: np.divide,
+    ast.Pow: np.power,
+}
+_UNARY: dict[type[ast.unaryop], Callable[[Array], Array]] = {ast.UAdd: operator.pos, ast.USub: operator.neg}
+
+Expression = Callable[[Array], Array]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Formula:
+    """The signal as an expression in x, the bare value on the face."""
+
+    kind: ClassVar[str] = "formula"
+    signal: str
+
+    def __post_init__(self) -> None:
+        compile_formula(self.signal)
+
+    @property
+    def takes_face_values(self) -> bool:
+        """Always: x is the number on the face."""
+        return True
+
+    def signal_unit(self, unit: str) -> str | None:
+        """Return None: the signal is in whatever SI unit the circuit takes."""
+        return None
+
+    def stage(self, span: Span) -> Stage:
+        """Return the formula as a stage, inverted about ``span``."""
+        return FormulaStage(compile_formula(self.signal), span)
+
+    def zero(self, span: Span) -> float | None:
+        """Return 0 where the formula, followed on from the scale, reaches it; else None."""
+        stage = FormulaStage(compile_formula(self.signal), span)
+        places = stage.followed()
+        signals = stage.forward(places)
+        if signals.min() <= 0 <= signals.max():
+            return 0.0
+        end = 0 if abs(signals[0]) < abs(signals[-1]) else -1
+        size = float(np.max(np.abs(stage.forward(sample_places(span, 65)))))
+        # Near zero at an end counts only where the formula ends or turns there, as sqrt(x) does;
+        # exp(x) comes as near as you like and still never reaches it.
+        outside = places[end] + (1e-3 if end else -1e-3) * (places[-1] - places[0])
+        beyond = abs(float(stage.forward(np.array(outside))))
+        ends_there = not beyond <= abs(float(signals[end]))
+        return 0.0 if abs(signals[end]) <= 1e-9 * size and ends_there else None
+
+
+@dataclass(frozen=True, slots=True)
+class FormulaStage:
+    """A compiled formula; outside the scale it is followed as far as it goes on strictly one way."""
+
+    expression: Expression
+    span: Span
+    domain: Span = EVERYWHERE
+    image: Span = EVERYWHERE
+
+    def forward(self, x: Array) -> Array:
+        """Return the signal; NaN where the formula has none, which the chain refuses."""
+        with np.errstate(all="ignore"):
+            return np.asarray(self.expression(np.asarray(x, dtype=float)) + np.zeros(np.shape(x)))
+
+    def inverse(self, y: Array) -> Array:
+        """Return the values whose signal is ``y``; NaN where the formula never gets there."""
+        places = self.followed()
+        return bracketed_roots(self.forward, places, np.asarray(y, dtype=float))
+
+    def followed(self) -> Array:
+        """Return ascending places on which the formula is finite and strictly one way.
+
+        They cover the scale, zero, and up to a hundred spans beyond either end.
+        """
+        low, high = self.span
+        inside = sample_places(self.span, 257)
+        width = high - low if math.isfinite(high) else max(abs(low), 1.0)
+        reach = np.geomspace(1e-3, 100.0, 120) * width
+        below = np.unique(np.append(low - reach, 0.0 if low > 0 else low - reach[0]))[::-1]
+        above = np.unique(np.append(high + reach, 0.0 if high < 0 else high + reach[0]))
+        rising = self._rises(inside)
+        down = self._on(float(inside[0]), below, not rising)
+        up = self._on(high, above, rising) if math.isfinite(high) else np.array([])
+        return np.concatenate((down[::-1], inside, up))
+
+    def _rises(self, inside: Array) -> bool:
+        first, last = self.forward(inside[[0, -1]])
+        return bool(last > first)
+
+    def _on(self, start: float, places: Array, rising: bool) -> Array:
+        """Return the first of ``places`` while going on from ``start`` strictly one way."""
+        signals = self.forward(np.concatenate(([start], places)))
+        steps = np.diff(signals) if rising else -np.diff(signals)
+        bad = np.flatnonzero(~(np.isfinite(signals[1:]) & (steps > 0)))
+        good = places if not len(bad) else places[: bad[0]]
+        if not len(bad):
+            return good
+        # The formula turns, or ends, between two places: go as near that point as doubles allow.
+        last = float(good[-1]) if len(good) else start
+        edge = self._edge(last, float(places[bad[0]]), rising)
+        return np.append(good, edge) if edge != last else good
+
+    def _edge(self, good: float, bad: float, rising: bool) -> float:
+        value = float(self.forward(np.array(good)))
+        for _ in range(60):
+            middle = (good + bad) / 2
+            signal = float(self.forward(np.array(middle)))
+            if math.isfinite(signal) and (signal > value if rising else signal < value):
+                good, value = middle, signal
+            else:
+                bad = middle
+        return good
+
+
+def compile_formula(text: str) -> Expression:
+    """Return the formula as a function of an array.
+
+    Raises:
+        FormulaError: anything but arithmetic of x, numbers, constants and known functions; or too
+            long or too deep.
+
+    >>> float(compile_formula("sqrt(x)*2 + 1")(np.array(9.0)))
+    7.0
+    """
+    if len(text) > LONGEST:
+        raise FormulaError(f"the formula has {len(text)} characters; at most {LONGEST} are read", LONGEST)
+    plain = text.replace("\u2212", "-")
+    if not plain.strip():
+        raise FormulaError("the formula is empty; write an expression in x", 1)
+    try:
+        tree = ast.parse(plain.strip(), mode="eval")
+    except SyntaxError as error:
+        raise FormulaError("not an expression; write arithmetic in x", error.offset or 1) from None
+    except (ValueError, RecursionError, MemoryError):
+        raise FormulaError("not an expression; write arithmetic in x", 1) from None
+    _refuse_commas(tree.body)
+    if not any(isinstance(node, ast.Name) and node.id == "x" for node in ast.walk(tree)):
+        raise FormulaError("the formula has no x, so every value looks alike; write an expression in x", 1)
+    return _build(tree.body, 0)
+
+
+def _refuse_commas(body: ast.expr) -> None:
+    if isinstance(body, ast.Tuple):
+        raise FormulaError("the formula has a comma; the decimal sign is a point", body.col_offset + 1)
+
+
+def _build(node: ast.expr, depth: int) -> Expression:
+    if depth > _DEEPEST:
+        raise FormulaError("the formula is nested too deeply; write it flatter", node.col_offset + 1)
+    match node:
+        case ast.Constant(value=int() | float() as number) if not isinstance(number, bool):
+            return _constant(number, node)
+        case ast.Name(id="x"):
+            return lambda x: x
+        case ast.Name(id=name) if name in CONSTANTS:
+            return _constant(CONSTANTS[name], node)
+        case ast.BinOp(left=left, op=op, right=right) if type(op) in _BINARY:
+            return _binary(_BINARY[type(op)], _build(left, depth + 1), _build(right, depth + 1))
+        case ast.UnaryOp(op=op, operand=operand) if type(op) in _UNARY:
+            return _unary(_UNARY[type(op)], _build(operand, depth + 1))
+        case ast.Call(func=ast.Name(id=name), args=[argument], keywords=[]) if name in FUNCTIONS:
+            return _unary(FUNCTIONS[name], _build(argument, depth + 1))
+    raise FormulaError(_unknown(node), node.col_offset + 1)
+
+
+def _constant(number: float, node: ast.expr) -> Expression:
+    try:
+        value = np.float64(number)
+    except OverflowError:
+        raise FormulaError("the number is too large; write a smaller one", node.col_offset + 1) from None
+    return lambda _: value  # type: ignore[return-value]  # numpy broadcasts a scalar as it is
+
+
+def _binary(act: Callable[[Array, Array], Array], left: Expression, right: Expression) -> Expression:
+    return lambda x: act(left(x), right(x))
+
+
+def _unary(act: Callable[[Array], Array], operand: Expression) -> Expression:
+    return lambda x: act(operand(x))
+
+
+def _unknown(node: ast.expr) -> str:
+    known = ", ".join(sorted(FUNCTIONS))
+    match node:
+        case ast.Name(id=name) if name in FUNCTIONS:
+            return f"{name} needs its argument in brackets; write {name}(x)"
+        case ast.Name(id=name):
+            return f"{name!r} is not known; write in x, pi, e and the functions {known}"
+        case ast.Call(func=ast.Name(id=name)) if name in FUNCTIONS:
+            return f"{name} takes one argument; write {name}(x)"
+        case ast.Call(func=ast.Name(id=name)):
+            return f"the function {name!r} is not known; there are {known}"
+        case ast.BinOp(op=ast.BitXor()):
+            return "^ is not read as a power; write **"
+        case ast.Constant():
+            return "only numbers may stand here; write arithmetic in x"
+    return "this is not arithmetic; write +, -, *, /, **, brackets and the functions " + known

@@ -1,0 +1,165 @@
+"""Where a pointer meets a scale line: arcs about any centre, and straight lines.
+
+A pointer ray leaves the pivot (the origin) at an angle, 0 straight up, clockwise positive.  Marks
+lie along the ray, not along the radius of the arc, so an arc off the pivot still reads true.
+"""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass
+from typing import Protocol
+
+import numpy as np
+
+from dialgen.errors import InputError
+from dialgen.stage import Array
+
+
+class ScaleLine(Protocol):
+    """The line on which the marks stand; angles in degrees, lengths in millimetres."""
+
+    def meets(self, angle_deg: Array) -> Array:
+        """Return whether the pointer at each angle meets the line in front of the pivot."""
+        ...
+
+    def points(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return x and y of the meeting points; NaN where there is none, see `meets`."""
+        ...
+
+    def along(self, angle_deg: Array) -> Array:
+        """Return the meeting points' places along the line, rising with the angle."""
+        ...
+
+    def directions(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return the unit vectors along which marks are drawn, away from the pivot."""
+        ...
+
+
+@dataclass(frozen=True, slots=True)
+class ArcLine:
+    """A circle of ``radius_mm`` about ``centre``; the pointer meets it at its farther crossing."""
+
+    radius_mm: float
+    centre: tuple[float, float] = (0.0, 0.0)
+
+    def _reach(self, angle_deg: Array) -> Array:
+        # |t·u - c| = R has the roots t = u·c ± sqrt((u·c)² - c² + R²); the larger is the farther.
+        x, y = _ray(angle_deg)
+        towards = x * self.centre[0] + y * self.centre[1]
+        square = towards**2 - (self.centre[0] ** 2 + self.centre[1] ** 2) + self.radius_mm**2
+        reach = towards + np.sqrt(np.where(square < 0, np.nan, square))
+        return np.where(reach > 0, reach, np.nan)
+
+    def meets(self, angle_deg: Array) -> Array:
+        """Return whether the pointer at each angle meets the arc."""
+        return np.asarray(~np.isnan(self._reach(angle_deg)))
+
+    def points(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return x and y of the farther crossing."""
+        x, y = _ray(angle_deg)
+        reach = self._reach(angle_deg)
+        return x * reach, y * reach
+
+    def along(self, angle_deg: Array) -> Array:
+        """Return the arc length from straight above the centre."""
+        return np.asarray(self.radius_mm * np.radians(self.about_centre(angle_deg)))
+
+    def about_centre(self, angle_deg: Array) -> Array:
+        """Return the meeting points' angles about the arc's own centre, in degrees."""
+        if self.centre == (0.0, 0.0):
+            return np.asarray(angle_deg, dtype=float)
+        x, y = self.points(angle_deg)
+        turned = np.degrees(np.arctan2(x - self.centre[0], y - self.centre[1]))
+        # Seen from inside the circle the angle about the centre follows the pointer's, within half
+        # a turn; the pointer's own turns are put back.
+        return np.asarray(turned + 360 * np.round((angle_deg - turned) / 360))
+
+    def directions(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return the pointer's own direction."""
+        return _ray(angle_deg)
+
+
+@dataclass(frozen=True, slots=True)
+class StraightLine:
+    """The straight line through ``start`` and ``end``, which may go on beyond both.
+
+    Args:
+        start: one point of it, in millimetres from the pivot.
+        end: another.
+        square: marks stand square to the line instead of along the pointer.
+        curve_mm: the radius of a curved edgewise plate laid flat: the distance along the line is
+            radius times angle, from the foot of straight up.
+
+    Raises:
+        InputError: both points are one, or a curved plate's line has no foot above the pivot.
+    """
+
+    start: tuple[float, float]
+    end: tuple[float, float]
+    square: bool = False
+    curve_mm: float | None = None
+
+    def __post_init__(self) -> None:
+        if math.dist(self.start, self.end) < 1e-6:
+            raise InputError("both ends of the line are one point; give two points", ("line",))
+        if self.curve_mm is not None and not self._foot()[1] > 0:
+            raise InputError(
+                "a curved plate's line must cross straight up, above the pivot; move the line", ("line",)
+            )
+
+    def _unit(self) -> tuple[float, float]:
+        # Turned so that places rise with the pointer's angle: clockwise, seen from the pivot.
+        x, y = self.end[0] - self.start[0], self.end[1] - self.start[1]
+        length = math.hypot(x, y) * (1 if self.start[1] * x - self.start[0] * y >= 0 else -1)
+        return x / length, y / length
+
+    def _foot(self) -> tuple[float, float]:
+        ux, uy = self._unit()
+        if abs(ux) < 1e-12:
+            return 0.0, math.nan
+        return 0.0, self.start[1] - self.start[0] * uy / ux
+
+    def _reach(self, angle_deg: Array) -> Array:
+        x, y = _ray(angle_deg)
+        ux, uy = self._unit()
+        across = x * uy - y * ux
+        # Straight enough to parallel that the crossing would lie kilometres away counts as none.
+        with np.errstate(divide="ignore", invalid="ignore"):
+            reach = (self.start[0] * uy - self.start[1] * ux) / across
+        return np.where((np.abs(across) > 1e-9) & (reach > 0), reach, np.nan)
+
+    def meets(self, angle_deg: Array) -> Array:
+        """Return whether the pointer at each angle meets the line."""
+        if self.curve_mm is not None:
+            return np.ones(np.shape(angle_deg), dtype=bool)
+        return np.asarray(~np.isnan(self._reach(angle_deg)))
+
+    def points(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return x and y of the crossing, or of the place on the plate laid flat."""
+        if self.curve_mm is None:
+            x, y = _ray(angle_deg)
+            reach = self._reach(angle_deg)
+            return x * reach, y * reach
+        distance = self.curve_mm * np.radians(angle_deg)
+        (ux, uy), (fx, fy) = self._unit(), self._foot()
+        return fx + distance * ux, fy + distance * uy
+
+    def along(self, angle_deg: Array) -> Array:
+        """Return the distance along the line from its point nearest the pivot."""
+        x, y = self.points(angle_deg)
+        ux, uy = self._unit()
+        return np.asarray(x * ux + y * uy)
+
+    def directions(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return the pointer's direction, or square to the line and away from the pivot."""
+        if not self.square and self.curve_mm is None:
+            return _ray(angle_deg)
+        ux, uy = self._unit()
+        shape = np.shape(angle_deg)
+        return np.full(shape, -uy), np.full(shape, ux)
+
+
+def _ray(angle_deg: Array) -> tuple[Array, Array]:
+    turn = np.radians(angle_deg)
+    return np.sin(turn), np.cos(turn)

@@ -22,14 +22,18 @@ PREFIXED_UNITS = ("VA", "var", "Hz", "A", "V", "W", "Ω", "F", "S")
 """The face units before which a prefix is read; every other unit text is taken whole."""
 
 _LONGEST = 64
-_RKM = re.compile(r"^([+-]?\d*)([RkKMGT])(\d*)$")
-_RKM_EXPONENTS = {"R": 0, "k": 3, "K": 3, "M": 6, "G": 9, "T": 12}
-_NUMBER = re.compile(r"^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?(?![\d.])")
+_LONGEST_SHOWN = 40
+_SMALLEST, _LARGEST = 1e-18, 1e18
+# IEC 60062: the letter stands where the decimal point would; L is a thousandth (2016 edition).
+_RKM = re.compile(r"([+-]?[0-9]*)([LRkKMGT])([0-9]*)")
+_RKM_EXPONENTS = {"L": -3, "R": 0, "k": 3, "K": 3, "M": 6, "G": 9, "T": 12}
+_OHMS_ALONE = "LR"
+_NUMBER = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?(?![0-9.])")
 _SAME = str.maketrans({"\u2212": "-", "\u03bc": "µ", "\u2126": "Ω", "\u00a0": " ", "\u202f": " "})
 
 
 class Amount(NamedTuple):
-    """A number in an SI unit; ``unit`` is one of A, V, Ω, W, °C or m."""
+    """A number in an SI unit; ``unit`` is one of A, V, Ω, W or °C."""
 
     value: float
     unit: str
@@ -60,43 +64,53 @@ class Measure:
         >>> AMPERE.read("50 µA").value
         5e-05
         """
-        if isinstance(text, bool) or not isinstance(text, str):
-            raise ValueError(f"a {self.name} needs its unit: {_shown(text)}; {self._hint(text)}")
+        if not isinstance(text, str):
+            raise ValueError(self._unit_wanted(text))
         amount = self._parse(text)
         if self.above is not None and not amount.value > self.above:
-            raise ValueError(f"{text!r} is not above {self.above:g}; write for example {self.example!r}")
+            raise ValueError(f"{shown(text)} is not above {self.above:g}; {self._example()}")
         if self.least is not None and amount.value < self.least:
-            raise ValueError(f"{text!r} is below {self.least:g}; write for example {self.example!r}")
+            raise ValueError(f"{shown(text)} is below {self.least:g}; {self._example()}")
         return amount
 
     def _parse(self, text: str) -> Amount:
         plain = text.translate(_SAME).strip()
         if len(plain) > _LONGEST:
-            raise ValueError(f"a {self.name} of {len(plain)} characters; write for example {self.example!r}")
+            raise ValueError(f"a {self.name} of {len(plain)} characters; {self._example()}")
         if "," in plain:
-            point = plain.replace(",", ".", 1)
-            raise ValueError(f"{text!r} has a comma; the decimal sign is a point: {point!r}")
-        coded = _RKM.match(plain)
+            raise ValueError(f"{shown(text)} has a comma; {_comma_mend(plain)}")
+        coded = _RKM.fullmatch(plain)
         if coded and (coded[1].strip("+-") or coded[3]) and self._takes_rkm(coded[2]):
             return Amount(_rkm_value(*coded.groups()), self.units[0])
-        if not _NUMBER.match(plain):
-            raise ValueError(f"{text!r} is not a {self.name}; write for example {self.example!r}")
-        value, unit = _split_quantity(plain)
+        if not (number := _NUMBER.match(plain)):
+            raise ValueError(f"{shown(text)} is not a {self.name}; {self._example()}")
+        prefix, unit = _split_prefix(plain[number.end() :].strip(), self.units)
         if unit not in self.units:
-            wrong = f"is not in {' or '.join(self.units)}" if unit else "has no unit"
-            raise ValueError(f"{text!r} {wrong}; write for example {self.example!r}")
-        if not math.isfinite(value):
-            raise ValueError(f"{text!r} is too large; write for example {self.example!r}")
-        return Amount(value, unit)
+            raise ValueError(f"{shown(text)} {self._wrong_unit(prefix + unit)}; {self._example()}")
+        value = _scaled(number[0], prefix)
+        if abs(value) > _LARGEST or (abs(value) < _SMALLEST and not _is_zero(number[0])):
+            raise ValueError(f"{shown(text)} is beyond anything a meter has; {self._example()}")
+        return _in_celsius(value, unit)
 
     def _takes_rkm(self, letter: str) -> bool:
-        return letter != "R" or "Ω" in self.units
+        # The code has no unit, so the key must leave no choice of one.
+        return self.units == ("Ω",) or (len(self.units) == 1 and letter not in _OHMS_ALONE)
 
-    def _hint(self, given: object) -> str:
-        if isinstance(given, (int, float)) and not isinstance(given, bool):
-            unit = self.example.lstrip("0123456789. -")
-            return f'write "{given:g} {unit}" if that is what is meant' if unit else f"write {self.example!r}"
+    def _example(self) -> str:
         return f'write for example "{self.example}"'
+
+    def _unit_wanted(self, given: object) -> str:
+        if isinstance(given, bool) or not isinstance(given, (int, float)) or abs(given) > _LARGEST:
+            return f"a {self.name} is text with its unit, not {shown(given)}; {self._example()}"
+        example = f"{shown(given)} {self.example.split()[1]}"
+        return f'a {self.name} needs its unit, {shown(given)} has none; write for example "{example}"'
+
+    def _wrong_unit(self, written: str) -> str:
+        if not written:
+            return "has no unit"
+        meant = any(written.casefold().endswith(unit.casefold()) for unit in self.units)
+        units = " or ".join(self.units)
+        return f"is not in {units}" + (", where capital and small letters count" if meant else "")
 
 
 AMPERE = Measure("current", ("A",), "1 mA", above=0.0)
@@ -107,13 +121,16 @@ OHM_ABOVE = Measure("resistance", ("Ω",), "75 ohm", above=0.0)
 SIGNAL = Measure("signal", ("V", "A", "Ω", "W"), "12.28 mV")
 SIGNAL_ABOVE = Measure("reference", ("V", "A", "Ω", "W"), "0.775 V", above=0.0)
 ANY_CURRENT = Measure("current", ("A",), "0.25 mA")
+TEMPERATURE = Measure("temperature", ("°C", "°F", "K"), "25 degC", least=-273.15)
+"""Read as degrees Celsius, whichever of the three it is written in."""
 
 _MILLIMETRES = {"mm": 1.0, "cm": 10.0, "m": 1000.0, "um": 1e-3, "µm": 1e-3, "in": 25.4}
 
 _SPELLINGS = {
     "ohm": "Ω", "Ohm": "Ω", "ohms": "Ω", "Ohms": "Ω", "OHM": "Ω",
-    "degC": "°C", "degF": "°F", "amp": "A", "volt": "V", "watt": "W",
+    "degC": "°C", "degF": "°F", "℃": "°C", "℉": "°F",
 }  # fmt: skip
+_WORDS = {"amp": "A", "amps": "A", "volt": "V", "volts": "V", "watt": "W", "watts": "W"}
 
 
 def split_unit(written: str, units: tuple[str, ...] = PREFIXED_UNITS) -> tuple[float, str]:
@@ -155,13 +172,13 @@ def read_number(given: object, name: str) -> float:
     """
     if isinstance(given, bool) or not isinstance(given, (int, float)):
         hint = "write it bare, without quotes" if isinstance(given, str) else "write a bare number"
-        raise ValueError(f"{name} is a number, not {_shown(given)}; {hint}")
+        raise ValueError(f"{name} is a number, not {shown(given)}; {hint}")
     try:
         number = float(given)
     except OverflowError:
         raise ValueError(f"{name} is too large; write a smaller number") from None
     if not math.isfinite(number):
-        raise ValueError(f"{name} must be finite, not {_shown(given)}; write a bare number")
+        raise ValueError(f"{name} must be finite, not {shown(given)}; write a bare number")
     return number
 
 
@@ -173,7 +190,7 @@ def read_length(given: object, name: str, least: float = 0.0) -> float:
     """
     number = _written_length(given, name) if isinstance(given, str) else read_number(given, name)
     if not least <= number <= 2000.0:
-        raise ValueError(f"{name} of {number:g} mm is not within {least:g} and 2000 mm; write millimetres")
+        raise ValueError(f"{name} of {number:g} mm is not from {least:g} to 2000 mm; write millimetres")
     return number
 
 
@@ -191,34 +208,81 @@ def plain_number(value: float) -> str:
     return text.replace("-", "−") if text != "-0" else "0"
 
 
+def shown(given: object) -> str:
+    """Return a value as it stands in a dial file, cut short, for messages.
+
+    >>> shown("1,5 V"), shown(True), shown([1, [2, 3]]), shown({})
+    ('"1,5 V"', 'true', '[1, [...]]', 'a table')
+    """
+    match given:
+        case bool():
+            text = str(given).lower()
+        case str():
+            text = f'"{given}"'
+        case float():
+            text = f"{given:.12g}"
+        case list() | tuple():
+            text = f"[{', '.join('[...]' if isinstance(g, list) else shown(g) for g in given[:9])}]"
+        case dict():
+            text = "a table"
+        case int() if abs(given) >= 10**15:
+            text = "a number of very many digits"
+        case _:
+            text = str(given)
+    return text if len(text) <= _LONGEST_SHOWN else text[: _LONGEST_SHOWN - 3] + "..."
+
+
 def _rkm_value(whole: str, letter: str, fraction: str) -> float:
     return float(f"{whole}.{fraction or '0'}e{_RKM_EXPONENTS[letter]}")
 
 
-def _split_quantity(plain: str) -> tuple[float, str]:
-    # quantiphy moves the decimal point instead of multiplying, so "50 uA" is the double nearest
-    # 5e-5.  It takes any word for a unit; which are right is for the caller to say.
-    from quantiphy import QuantiPhyError, Quantity
+def _split_prefix(written: str, units: tuple[str, ...]) -> tuple[str, str]:
+    words = {**_SPELLINGS, **_WORDS}
+    if (whole := words.get(written, written)) in units:
+        return "", whole
+    unit = words.get(written[1:], written[1:])
+    if written[:1] in (*PREFIXES, "K") and unit in units and unit in PREFIXED_UNITS:
+        return written[0].replace("K", "k"), unit
+    return "", written
 
-    try:
-        quantity = Quantity(plain)
-    except QuantiPhyError:
-        return 0.0, plain
-    return quantity.real, _SPELLINGS.get(quantity.units, quantity.units)
+
+def _scaled(number: str, prefix: str) -> float:
+    # quantiphy moves the decimal point instead of multiplying, so "50 uA" is the double nearest
+    # 5e-5.  Text that it would misread is refused before.
+    from quantiphy import Quantity
+
+    return float(Quantity(f"{number} {prefix}V").real)
+
+
+def _is_zero(number: str) -> bool:
+    return not re.search("[1-9]", re.split("[eE]", number)[0])
+
+
+def _in_celsius(value: float, unit: str) -> Amount:
+    match unit:
+        case "°F":
+            return Amount((value - 32) / 1.8, "°C")
+        case "K":
+            return Amount(value - 273.15, "°C")
+    return Amount(value, unit)
+
+
+def _comma_mend(plain: str) -> str:
+    if plain.count(",") > 1 or "." in plain:
+        return "leave it out; the decimal sign is a point, and thousands are not parted"
+    point = plain.replace(",", ".")
+    if re.search("[0-9],[0-9]{3}(?![0-9])", plain):
+        return f'the decimal sign is a point: write "{point}", or "{plain.replace(",", "")}" for thousands'
+    return f'the decimal sign is a point: write "{point}"'
 
 
 def _written_length(text: str, name: str) -> float:
     # Not through quantiphy: it reads the m of "0.7 m" as milli.
     plain = text.translate(_SAME).strip()
+    if "," in plain and len(plain) <= _LONGEST:
+        raise ValueError(f"{shown(text)} has a comma; {_comma_mend(plain)}")
     number = _NUMBER.match(plain)
     unit = plain[number.end() :].strip() if number else ""
     if number is None or unit not in _MILLIMETRES:
-        raise ValueError(
-            f"{name} is not a length: {_shown(text)}; write millimetres, or text such as '0.7 m'"
-        )
+        raise ValueError(f'{shown(text)} is not a length; write millimetres, or text such as "0.7 m"')
     return float(number[0]) * _MILLIMETRES[unit]
-
-
-def _shown(given: object) -> str:
-    text = repr(given)
-    return text if len(text) <= 40 else text[:37] + "..."

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
@@ -29,6 +30,8 @@ class Direct:
         """
         full = terminals.full_value if self.full is None else self.full
         rest_signal = terminals.rest_signal if self.rest is None else terminals.signal(self.rest)
+        if not math.isfinite(rest_signal):
+            raise InputError(f"there is no signal at rest, {self.rest:g}; set rest within the law", ("rest",))
         width = terminals.signal(full) - rest_signal
         if width == 0:
             raise InputError(
@@ -36,6 +39,6 @@ class Direct:
                 ("full",),
                 ("rest",),
             )
-        if not abs(width) < float("inf"):
+        if not math.isfinite(width):
             raise InputError(f"there is no finite signal at full deflection, {full:g}; set full", ("full",))
         return Affine(1.0 / width, -rest_signal / width)

@@ -40,8 +40,9 @@ class Multiplier:
             whole_ohm = (range_v - suppress_v) / coil_a
             if whole_ohm < known_ohm * (1 - 1e-12):
                 raise InputError(
-                    f"a range of {range_v:g} V leaves {range_v - suppress_v:.4g} V, but the coil and what is in "
-                    f"series need {known_ohm * coil_a:.4g} V; take a larger range or a more sensitive movement",
+                    f"a range of {range_v:g} V leaves {range_v - suppress_v:.4g} V, but the coil and "
+                    f"what is in series need {known_ohm * coil_a:.4g} V; "
+                    "take a larger range or a more sensitive movement",
                     ("range",),
                     ("movement", "resistance"),
                 )

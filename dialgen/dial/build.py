@@ -3,12 +3,14 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Callable
 from dataclasses import dataclass, replace
+from typing import TypeVar
 
 import numpy as np
 
 from dialgen.circuit.terminals import Circuit, Coil
-from dialgen.dial.bench import correction, old_angle, readings_key
+from dialgen.dial.bench import NominalAngle, correction, old_angle, readings_key
 from dialgen.dial.chain import Chain
 from dialgen.dial.wiring import Wiring, half_value, link, past_points, wire
 from dialgen.dialfile.models import DialFile, Movement, Scale
@@ -17,10 +19,12 @@ from dialgen.geometry.correction import Correction
 from dialgen.geometry.points import Observed
 from dialgen.geometry.response import EVEN
 from dialgen.geometry.sampling import check_one_way, sample_places
-from dialgen.stage import Affine, Array, Span
+from dialgen.stage import Affine, Array, Span, Stage
 
 _STOP_ROOM_DEG = 5.0
 _NO_DRIVE = 1e-12
+
+Made = TypeVar("Made")
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -55,8 +59,11 @@ def build(file: DialFile) -> Dial:
     wirings = [_tried(errors, _wiring, scale, i, file.circuit, coil) for i, scale in enumerate(file.scale)]
     if errors:
         raise Refused(errors)
-    negative = any(w and _lowest_drive(w, s) < -_NO_DRIVE for w, s in zip(wirings, file.scale, strict=True))
-    stops = file.movement.stops or _default_stops(file.movement, negative=negative)
+    lowest = [
+        _lowest_drive(wiring, scale) if wiring else _lowest_deflection(file.movement, scale, file.circuit)
+        for wiring, scale in zip(wirings, file.scale, strict=True)
+    ]
+    stops = file.movement.stops or _default_stops(file.movement, negative=min(lowest) < -_NO_DRIVE)
     maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings[0])
     scales, remarks = [], []
     for i, (scale, wiring) in enumerate(zip(file.scale, wirings, strict=True)):
@@ -69,7 +76,7 @@ def build(file: DialFile) -> Dial:
     return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks)))
 
 
-def _tried(errors: list[InputError], make, *given):  # type: ignore[no-untyped-def]
+def _tried(errors: list[InputError], make: Callable[..., Made], *given: object) -> Made | None:
     """Return what ``make`` makes of ``given``, or None with its error noted."""
     try:
         return make(*given)
@@ -82,6 +89,30 @@ def _wiring(scale: Scale, index: int, shared: Circuit | None, coil: Coil) -> Wir
     if isinstance(scale.law, Observed):
         return None
     return wire(scale, scale.law, ("scale", index), shared, coil)
+
+
+def _observed_curve(movement: Movement, scale: Scale, shared: Circuit | None, key: Key = ()) -> Stage:
+    """Return where the pointer of an observed scale was seen, by value."""
+    law = scale.law
+    assert isinstance(law, Observed)
+    positions = [at for _, at in law.points]
+    if law.position == "old":
+        positions = [old_angle(movement, at) for at in positions]
+    try:
+        curve = law.curve(tuple(positions), half_value(scale, shared))
+        check_one_way(curve, (scale.start, scale.end), 129)
+    except InputError as error:
+        raise error.under(*key, "law") from None
+    return curve
+
+
+def _lowest_deflection(movement: Movement, scale: Scale, shared: Circuit | None) -> float:
+    """Return an observed scale's least deflection; 0 where it cannot be had, which is refused later."""
+    try:
+        ends = _observed_curve(movement, scale, shared).forward(np.array([scale.start, scale.end]))
+    except InputError:
+        return 0.0
+    return float(((ends - movement.rest) / (movement.full - movement.rest)).min())
 
 
 def _lowest_drive(wiring: Wiring, scale: Scale) -> float:
@@ -150,21 +181,12 @@ class _Maker:
         )
 
     def _observed(self, scale: Scale, key: Key) -> ScaleDial:
-        law = scale.law
-        assert isinstance(law, Observed)
         if scale.all_readings():
             raise InputError(
                 "an observed scale is its own correction; put the readings among its points",
                 readings_key(key, scale),
             )
-        positions = [at for _, at in law.points]
-        if law.position == "old":
-            positions = [old_angle(self.movement, at) for at in positions]
-        try:
-            stage = law.curve(tuple(positions), half_value(scale, self.circuit))
-            check_one_way(stage, (scale.start, scale.end), 129)
-        except InputError as error:
-            raise error.under(*key, "law") from None
+        stage = _observed_curve(self.movement, scale, self.circuit, key)
         made, _ = link(stage, sample_places((scale.start, scale.end), 33))
         movement = self.movement
         chain = Chain((made,), None, movement.rest, movement.full, self.stops_deg, scale.unit)
@@ -180,12 +202,12 @@ class _Maker:
         deflection = float(movement.response.forward(np.array([drive]))[0])
         return movement.rest + deflection * (movement.full - movement.rest)
 
-    def _by_first_value(self):  # type: ignore[no-untyped-def]
+    def _by_first_value(self) -> NominalAngle:
         if self.first_wiring is None:
             return _no_first_value
         return self._by_value(self._chain(self.first_scale, self.first_wiring))
 
-    def _by_value(self, chain: Chain):  # type: ignore[no-untyped-def]
+    def _by_value(self, chain: Chain) -> NominalAngle:
         # A reading may lie beyond the nominal stops: the departure is what it is there to show.
         free = replace(chain, stops_deg=(-math.inf, math.inf))
         return lambda value: float(free.angle(np.array(value)))

@@ -13,12 +13,16 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from dialgen.errors import NoSuchValue
 from dialgen.stage import EVERYWHERE, Array, Span, Stage
 
 _BLOCK = 8192
 _GRAIN = 1e-12
+
+quietly = np.errstate(over="ignore", divide="ignore", invalid="ignore")
+"""A step too large for a double comes out infinite or NaN, which is refused with the value named."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -64,8 +68,9 @@ class Chain:
         if bad.any():
             first = int(np.flatnonzero(bad)[0])
             raise NoSuchValue(
-                f"{self._named(value.flat[first])} would stand at {angle_deg.flat[first]:.4g} degrees, beyond the "
-                f"stops {low:g} and {high:g}; change the range, or the stops if the pointer swings farther",
+                f"{self._named(value.flat[first])} would stand at {angle_deg.flat[first]:.4g} degrees, "
+                f"beyond the stops {low:g} and {high:g}; "
+                "change the range, or the stops if the pointer swings farther",
                 ("movement", "stops"),
             )
         return angle_deg
@@ -99,6 +104,7 @@ class Chain:
         count = self.drive_after
         return _in_blocks(lambda values: self._forward(values, count), value)
 
+    @quietly
     def _forward(self, value: Array, count: int) -> Array:
         step = value
         for link in self.links[:count]:
@@ -111,6 +117,7 @@ class Chain:
         self._refuse(value, ~np.isfinite(step))
         return step
 
+    @quietly
     def _back(self, link: Link, step: Array, angle_deg: Array) -> Array:
         low, high = link.stage.image
         if link.stage.image is not EVERYWHERE and not _within(step, (low, high)):
@@ -131,8 +138,8 @@ class Chain:
             )
         return result
 
-    def _refuse(self, value: Array, bad: Array) -> None:
-        first = value[bad.astype(bool)].flat[0]
+    def _refuse(self, value: Array, bad: NDArray[np.bool_]) -> None:
+        first = value[bad].flat[0]
         if math.isnan(first):
             raise NoSuchValue("a value that is not a number has no angle; give a number")
         raise NoSuchValue(

@@ -10,7 +10,7 @@ import numpy as np
 
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
-from dialgen.dial.chain import Link
+from dialgen.dial.chain import Link, quietly
 from dialgen.dialfile.models import Scale
 from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.formula import Formula
@@ -49,7 +49,8 @@ class Wiring:
         step = values
         for each in self.links[:-1]:
             step = each.stage.forward(step)
-        return as_designed.stage(self.terminals).forward(step)
+        drives: Array = as_designed.stage(self.terminals).forward(step)
+        return drives
 
 
 def link(stage: Stage, values: Array) -> tuple[Link, Array]:
@@ -59,6 +60,7 @@ def link(stage: Stage, values: Array) -> tuple[Link, Array]:
     return Link(stage, float(finite.max()) if finite.size else 1.0), made
 
 
+@quietly
 def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -> Wiring:
     """Return the links from a scale's values to the drive.
 
@@ -76,16 +78,16 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     factor = 1.0 if law.takes_face_values else prefix
     span = (scale.start * factor, scale.end * factor)
     stage = law.stage(span)
-    _check_law(stage, law, scale, span, key)
     circuit = scale.circuit or shared or Direct()
+    _check_law(stage, law, scale, key, span=span, takes=circuit.takes)
     circuit_key: Key = (*key, "circuit") if scale.circuit else ("circuit",)
     signal_unit = law.signal_unit(unit)
     _check_units(circuit, signal_unit, law, key, circuit_key)
     zero = law.zero(span)
     terminals = Terminals(
         coil=coil,
-        signal=lambda value: float(stage.forward(np.array([value * factor]))[0]),
-        rest_signal=float(stage.forward(np.array([span[0]]))[0]) if zero is None else zero,
+        signal=lambda value: _signal(stage, value * factor),
+        rest_signal=_signal(stage, span[0]) if zero is None else zero,
         full_value=scale.end,
         unit=signal_unit,
     )
@@ -110,14 +112,14 @@ def half_value(scale: Scale, shared: Circuit | None) -> float | None:
     return half.value / split_unit(scale.unit)[0] if half is not None else None
 
 
-def _check_law(stage: Stage, law: Law, scale: Scale, span: Span, key: Key) -> None:
-    low, high = stage.domain
+def _check_law(stage: Stage, law: Law, scale: Scale, key: Key, *, span: Span, takes: str | None) -> None:
     for name, value, at in (("from", scale.start, span[0]), ("to", scale.end, span[1])):
-        with np.errstate(all="ignore"):
-            fits = low <= at <= high and np.isfinite(stage.forward(np.array([at]))).all()
-        if not fits and not (math.isinf(at) and isinstance(law, Linear)):
+        # A circuit that takes ohms has a limit of its own at an open pair of terminals.
+        open_ended = math.isinf(at) and takes == "Ω"
+        signal = _signal(stage, at)
+        if math.isnan(signal) or (math.isinf(signal) and not open_ended):
             raise InputError(
-                f"the {law.kind} law has no signal at {value:g}; {_law_mend(low, high)}",
+                f"the {law.kind} law has no signal at {value:g}; {_law_mend(at, stage.domain)}",
                 (*key, name),
                 (*key, "law"),
             )
@@ -127,10 +129,19 @@ def _check_law(stage: Stage, law: Law, scale: Scale, span: Span, key: Key) -> No
         raise InputError(error.message, (*key, "law"), (*key, "from"), (*key, "to")) from None
 
 
-def _law_mend(low: float, high: float) -> str:
-    if math.isfinite(low):
-        return f"the scale must lie above {low:g}" + (f" and up to {high:g}" if math.isfinite(high) else "")
-    return "end the scale at a finite value" if math.isinf(high) else f"the scale must end below {high:g}"
+def _signal(stage: Stage, at: float) -> float:
+    """Return the law's signal at one place; NaN outside its domain."""
+    low, high = stage.domain
+    return float(stage.forward(np.array([at]))[0]) if low <= at <= high else math.nan
+
+
+def _law_mend(at: float, domain: Span) -> str:
+    low, high = domain
+    if math.isinf(at):
+        return "end the scale at a finite value"
+    if low <= at <= high:
+        return "change the law, or let the scale keep clear of it"
+    return f"the scale must lie above {low:g}" if at < low else f"the scale must end below {high:g}"
 
 
 def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key, circuit_key: Key) -> None:
@@ -164,8 +175,8 @@ def _own_current(circuit: Circuit, terminals: Terminals, circuit_key: Key) -> tu
     if abs(full - own) <= _NEAR_OWN * own:
         return ()
     text = (
-        f"full deflection is at {full:.4g} {terminals.unit} but the movement's own is {own:.4g} {terminals.unit}; "
-        "give a circuit, or full"
+        f"full deflection is at {full:.4g} {terminals.unit} but the movement's own is {own:.4g} "
+        f"{terminals.unit}; give a circuit, or full"
     )
     return (Remark(text, (*circuit_key, "full")),)
 
@@ -178,7 +189,7 @@ def past_points(law: Law | Observed, scale: Scale, key: Key) -> tuple[Remark, ..
     if first <= scale.start and scale.end <= last:
         return ()
     text = (
-        f"the scale runs from {scale.start:g} to {scale.end:g} but the points only from {first:g} to {last:g}; "
-        "beyond them the last slope is carried on"
+        f"the scale runs from {scale.start:g} to {scale.end:g} but the points only from {first:g} "
+        f"to {last:g}; beyond them the last slope is carried on"
     )
     return (Remark(text, (*key, "law", "points")),)

@@ -2,90 +2,137 @@
 
 from __future__ import annotations
 
-import difflib
+import dataclasses
 from collections.abc import Iterator
+from functools import cache
 from typing import Any, get_args
 
 from pydantic import BaseModel, ValidationError
+from pydantic_core import ErrorDetails
 
-from dialgen.dialfile.base import Nested
-from dialgen.errors import DialFileError, InputError, Key
+from dialgen.circuit.kinds import CIRCUITS
+from dialgen.dialfile.base import Flaws, keys_of, nearest_key
+from dialgen.errors import DialFileError, Fault, InputError, Key
+from dialgen.quantity import shown
+
+_MOST_SUGGESTED = 200
 
 Complaint = tuple[Key, str]
 
 
-def complaints(error: ValueError, model: type[BaseModel]) -> Iterator[Complaint]:
+def complaints(error: ValueError, model: type[BaseModel], root: type[BaseModel]) -> Iterator[Complaint]:
     """Yield the key and message of everything that ``error`` complains of in a ``model``.
+
+    Args:
+        error: what pydantic raised.
+        model: the table it was raised for.
+        root: the whole file's table, for saying where a misplaced key belongs.
 
     Raises:
         ValueError: an error of a kind that no check of ours raises.
     """
     if not isinstance(error, ValidationError):
         raise error
-    for item in error.errors(include_url=False, include_input=True):
-        key: Key = tuple(item["loc"])
+    items = error.errors(include_url=False, include_input=True)
+    meant = _meant(items, model, root)
+    for item in items:
+        key, kind = tuple(item["loc"]), item["type"]
         cause = item.get("ctx", {}).get("error")
-        if isinstance(cause, Nested):
-            for inner, message in complaints(cause.error, cause.model):
-                yield (*key, *cause.prefix, *inner), message
+        if isinstance(cause, Flaws):
+            yield from _of_flaws(cause, (*key, *cause.prefix), root)
         elif isinstance(cause, InputError):
             yield (*key, *(cause.keys[0] if cause.keys else ())), cause.message
-        elif isinstance(cause, DialFileError) or (item["type"] == "too_short" and item["input"]):
-            # The one has places of its own; the other only says that no item of a list was right.
-            continue
-        elif cause is not None:
+        elif cause is not None and not isinstance(cause, DialFileError):
             yield key, str(cause)
-        else:
-            yield key, _message(item["type"], key, item["input"], item.get("ctx", {}), model)
+        elif kind == "extra_forbidden":
+            yield key, f"not a key here; {_suggestion(key, meant.get(key), model, root)}"
+        elif kind == "missing" and key in meant.values():
+            # The misspelt key says it already.
+            continue
+        elif cause is None and not (kind == "too_short" and item["input"]):
+            # A list that is too short but not empty only says that no item of it was right.
+            yield key, _message(kind, key, item["input"], item.get("ctx", {}), model)
 
 
-def foreign_faults(error: ValidationError) -> list[Any]:
-    """Return the faults in other files (CSV) that the error carries; they have places of their own."""
-    found: list[Any] = []
+def foreign_faults(error: ValidationError) -> Iterator[Fault]:
+    """Yield the faults in other files (CSV) that the error carries; they have places of their own."""
     for item in error.errors(include_url=False, include_input=False):
         cause = item.get("ctx", {}).get("error")
         if isinstance(cause, DialFileError):
-            found += cause.faults
-        elif isinstance(cause, Nested):
-            found += foreign_faults(cause.error)
+            yield from cause.faults
+        elif isinstance(cause, Flaws) and cause.wrong:
+            yield from foreign_faults(cause.wrong)
+
+
+def _of_flaws(flaws: Flaws, at: Key, root: type[BaseModel]) -> Iterator[Complaint]:
+    if flaws.wrong:
+        for key, message in complaints(flaws.wrong, flaws.model, root):
+            yield (*at, *key), message
+    for error in flaws.crossed:
+        yield (*at, *(error.keys[0] if error.keys else ())), error.message
+
+
+def _meant(items: list[ErrorDetails], model: type[BaseModel], root: type[BaseModel]) -> dict[Key, Key]:
+    """Return for each unknown key the known one beside it that was most likely meant."""
+    unknown = [tuple(item["loc"]) for item in items if item["type"] == "extra_forbidden"]
+    found: dict[Key, Key] = {}
+    for key in unknown[:_MOST_SUGGESTED]:
+        near = nearest_key(key[-1], _known(model, key[:-1]))
+        if near is not None and key[-1] not in _homes(root):
+            found[key] = (*key[:-1], near)
     return found
 
 
 def _message(kind: str, key: Key, given: Any, context: dict[str, Any], model: type[BaseModel]) -> str:
     if kind == "missing":
         return f"missing; add {_example(model, key)}"
-    if kind == "extra_forbidden":
-        return f"not a key here; {_suggestion(str(key[-1]), _known(model, key[:-1]))}"
     if kind in ("model_type", "model_attributes_type", "dict_type"):
-        return f"this is a table, not {_short(given)}; write it with its own keys"
+        return f"this is a table of keys, not {shown(given)}; write it as [{_dotted(key)}] with its keys below"
     if kind in ("tuple_type", "list_type"):
-        double = f"[[{'.'.join(str(k) for k in key if isinstance(k, str))}]]"
-        return f"this is a list of tables, not {_short(given)}; begin each with {double}"
+        return f"this is a list of tables, not {shown(given)}; begin each with [[{_dotted(key)}]]"
     if kind == "too_short":
         return f"none given; add {_example(model, key)}"
     if kind == "too_long":
         return f"{context.get('actual_length')} given; at most {context.get('max_length')} are read"
-    return f"{kind.replace('_', ' ')}: {_short(given)}; see the dial file's description"
+    return f"{kind.replace('_', ' ')}: {shown(given)}; see the description of the dial file"
 
 
-def _suggestion(key: str, known: list[str]) -> str:
-    close = difflib.get_close_matches(key, known, n=1, cutoff=0.5)
-    if close:
-        return f"did you mean {close[0]}?"
-    return f"the keys are {', '.join(known)}"
+def _dotted(key: Key) -> str:
+    return ".".join(part for part in key if isinstance(part, str))
+
+
+def _suggestion(key: Key, meant: Key | None, model: type[BaseModel], root: type[BaseModel]) -> str:
+    if homes := _homes(root).get(str(key[-1])):
+        return f"it belongs in {' or '.join(homes)}"
+    if meant is not None:
+        return f"did you mean {meant[-1]}?"
+    return f"the keys are {', '.join(_known(model, key[:-1]))}"
+
+
+@cache
+def _homes(root: type[BaseModel]) -> dict[str, list[str]]:
+    """Return the tables of the file that have each key."""
+    found: dict[str, list[str]] = {}
+    for kind in CIRCUITS.values():
+        found.update({field.name: ["[circuit]"] for field in dataclasses.fields(kind)})
+    for name, field in root.model_fields.items():
+        table = _first_model(field.annotation)
+        brackets = ("[[", "]]") if "tuple" in str(field.annotation) else ("[", "]")
+        for key in keys_of(table) if table else ():
+            found.setdefault(key, []).append(name.join(brackets))
+    return found
 
 
 def _example(model: type[BaseModel], key: Key) -> str:
     inside = _model_at(model, key[:-1])
-    for name, field in inside.model_fields.items() if inside else ():
-        if key[-1] in (name, field.alias):
-            return field.description or f"{key[-1]} = ..."
-    return f"{key[-1]} = ..."
+    fields = {field.alias or name: field for name, field in inside.model_fields.items()} if inside else {}
+    field = fields.get(str(key[-1]))
+    return field.description if field and field.description else f"{key[-1]} = ..."
 
 
 def _known(model: type[BaseModel], key: Key) -> list[str]:
     inside = _model_at(model, key)
-    return [field.alias or name for name, field in inside.model_fields.items()] if inside else []
+    return list(keys_of(inside)) if inside else []
 
 
 def _model_at(model: type[BaseModel], key: Key) -> type[BaseModel] | None:
@@ -103,8 +150,3 @@ def _first_model(annotation: Any) -> type[BaseModel] | None:
     if isinstance(annotation, type) and issubclass(annotation, BaseModel):
         return annotation
     return next((m for a in get_args(annotation) if (m := _first_model(a))), None)
-
-
-def _short(given: Any) -> str:
-    shown = repr(given)
-    return shown if len(shown) <= 40 else shown[:37] + "..."

@@ -14,7 +14,10 @@ from pydantic import PlainValidator
 
 from dialgen.circuit.direct import FACE_VALUE
 from dialgen.circuit.shunt import RATED, read_rating
+from dialgen.dialfile.base import at_item
+from dialgen.errors import InputError
 from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
+from dialgen.lettering import measure
 from dialgen.quantity import (
     AMPERE,
     ANY_CURRENT,
@@ -25,12 +28,16 @@ from dialgen.quantity import (
     Measure,
     read_length,
     read_number,
+    shown,
+    shown_unit,
 )
 
 _MOST_POINTS = 2000
 _LONGEST_TEXT = 200
 _LARGEST_VALUE = 1e15
 _SMALLEST_VALUE = 1e-15
+MOST = 1e6
+"""The largest pure number that a key may hold."""
 
 Reader = Callable[[Any], Any]
 
@@ -41,9 +48,7 @@ def number(name: str, least: float = -math.inf, most: float = math.inf) -> Reade
     def read(given: object) -> float:
         value = read_number(given, name)
         if not least <= value <= most:
-            raise ValueError(
-                f"{name} of {value:g} is not within {least:g} and {most:g}; {_mend(least, most)}"
-            )
+            raise ValueError(f"{name} of {value:g} is out of bounds; {_mend(least, most)}")
         return value
 
     return read
@@ -54,8 +59,10 @@ def positive(name: str) -> Reader:
 
     def read(given: object) -> float:
         value = read_number(given, name)
-        if not value > 0:
+        if not value >= _SMALLEST_VALUE:
             raise ValueError(f"{name} of {value:g} is not above zero; write a positive number")
+        if value > _LARGEST_VALUE:
+            raise ValueError(f"{name} of {value:g} is beyond what a face can show; write a smaller number")
         return value
 
     return read
@@ -65,7 +72,7 @@ def angle(given: object) -> float:
     """Return an angle in degrees, within a turn either way."""
     if isinstance(given, str):
         raise ValueError(
-            f"an angle is a bare number of degrees, not {given[:40]!r}; leave out quotes and unit"
+            f"an angle is a bare number of degrees, not {shown(given)}; leave out quotes and unit"
         )
     return number("an angle", -360.0, 360.0)(given)
 
@@ -93,7 +100,9 @@ def face_value(given: object) -> float:
     value = read_number(given, "a value on the scale")
     size = abs(value)
     if size > _LARGEST_VALUE or 0 < size < _SMALLEST_VALUE:
-        raise ValueError(f"{value:g} is beyond what a face can show; put a prefix before the unit")
+        raise ValueError(
+            f"{value:g} is beyond what a face can show; put a prefix such as k or m before the unit instead"
+        )
     return value
 
 
@@ -107,7 +116,7 @@ def face_end(given: object) -> float:
 def text(given: object) -> str:
     """Return a line of text."""
     if not isinstance(given, str):
-        raise ValueError(f"this is text, not {_short(given)}; write it in quotes")
+        raise ValueError(f"this is text, not {shown(given)}; write it in quotes")
     if len(given) > _LONGEST_TEXT:
         raise ValueError(f"a text of {len(given)} characters; at most {_LONGEST_TEXT} fit a plate")
     if any(ord(c) < 32 or 0x7F <= ord(c) < 0xA0 for c in given):
@@ -115,10 +124,25 @@ def text(given: object) -> str:
     return given
 
 
+def lettered(given: object) -> str:
+    """Return a line of text whose every character can be lettered."""
+    value = text(given)
+    if not value.isascii():
+        measure(value, 1.0)
+    return value
+
+
+def unit_text(given: object) -> str:
+    """Return a unit that can be lettered, as it is written in the file."""
+    value = text(given)
+    lettered(shown_unit(value))
+    return value
+
+
 def formula_text(given: object) -> str:
     """Return a formula's text; what it may say is for the formula to check."""
     if not isinstance(given, str):
-        raise ValueError(f"a formula is text, not {_short(given)}; write it in quotes")
+        raise ValueError(f"a formula is text, not {shown(given)}; write it in quotes")
     return given
 
 
@@ -128,9 +152,9 @@ def pair(read: Reader, example: str) -> Reader:
     def read_pair(given: object) -> tuple[Any, Any]:
         if not isinstance(given, list) or len(given) != 2:
             raise ValueError(
-                f"this is a pair such as {example}, not {_short(given)}; write two values in brackets"
+                f"this is a pair of values in brackets, not {shown(given)}; write for example {example}"
             )
-        return read(given[0]), read(given[1])
+        return _at(0, read, given[0]), _at(1, read, given[1])
 
     return read_pair
 
@@ -140,21 +164,25 @@ def points(first: Reader, second: Reader, example: str, least: int = 2) -> Reade
 
     def read_points(given: object) -> tuple[tuple[Any, Any], ...]:
         if not isinstance(given, list):
-            raise ValueError(f"this is a list of pairs such as {example}, not {_short(given)}; write it so")
+            raise ValueError(f"this is a list of pairs, not {shown(given)}; write for example {example}")
         if not least <= len(given) <= _MOST_POINTS:
             raise ValueError(f"{len(given)} points; give {least} to {_MOST_POINTS}, such as {example}")
-        return tuple(_read_point(i, p, first, second, example) for i, p in enumerate(given, 1))
+        return tuple(_point(i, p, first, second, example) for i, p in enumerate(given))
 
     return read_points
 
 
-def _read_point(at: int, given: object, first: Reader, second: Reader, example: str) -> tuple[Any, Any]:
+def _point(index: int, given: object, first: Reader, second: Reader, example: str) -> tuple[Any, Any]:
     if not isinstance(given, list) or len(given) != 2:
-        raise ValueError(f"point {at} is {_short(given)}, not a pair; write the points as {example}")
+        raise InputError(f"this is a point, not {shown(given)}; write the points as {example}", (index,))
+    return _at(index, first, given[0]), _at(index, second, given[1])
+
+
+def _at(index: int, read: Reader, given: object) -> Any:
     try:
-        return first(given[0]), second(given[1])
+        return read(given)
     except ValueError as error:
-        raise ValueError(f"point {at}: {error}") from None
+        raise at_item(index, error) from None
 
 
 def one_of(*words: str) -> Reader:
@@ -162,8 +190,8 @@ def one_of(*words: str) -> Reader:
 
     def read(given: object) -> str:
         if not isinstance(given, str) or given not in words:
-            choices = ", ".join(f'"{w}"' for w in words)
-            raise ValueError(f"{_short(given)} is not known here; write one of {choices}")
+            choices = [f'"{word}"' for word in words]
+            raise ValueError(f"{shown(given)} is not known here; write {' or '.join(choices)}")
         return given
 
     return read
@@ -172,20 +200,20 @@ def one_of(*words: str) -> Reader:
 def true_or_false(given: object) -> bool:
     """Return a truth value."""
     if not isinstance(given, bool):
-        raise ValueError(f"this is true or false, not {_short(given)}; write it without quotes")
+        raise ValueError(f"this is true or false, not {shown(given)}; write it without quotes")
     return given
 
 
 def signal(given: object) -> float | Amount:
     """Return a table's signal: a bare number, or text with a unit."""
-    return SIGNAL.read(given) if isinstance(given, str) else read_number(given, "a signal")
+    return SIGNAL.read(given) if isinstance(given, str) else number("a signal", -1e18, 1e18)(given)
 
 
 NOTES: dict[str, Reader] = {
     FACE_VALUE: face_value,
     RATED: read_rating,
     SIGNAL_POINTS: points(face_value, signal, '[[0, "0 mV"], [100, "12 mV"]]'),
-    FACE_POINTS: points(face_end, number("a position"), "[[0, -44], [10, -20.5]]"),
+    FACE_POINTS: points(face_end, number("a position", -MOST, MOST), "[[0, -44], [10, -20.5]]"),
 }
 """Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
 
@@ -203,11 +231,6 @@ def _mend(least: float, most: float) -> str:
     )
 
 
-def _short(given: object) -> str:
-    shown = repr(given)
-    return shown if len(shown) <= 40 else shown[:37] + "..."
-
-
 def _quantity(measure: Measure) -> Reader:
     return lambda given: measure.read(given).value
 
@@ -219,6 +242,8 @@ Position = Annotated[tuple[float, float], PlainValidator(pair(coordinate, "[0, 8
 FaceValue = Annotated[float, PlainValidator(face_value)]
 FaceEnd = Annotated[float, PlainValidator(face_end)]
 Text = Annotated[str, PlainValidator(text)]
+Lettered = Annotated[str, PlainValidator(lettered)]
+UnitText = Annotated[str, PlainValidator(unit_text)]
 YesNo = Annotated[bool, PlainValidator(true_or_false)]
 CurrentA = Annotated[float, PlainValidator(_quantity(AMPERE))]
 AppliedA = Annotated[float, PlainValidator(_quantity(ANY_CURRENT))]

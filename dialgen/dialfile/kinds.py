@@ -6,51 +6,80 @@ import dataclasses
 from functools import cache
 from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
-from pydantic import BaseModel, ConfigDict, Field, PlainValidator, create_model
+from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import checked
+from dialgen.dialfile.base import Flaws, nearest_key
 from dialgen.errors import InputError
+from dialgen.quantity import shown
 
 
 def read_kind(given: object, table: dict[str, type], noun: str) -> Any:
     """Return the law or circuit that ``given`` names: its kind alone, or a table with its keys.
 
     Raises:
-        InputError: the kind is not in ``table``.
-        Nested: a key of it is wrong, with places relative to it.
+        InputError: the kind is not in ``table``, or its keys do not go together.
+        Flaws: a key of it is wrong, with places relative to it.
     """
     if isinstance(given, str):
         given = {"kind": given}
     if not isinstance(given, dict):
-        raise InputError(f'a {noun} is a name or a table; write for example {noun} = "{next(iter(table))}"')
+        raise InputError(
+            f'a {noun} is a name or a table, not {shown(given)}; write for example {noun} = "{next(iter(table))}"'
+        )
     kind = given.get("kind")
     if not isinstance(kind, str) or kind not in table:
-        known = ", ".join(f'"{k}"' for k in table)
-        what = f"the {noun} has no kind" if kind is None else f"{kind!r} is not a kind of {noun}"
-        raise InputError(f"{what}; there are {known}", ("kind",))
-    keys = checked(model_of(table[kind]), {k: v for k, v in given.items() if k != "kind"})
-    return table[kind](**{name: getattr(keys, name) for name in keys.model_fields_set})
+        raise InputError(_no_such_kind(kind, table, noun), ("kind",))
+    keys = {k: v for k, v in given.items() if k != "kind"}
+    model = model_of(table[kind])
+    try:
+        return _made(table[kind], model.model_validate(keys))
+    except ValidationError as error:
+        raise Flaws(model, error, _crossed(table[kind], model, keys)) from None
 
 
 @cache
 def model_of(kind: type) -> type[BaseModel]:
     """Return the pydantic model with the fields of a law or circuit; unknown keys are refused."""
     hints = get_type_hints(kind, include_extras=True)
-    made: dict[str, Any] = {f.name: (_field(hints[f.name]), _default(f)) for f in dataclasses.fields(kind)}
+    made: dict[str, Any] = {f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)}
     return create_model(kind.__name__, __config__=ConfigDict(extra="forbid", frozen=True), **made)
 
 
-def _field(hint: Any) -> Any:
-    return Annotated[Any, PlainValidator(_reader(hint))]
+def _made(kind: type, keys: BaseModel) -> Any:
+    return kind(**{name: getattr(keys, name) for name in keys.model_fields_set})
 
 
-def _reader(hint: Any) -> fields.Reader:
+def _crossed(kind: type, model: type[BaseModel], keys: dict[str, Any]) -> list[InputError]:
+    """Return what the keys do not satisfy together, where only unknown ones among them are wrong."""
+    try:
+        _made(kind, model.model_validate({k: v for k, v in keys.items() if k in model.model_fields}))
+    except ValidationError:
+        return []
+    except InputError as error:
+        return [error]
+    return []
+
+
+def _no_such_kind(kind: object, table: dict[str, type], noun: str) -> str:
+    known = ", ".join(f'"{k}"' for k in table)
+    if kind is None:
+        return f"the {noun} has no kind; add kind = with one of {known}"
+    near = nearest_key(kind, table) if isinstance(kind, str) else None
+    mend = f'did you mean "{near}"?' if near else f"write one of {known}"
+    return f"{shown(kind)} is not a kind of {noun}; {mend}"
+
+
+def _field(name: str, hint: Any) -> Any:
+    return Annotated[Any, PlainValidator(_reader(name, hint))]
+
+
+def _reader(name: str, hint: Any) -> fields.Reader:
     if get_origin(hint) is Annotated:
         return fields.reader_for(get_args(hint)[1])
     if get_origin(hint) is Literal:
         return fields.one_of(*get_args(hint))
-    return fields.formula_text if hint is str else fields.number("this")
+    return fields.formula_text if hint is str else fields.number(name, -fields.MOST, fields.MOST)
 
 
 def _default(field: dataclasses.Field[Any]) -> Any:

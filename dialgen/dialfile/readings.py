@@ -2,21 +2,23 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+import re
+from collections.abc import Callable, Iterator
 from pathlib import Path
-from typing import Annotated, Any, Self
+from typing import Annotated, Any
 
-from pydantic import PlainValidator, model_validator
+from pydantic import PlainValidator, PrivateAttr
 
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table
+from dialgen.dialfile.base import Flaws, Table, checked, needs
 from dialgen.dialfile.faults import complaints
 from dialgen.dialfile.fields import Angle, AppliedA, AppliedV, FaceValue
 from dialgen.dialfile.sheets import Cell, Sheet, read_sheet
-from dialgen.errors import DialFileError, InputError
+from dialgen.errors import DialFileError, Fault, InputError
 
 _APPLIED = ("current", "voltage", "value")
 _SEEN = ("angle", "old")
+_BARE = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?")
 
 
 class Reading(Table):
@@ -28,36 +30,46 @@ class Reading(Table):
     angle: Angle | None = None
     old: FaceValue | None = None
     direction: Annotated[str | None, PlainValidator(fields.one_of("up", "down"))] = None
+    _place: tuple[str, int, int] | None = PrivateAttr(default=None)
 
-    @model_validator(mode="after")
-    def _one_of_each(self) -> Self:
-        for names, what in ((_APPLIED, "what was applied"), (_SEEN, "where the pointer stood")):
-            given = [name for name in names if getattr(self, name) is not None]
-            if len(given) != 1:
-                choice = " or ".join(names)
-                raise InputError(f"a reading says {what} once, by {choice}; {_mend(given, names)}")
-        return self
+    @property
+    def place(self) -> tuple[str, int, int] | None:
+        """File, line and column, for a reading that stands in a CSV."""
+        return self._place
+
+    @needs(*_APPLIED)
+    def _applied_once(self) -> Iterator[InputError]:
+        yield from self._once(_APPLIED, "what was applied")
+
+    @needs(*_SEEN)
+    def _seen_once(self) -> Iterator[InputError]:
+        yield from self._once(_SEEN, "where the pointer stood")
+
+    def _once(self, names: tuple[str, ...], what: str) -> Iterator[InputError]:
+        given = [name for name in names if getattr(self, name) is not None]
+        if not given:
+            yield InputError(f"the reading does not say {what}; add {' or '.join(names)}")
+        for extra in given[1:]:
+            yield InputError(f"{given[0]} already says {what}; leave out {extra}", (extra,))
 
 
 class ScaleReading(Reading):
     """A reading through a scale's own circuit: the applied quantity is a value on that scale."""
 
-    @model_validator(mode="after")
-    def _by_value(self) -> Self:
-        if self.value is None:
-            name = "current" if self.current is not None else "voltage"
-            raise InputError(f"a scale's readings are values on it; write value instead of {name}", (name,))
-        return self
+    @needs(*_APPLIED)
+    def _by_value(self) -> Iterator[InputError]:
+        for name in ("current", "voltage"):
+            if self.value is None and getattr(self, name) is not None:
+                yield InputError(f"a scale's readings are values on it; write value instead of {name}", (name,))
 
 
 def readings_file(model: type[Reading]) -> Callable[[object, Any], tuple[Reading, ...]]:
     """Return a reader of a CSV file's name that gives the readings in it."""
 
     def read(given: object, info: Any) -> tuple[Reading, ...]:
-        name = fields.text(given)
-        sheet = read_sheet(info.context["folder"] / name, name)
-        _check_heads(sheet, (*_APPLIED, *_SEEN, "direction"))
-        found, faults = [], []
+        sheet = read_sheet(info.context["folder"] / fields.text(given), (*_APPLIED, *_SEEN, "direction"))
+        found: list[Reading] = []
+        faults: list[Fault] = []
         for row in sheet.rows:
             try:
                 found.append(_reading(sheet, row, model))
@@ -66,74 +78,76 @@ def readings_file(model: type[Reading]) -> Callable[[object, Any], tuple[Reading
         if faults:
             raise DialFileError(faults)
         if not found:
-            raise sheet.fault(Cell("", 1, 1), "", "no readings below the column names; add a row for each")
+            raise sheet.fault(sheet.heads[0], "", "no readings below the column names; add a row for each")
         return tuple(found)
 
     return read
 
 
 def table_from_file(given: dict[str, Any], folder: Path) -> dict[str, Any]:
-    """Return a table law's keys with the points of its CSV file (columns value, signal) in them."""
+    """Return a table law's keys with the points of its CSV file (columns value, signal) in them.
+
+    Raises:
+        InputError: there are points already, or the file cannot be opened.
+        DialFileError: what the file holds is wrong.
+    """
     if "points" in given:
-        raise InputError("a table's points stand in the file or in a CSV; keep one of the two", ("file",))
+        raise InputError("points stand in the dial file and in a CSV; keep one of the two", ("file",))
     try:
-        name = fields.text(given["file"])
+        path = folder / fields.text(given["file"])
+        sheet = read_sheet(path, ("value", "signal"), needed=("value", "signal"))
+    except DialFileError:
+        raise
     except ValueError as error:
         raise InputError(str(error), ("file",)) from None
-    sheet = read_sheet(folder / name, name)
-    _check_heads(sheet, ("value", "signal"), needed=("value", "signal"))
     points = [[_number(sheet, row, "value"), _signal(sheet, row)] for row in sheet.rows]
+    _check_ascending(sheet, points)
     return {**{k: v for k, v in given.items() if k != "file"}, "points": points}
 
 
 def _reading(sheet: Sheet, row: dict[str, Cell], model: type[Reading]) -> Reading:
-    electrical = {name: row[name].text for name in ("current", "voltage") if name in row}
-    numbers = {name: _number(sheet, row, name) for name in ("value", "angle", "old") if name in row}
-    words = {"direction": row["direction"].text} if "direction" in row else {}
-    first = next(iter(row.values()))
+    first = _first(row)
+    words = {name: row[name].text for name in ("current", "voltage", "direction") if name in row}
+    numbers = {name: _number(sheet, row, name) for name in ("value", *_SEEN) if name in row}
     try:
-        return model.model_validate({**electrical, **numbers, **words})
-    except ValueError as error:
-        faults = []
-        for key, message in complaints(error, model):
+        made = checked(model, {**words, **numbers})
+    except Flaws as flaws:
+        assert flaws.wrong is not None
+        faults: list[Fault] = []
+        for key, message in complaints(flaws.wrong, model, model):
             name = str(key[0]) if key else ""
             faults += sheet.fault(row.get(name, first), name, message).faults
         raise DialFileError(faults) from None
+    made._place = (sheet.name, first.line, first.column)
+    return made
 
 
 def _number(sheet: Sheet, row: dict[str, Cell], name: str) -> float:
     cell = _cell(sheet, row, name)
-    try:
-        return float(cell.text.replace("\u2212", "-"))
-    except ValueError:
-        raise sheet.fault(
-            cell, name, f"{cell.text!r} is not a bare number; write one, with a point"
-        ) from None
+    plain = cell.text.replace("\u2212", "-")
+    if not _BARE.fullmatch(plain):
+        raise sheet.fault(cell, name, f'"{cell.text[:40]}" is not a bare number; write one, with a point')
+    return float(plain)
 
 
 def _signal(sheet: Sheet, row: dict[str, Cell]) -> float | str:
-    cell = _cell(sheet, row, "signal")
-    try:
-        return float(cell.text.replace("\u2212", "-"))
-    except ValueError:
-        return cell.text
+    plain = _cell(sheet, row, "signal").text.replace("\u2212", "-")
+    return float(plain) if _BARE.fullmatch(plain) else plain
 
 
 def _cell(sheet: Sheet, row: dict[str, Cell], name: str) -> Cell:
     if name not in row:
-        first = next(iter(row.values()), Cell("", 1, 1))
-        raise sheet.fault(first, name, f"the row has no {name}; fill it in or remove the row")
+        raise sheet.fault(_first(row), name, "the row has none; fill it in or remove the row")
     return row[name]
 
 
-def _check_heads(sheet: Sheet, known: tuple[str, ...], needed: tuple[str, ...] = ()) -> None:
-    for name, cell in sheet.heads.items():
-        if name not in known:
-            raise sheet.fault(cell, name[:40], f"not a column here; the columns are {', '.join(known)}")
-    for name in needed:
-        if name not in sheet.heads:
-            raise sheet.fault(next(iter(sheet.heads.values())), name, f"the column {name} is missing; add it")
+def _first(row: dict[str, Cell]) -> Cell:
+    return next(iter(row.values()), Cell(""))
 
 
-def _mend(given: list[str], names: tuple[str, ...]) -> str:
-    return f"leave out {' or '.join(given)}" if given else f"add {names[0]}"
+def _check_ascending(sheet: Sheet, points: list[list[Any]]) -> None:
+    for before, here, row in zip(points, points[1:], sheet.rows[1:], strict=False):
+        if not here[0] > before[0]:
+            raise sheet.fault(
+                row["value"], "value", f"{here[0]:g} follows {before[0]:g}; put the rows in ascending order"
+            )

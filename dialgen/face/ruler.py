@@ -27,6 +27,7 @@ class Ruler:
         place_mm: places along the line of an array of values, rising from 0 at ``start``.
         along: values at equal steps of place from ``start`` to ``end``, both included.
         width_mm: the room along the line that the numerals of an array of values take.
+        digit_mm: the room that a numeral of one digit takes, where it takes least.
         gap_mm: the least distance between marks.
         clear_mm: the least clear space between numerals.
     """
@@ -36,6 +37,7 @@ class Ruler:
     place_mm: Callable[[Array], Array]
     along: Array
     width_mm: Callable[[Array], Array]
+    digit_mm: float
     gap_mm: float
     clear_mm: float
 

@@ -109,10 +109,14 @@ def _ruler(scale: ScaleDial, line: ScaleLine, ends: Array, look: Look, numeral_w
         return sign * (line.along(chain.angle(values)) - first)
 
     def width_mm(values: Array) -> Array:
-        # The shadow of the upright numeral on the line, brought from its own circle to the line's.
+        # Two upright boxes are clear of each other as soon as they are beside or above each other,
+        # whichever comes first along the line.
         widths = np.array([numeral_width(plain_number(v), look.numeral_mm) for v in values.tolist()])
         across, upward = (np.abs(d) for d in line.directions(chain.angle(values)))
-        return (widths * upward + look.numeral_mm * across) * _crowding(spec, look)
+        with np.errstate(divide="ignore"):
+            beside = (widths + look.clear_mm) / upward
+            above = (look.numeral_mm + look.clear_mm) / across
+        return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm
 
     along = chain.value(np.linspace(ends[0], ends[1], _STEPS + 1))
     along[0], along[-1] = spec.start, spec.end
@@ -122,6 +126,7 @@ def _ruler(scale: ScaleDial, line: ScaleLine, ends: Array, look: Look, numeral_w
         place_mm=place_mm,
         along=along,
         width_mm=width_mm,
+        digit_mm=min(numeral_width("0", look.numeral_mm), look.numeral_mm) * _crowding(spec, look),
         gap_mm=spec.gap,
         clear_mm=look.clear_mm,
     )

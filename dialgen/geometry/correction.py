@@ -99,7 +99,7 @@ def _check_order(knots: Sequence[Point]) -> None:
             culprit = there if there.count else here
             raise InputError(
                 f"the pointer was seen at {here.observed_deg:g} and {there.observed_deg:g} degrees where it "
-                f"should stand at {here.nominal_deg:g} and {there.nominal_deg:g}; readings must move strictly "
-                "the pointer's way",
+                f"should stand at {here.nominal_deg:g} and {there.nominal_deg:g}; readings must move "
+                "strictly the pointer's way",
                 (culprit.first,),
             )

@@ -10,6 +10,7 @@ from __future__ import annotations
 import ast
 import math
 import operator
+import warnings
 from collections.abc import Callable
 from dataclasses import dataclass
 from typing import ClassVar
@@ -63,13 +64,13 @@ class Formula:
         return None
 
     def stage(self, span: Span) -> Stage:
-        """Return the formula as a stage, inverted about ``span``."""
-        return FormulaStage(compile_formula(self.signal), span)
+        """Return the formula as a stage, followed on from ``span``."""
+        return follow(compile_formula(self.signal), span)
 
     def zero(self, span: Span) -> float | None:
         """Return 0 where the formula, followed on from the scale, reaches it; else None."""
-        stage = FormulaStage(compile_formula(self.signal), span)
-        places = stage.followed()
+        stage = follow(compile_formula(self.signal), span)
+        places = np.append(stage.places, stage.domain[1])
         signals = stage.forward(places)
         if signals.min() <= 0 <= signals.max():
             return 0.0
@@ -83,68 +84,96 @@ class Formula:
         return 0.0 if abs(signals[end]) <= 1e-9 * size and ends_there else None
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class FormulaStage:
-    """A compiled formula; outside the scale it is followed as far as it goes on strictly one way."""
+    """A compiled formula; outside the scale it holds as far as it goes on strictly one way.
+
+    ``places`` ascend over all of its domain, densely enough to bracket roots between them.
+    """
 
     expression: Expression
-    span: Span
-    domain: Span = EVERYWHERE
+    places: Array
+    domain: Span
     image: Span = EVERYWHERE
 
     def forward(self, x: Array) -> Array:
         """Return the signal; NaN where the formula has none, which the chain refuses."""
-        with np.errstate(all="ignore"):
-            return np.asarray(self.expression(np.asarray(x, dtype=float)) + np.zeros(np.shape(x)))
+        return _evaluate(self.expression, x)
 
     def inverse(self, y: Array) -> Array:
         """Return the values whose signal is ``y``; NaN where the formula never gets there."""
-        places = self.followed()
-        return bracketed_roots(self.forward, places, np.asarray(y, dtype=float))
+        y = np.asarray(y, dtype=float)
+        roots = bracketed_roots(self.forward, self.places, y)
+        if math.isfinite(self.domain[1]):
+            return roots
+        near, limit = self.forward(np.array([self.places[-1], math.inf]))
+        return np.where((y >= min(near, limit)) & (y <= max(near, limit)), math.inf, roots)
 
-    def followed(self) -> Array:
-        """Return ascending places on which the formula is finite and strictly one way.
 
-        They cover the scale, zero, and up to a hundred spans beyond either end.
-        """
-        low, high = self.span
-        inside = sample_places(self.span, 257)
-        width = high - low if math.isfinite(high) else max(abs(low), 1.0)
-        reach = np.geomspace(1e-3, 100.0, 120) * width
-        below = np.unique(np.append(low - reach, 0.0 if low > 0 else low - reach[0]))[::-1]
+def follow(expression: Expression, span: Span) -> FormulaStage:
+    """Return the formula as a stage over ``span``, and on as far as it is finite and strictly one way.
+
+    It is followed to zero and up to a hundred spans beyond either end, but not past infinity.
+    """
+    low, high = span
+    inside = sample_places(span, 257)
+    first, last = _evaluate(expression, inside[[0, -1]])
+    rising = bool(last > first)
+    bounded = math.isfinite(high)
+    width = high - low if bounded else max(abs(low), 1.0)
+    reach = np.geomspace(1e-3, 100.0, 120) * width
+    below = np.unique(np.append(low - reach, 0.0 if low > 0 else low - reach[0]))[::-1]
+    down = _on(expression, low, below, not rising)
+    if bounded:
         above = np.unique(np.append(high + reach, 0.0 if high < 0 else high + reach[0]))
-        rising = self._rises(inside)
-        down = self._on(float(inside[0]), below, not rising)
-        up = self._on(high, above, rising) if math.isfinite(high) else np.array([])
-        return np.concatenate((down[::-1], inside, up))
+    else:
+        above = np.geomspace(2.0 * float(inside[-1]), 1e300, 600)
+    up = _on(expression, float(inside[-1]), above, rising)
+    places = np.concatenate((down[::-1], inside, up))
+    far = float(places[-1])
+    if not bounded and _holds_to_infinity(expression, np.append(above, high), rising):
+        far = high
+    return FormulaStage(expression, places, (float(places[0]), far))
 
-    def _rises(self, inside: Array) -> bool:
-        first, last = self.forward(inside[[0, -1]])
-        return bool(last > first)
 
-    def _on(self, start: float, places: Array, rising: bool) -> Array:
-        """Return the first of ``places`` while going on from ``start`` strictly one way."""
-        signals = self.forward(np.concatenate(([start], places)))
+def _evaluate(expression: Expression, x: Array) -> Array:
+    with np.errstate(all="ignore"):
+        return np.asarray(expression(np.asarray(x, dtype=float)) + np.zeros(np.shape(x)))
+
+
+def _holds_to_infinity(expression: Expression, above: Array, rising: bool) -> bool:
+    signals = _evaluate(expression, above)
+    with np.errstate(invalid="ignore"):
+        steps = np.diff(signals)
+    turns = steps < 0 if rising else steps > 0
+    return not (np.isnan(signals).any() or turns.any())
+
+
+def _on(expression: Expression, start: float, places: Array, rising: bool) -> Array:
+    """Return the first of ``places`` while going on from ``start`` strictly one way."""
+    signals = _evaluate(expression, np.concatenate(([start], places)))
+    with np.errstate(invalid="ignore"):
         steps = np.diff(signals) if rising else -np.diff(signals)
-        bad = np.flatnonzero(~(np.isfinite(signals[1:]) & (steps > 0)))
-        good = places if not len(bad) else places[: bad[0]]
-        if not len(bad):
-            return good
-        # The formula turns, or ends, between two places: go as near that point as doubles allow.
-        last = float(good[-1]) if len(good) else start
-        edge = self._edge(last, float(places[bad[0]]), rising)
-        return np.append(good, edge) if edge != last else good
+    bad = np.flatnonzero(~(np.isfinite(signals[1:]) & (steps > 0)))
+    if not len(bad):
+        return places
+    good = places[: bad[0]]
+    # The formula turns, or ends, between two places: go as near that point as doubles allow.
+    last = float(good[-1]) if len(good) else start
+    edge = _edge(expression, last, float(places[bad[0]]), rising)
+    return np.append(good, edge) if edge != last else good
 
-    def _edge(self, good: float, bad: float, rising: bool) -> float:
-        value = float(self.forward(np.array(good)))
-        for _ in range(60):
-            middle = (good + bad) / 2
-            signal = float(self.forward(np.array(middle)))
-            if math.isfinite(signal) and (signal > value if rising else signal < value):
-                good, value = middle, signal
-            else:
-                bad = middle
-        return good
+
+def _edge(expression: Expression, good: float, bad: float, rising: bool) -> float:
+    value = float(_evaluate(expression, np.array(good)))
+    for _ in range(60):
+        middle = (good + bad) / 2
+        signal = float(_evaluate(expression, np.array(middle)))
+        if math.isfinite(signal) and (signal > value if rising else signal < value):
+            good, value = middle, signal
+        else:
+            bad = middle
+    return good
 
 
 def compile_formula(text: str) -> Expression:
@@ -160,28 +189,48 @@ def compile_formula(text: str) -> Expression:
     if len(text) > LONGEST:
         raise FormulaError(f"the formula has {len(text)} characters; at most {LONGEST} are read", LONGEST)
     plain = text.replace("\u2212", "-")
+    start = len(plain) - len(plain.lstrip())
     if not plain.strip():
         raise FormulaError("the formula is empty; write an expression in x", 1)
+    if "\n" in plain or "\r" in plain:
+        raise FormulaError("the formula has a line break; write it on one line", start + 1)
     try:
-        tree = ast.parse(plain.strip(), mode="eval")
+        with warnings.catch_warnings():
+            # What Python only warns of ("1if x") is no arithmetic either.
+            warnings.simplefilter("error")
+            tree = ast.parse(plain.strip(), mode="eval")
     except SyntaxError as error:
-        raise FormulaError("not an expression; write arithmetic in x", error.offset or 1) from None
+        raise FormulaError("not an expression; write arithmetic in x", start + (error.offset or 1)) from None
     except (ValueError, RecursionError, MemoryError):
-        raise FormulaError("not an expression; write arithmetic in x", 1) from None
-    _refuse_commas(tree.body)
-    if not any(isinstance(node, ast.Name) and node.id == "x" for node in ast.walk(tree)):
-        raise FormulaError("the formula has no x, so every value looks alike; write an expression in x", 1)
-    return _build(tree.body, 0)
+        raise FormulaError("not an expression; write arithmetic in x", start + 1) from None
+    try:
+        _refuse_commas(tree.body)
+        if not any(isinstance(node, ast.Name) and node.id == "x" for node in ast.walk(tree)):
+            raise _Unread("the formula has no x, so every value looks alike; write one in x", tree.body)
+        return _build(tree.body, 0)
+    except _Unread as error:
+        # Syntax nodes count in bytes of the stripped text; people count characters of their own.
+        before = plain.strip().encode()[: error.node.col_offset].decode(errors="replace")
+        raise FormulaError(error.message, start + len(before) + 1) from None
+
+
+class _Unread(Exception):  # noqa: N818  (never leaves this module)
+    """A syntax node that is not arithmetic, and why."""
+
+    def __init__(self, message: str, node: ast.expr) -> None:
+        super().__init__(message)
+        self.message = message
+        self.node = node
 
 
 def _refuse_commas(body: ast.expr) -> None:
     if isinstance(body, ast.Tuple):
-        raise FormulaError("the formula has a comma; the decimal sign is a point", body.col_offset + 1)
+        raise _Unread("the formula has a comma; the decimal sign is a point", body)
 
 
 def _build(node: ast.expr, depth: int) -> Expression:
     if depth > _DEEPEST:
-        raise FormulaError("the formula is nested too deeply; write it flatter", node.col_offset + 1)
+        raise _Unread("the formula is nested too deeply; write it flatter", node)
     match node:
         case ast.Constant(value=int() | float() as number) if not isinstance(number, bool):
             return _constant(number, node)
@@ -195,14 +244,14 @@ def _build(node: ast.expr, depth: int) -> Expression:
             return _unary(_UNARY[type(op)], _build(operand, depth + 1))
         case ast.Call(func=ast.Name(id=name), args=[argument], keywords=[]) if name in FUNCTIONS:
             return _unary(FUNCTIONS[name], _build(argument, depth + 1))
-    raise FormulaError(_unknown(node), node.col_offset + 1)
+    raise _Unread(_unknown(node), node)
 
 
 def _constant(number: float, node: ast.expr) -> Expression:
     try:
         value = np.float64(number)
     except OverflowError:
-        raise FormulaError("the number is too large; write a smaller one", node.col_offset + 1) from None
+        raise _Unread("the number is too large; write a smaller one", node) from None
     return lambda _: value  # type: ignore[return-value]  # numpy broadcasts a scalar as it is
 
 
@@ -214,7 +263,7 @@ def _unary(act: Callable[[Array], Array], operand: Expression) -> Expression:
     return lambda x: act(operand(x))
 
 
-def _unknown(node: ast.expr) -> str:
+def _unknown(node: ast.expr) -> str:  # noqa: PLR0911  (a table of what people write)
     known = ", ".join(sorted(FUNCTIONS))
     match node:
         case ast.Name(id=name) if name in FUNCTIONS:

@@ -12,6 +12,7 @@ from __future__ import annotations
 import math
 from collections.abc import Sequence
 from dataclasses import dataclass
+from itertools import pairwise
 
 import numpy as np
 
@@ -42,9 +43,8 @@ class Monotone:
         piece = np.searchsorted(self.knots, x, side="right")
         distance = x - self.origins.take(piece)
         c0, c1, c2, c3 = self.coefficients
-        return (
-            (c3.take(piece) * distance + c2.take(piece)) * distance + c1.take(piece)
-        ) * distance + c0.take(piece)
+        upper: Array = (c3.take(piece) * distance + c2.take(piece)) * distance + c1.take(piece)
+        return np.asarray(upper * distance + c0.take(piece))
 
     def inverse(self, y: Array) -> Array:
         """Return the place at which the curve is ``y``, to the rounding of ``y``."""
@@ -59,7 +59,7 @@ class Monotone:
         steps = np.diff(self.knots)
         high = np.concatenate(([0.0], steps, [0.0])).take(piece)
         with np.errstate(divide="ignore", invalid="ignore"):
-            distance = np.where(straight, wanted / c1, 0.0)
+            distance = np.where(straight & (wanted != 0), wanted / c1, 0.0)
         curved = ~straight
         if curved.any():
             distance[curved] = _solve(
@@ -68,6 +68,7 @@ class Monotone:
         return np.asarray(self.origins.take(piece) + distance)
 
 
+@np.errstate(over="ignore", invalid="ignore", divide="ignore")  # such points are refused below
 def through(x: Sequence[float], y: Sequence[float], *, ends: float | None = None) -> Monotone:
     """Return the monotone curve through the points (x[i], y[i]).
 
@@ -86,11 +87,11 @@ def through(x: Sequence[float], y: Sequence[float], *, ends: float | None = None
     _check_ascending(places)
     _check_one_way(values)
     slopes = pchip_slopes(places, values) if len(places) > 1 else np.array([ends or 0.0])
-    first, last = (float(slopes[0]), float(slopes[-1])) if ends is None else (ends, ends)
-    widths, rises = np.diff(places), np.diff(values)
-    chords = rises / widths
+    widths = np.diff(places)
+    chords = np.diff(values) / widths
     c2 = (3 * chords - 2 * slopes[:-1] - slopes[1:]) / widths
     c3 = (slopes[:-1] + slopes[1:] - 2 * chords) / widths**2
+    first, last = (float(slopes[0]), float(slopes[-1])) if ends is None else (ends, ends)
     coefficients = np.array(
         [
             np.concatenate((values[:1], values)),
@@ -99,6 +100,8 @@ def through(x: Sequence[float], y: Sequence[float], *, ends: float | None = None
             np.concatenate(([0.0], c3, [0.0])),
         ]
     )
+    if not np.isfinite(coefficients).all():
+        raise InputError("the points are too steep or too far apart for a curve; check their size")
     origins = np.concatenate((places[:1], places))
     domain = (-math.inf if first else float(places[0]), math.inf if last else float(places[-1]))
     reach = [-math.inf if first else float(values[0]), math.inf if last else float(values[-1])]
@@ -137,6 +140,8 @@ def _solve(cubic: tuple[Array, Array, Array], wanted: Array, low: Array, high: A
     tolerance = _NEAR * high
     rise = ((c3 * high + c2) * high + c1) * high
     place = np.clip(high * wanted / rise, low, high)
+    # What has settled stays, so that a place does not depend on its neighbours in the array.
+    settled = np.zeros(np.shape(place), dtype=bool)
     for _ in range(_NEWTON_STEPS):
         miss = ((c3 * place + c2) * place + c1) * place - wanted
         below = miss * sign < 0
@@ -146,15 +151,16 @@ def _solve(cubic: tuple[Array, Array, Array], wanted: Array, low: Array, high: A
             step = place - miss / slope
         inside = (step > low) & (step < high)
         fresh = np.where(miss == 0, place, np.where(inside, step, (low + high) / 2))
-        done = np.abs(fresh - place) <= tolerance
-        place = fresh
-        if done.all():
+        near = np.abs(fresh - place) <= tolerance
+        place = np.where(settled, place, fresh)
+        settled |= near
+        if settled.all():
             break
     return np.asarray(place)
 
 
 def _check_ascending(places: Array) -> None:
-    for before, after in zip(places, places[1:], strict=False):
+    for before, after in pairwise(places):
         if not after > before:
             raise InputError(f"{after:g} follows {before:g}; the points must stand in ascending order")
 

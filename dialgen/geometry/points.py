@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
+from itertools import pairwise
 from typing import Annotated, ClassVar, Literal
 
 import numpy as np
@@ -91,7 +92,7 @@ class Observed:
                 if values and math.isinf(values[-1]):
                     raise InputError("a point at inf needs an ohms circuit with half beside it; add one")
                 return through(values, positions_deg)
-            if any(not b > a for a, b in zip(values, values[1:], strict=False)):
+            if any(not b > a for a, b in pairwise(values)):
                 raise InputError("the points must stand in ascending order of value; sort them")
             shares = [half / (half + value) for value in values]
             return _OhmsWise(through(shares[::-1], positions_deg[::-1]), half)
@@ -112,12 +113,13 @@ class _OhmsWise:
 
     @property
     def domain(self) -> Span:
-        return (max(0.0, self._value(self.inner.domain[1])), math.inf)
+        first, last = self.inner.domain
+        return (self._value(last), self._value(max(first, 0.0)))
 
     @property
     def image(self) -> Span:
         # Nothing stands beyond infinity.
-        limit = float(self.inner.forward(np.array(0.0))) if self.inner.domain[0] <= 0 else self.inner.image[0]
+        limit = float(self.inner.forward(np.array(max(self.inner.domain[0], 0.0))))
         falls = self.inner.values[-1] < self.inner.values[0]
         return (-math.inf, limit) if falls else (limit, math.inf)
 

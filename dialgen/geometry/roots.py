@@ -38,6 +38,9 @@ def _chandrupatla(miss: Callable[[Array], Array], low: Array, high: Array) -> Ar
     fc = fa
     share = np.full(np.shape(a), 0.5)
     eps = np.finfo(float).eps
+    # What has settled stays, so that a root does not depend on its neighbours in the array.
+    settled = np.zeros(np.shape(a), dtype=bool)
+    roots = np.zeros(np.shape(a))
     with np.errstate(divide="ignore", invalid="ignore"):
         for _ in range(_STEPS):
             fresh = a + share * (b - a)
@@ -49,11 +52,14 @@ def _chandrupatla(miss: Callable[[Array], Array], low: Array, high: Array) -> Ar
             best = np.where(np.abs(fa) < np.abs(fb), a, b)
             tolerance = 0.5 * (2 * eps * np.abs(best) + 5e-324)
             limit = tolerance / np.abs(b - a)
-            if ((limit > 0.5) | (fa == 0) | (fb == 0)).all():
+            near = (limit > 0.5) | (fa == 0) | (fb == 0)
+            roots = np.where(settled, roots, np.where(fa == 0, a, np.where(fb == 0, b, best)))
+            settled |= near
+            if settled.all():
                 break
             xi, phi = (a - b) / (c - b), (fa - fb) / (fc - fb)
             quadratic = (phi**2 < xi) & ((1 - phi) ** 2 < 1 - xi)
             inverse = fa / (fb - fa) * fc / (fb - fc) + (c - a) / (b - a) * fa / (fc - fa) * fb / (fc - fb)
             share = np.clip(np.where(quadratic & np.isfinite(inverse), inverse, 0.5), limit, 1 - limit)
             share = np.where(np.isfinite(share), share, 0.5)
-    return np.where(fa == 0, a, np.where(fb == 0, b, np.where(np.abs(fa) < np.abs(fb), a, b)))
+    return roots

@@ -282,7 +282,10 @@ def expected(drawing: Drawing) -> Iterator[Shape]:
                 for placed in item.glyphs:
                     turn = math.radians(-placed.angle_deg)
                     rotation = np.array([[math.cos(turn), math.sin(turn)], [-math.sin(turn), math.cos(turn)]])
-                    data = "".join(code + " ".join(map(repr, values)) for code, values in placed.glyph.path)
+                    data = "".join(
+                        code + " ".join(f"{value:.15f}" for value in values)
+                        for code, values in placed.glyph.path
+                    )
                     for contour in svg_path(data):
                         closed = np.vstack([contour, contour[:1]])
                         there = closed @ rotation * placed.size_mm + (placed.x, placed.y)

@@ -14,7 +14,6 @@ from render_samples import BLACK, CUT, FINE, HOOK, INK, ZONE, arcs, face, few, l
 
 from dialgen.drawing import Arc, Circle, Layer, Letters, Line, Outline, Placed, Purpose, Style, Vertex
 from dialgen.renderers import render
-from dialgen.renderers.curves import flattened
 
 
 def _dxf(drawing):
@@ -150,9 +149,3 @@ def test_library_switch_is_put_back_after_a_failure() -> None:
     with pytest.raises(AttributeError):
         _dxf(page("no primitive"))
     assert ezdxf.options.write_fixed_meta_data_for_testing is False
-
-
-def test_flattening_closes_contours_without_doubling_the_corner() -> None:
-    """A contour that returns to its start by itself has that corner once; a lone move is nothing."""
-    path = (("M", (0, 0)), ("L", (1, 0)), ("L", (1, 1)), ("L", (0, 0)), ("Z", ()), ("M", (5, 5)))
-    assert flattened(path, 0.1) == [[(0, 0), (1, 0), (1, 1)]]

@@ -96,13 +96,6 @@ def test_radius_is_true_to_a_tenth_of_a_micron_all_along(item) -> None:
     assert np.abs(radius - item.radius_mm).max() < 1e-4
 
 
-def test_large_radius_is_split_further() -> None:
-    """A flat arc of 2 m radius, as an edgewise meter's, is true as far as the file's digits go."""
-    arc = Arc((0.0, -2000.0), 2000.0, -2.0, 28.0, INK)
-    (figure,) = _back(page(arc))
-    assert np.abs(np.hypot(*(figure - arc.centre).T) - 2000.0).max() < 2e-3
-
-
 def test_face_comes_back_within_a_micron() -> None:
     """The whole face, letters turned in their places included, is true."""
     assert differences(_back(face()), face(), MICRON_MM) == []

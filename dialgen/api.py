@@ -161,8 +161,8 @@ def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
             temporary, path = waiting[0]
             os.replace(temporary, path)
             waiting.pop(0)
-    except OSError as error:
-        reason = error.strerror or str(error)
+    except (OSError, ValueError) as error:
+        reason = getattr(error, "strerror", None) or str(error)
         raise OutputError(
             f"{path}: cannot be written: {reason}; give a path in a folder you may write to"
         ) from None

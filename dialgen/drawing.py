@@ -126,6 +126,10 @@ class Glyph:
     path: tuple[PathStep, ...]
     box: tuple[float, float, float, float]
 
+    def __hash__(self) -> int:
+        """Hash the name alone, so that a renderer can keep what it made of a letter."""
+        return hash(self.name)
+
 
 @dataclass(frozen=True, slots=True)
 class Placed:

@@ -1,8 +1,8 @@
 """Values with units, in and out: the only place where text becomes a number.
 
 Electrical values come as text with a unit ("50 uA", "75 Ω", "4k7"), so that nobody has to guess
-what a bare 50 meant.  The number and its SI prefix are read by quantiphy; what it would take
-without complaint although it is wrong ("1,5 V" as 15 V, "4k7" as 4 of unit k7) is handled here.
+what a bare 50 meant.  Everything is read by hand and to the letter: the libraries probed for it
+take "1,5 V" for 15 V and "4k7" for 4 of unit k7 without complaint.
 """
 
 from __future__ import annotations
@@ -17,6 +17,8 @@ PREFIXES = {
     "k": 1e3, "M": 1e6, "G": 1e9, "T": 1e12,
 }  # fmt: skip
 """SI prefixes in use on meters; SI Brochure, table 7."""
+
+_POWERS = {"": 0} | {prefix: round(math.log10(factor)) for prefix, factor in PREFIXES.items()}
 
 PREFIXED_UNITS = ("VA", "var", "Hz", "A", "V", "W", "Ω", "F", "S")
 """The face units before which a prefix is read; every other unit text is taken whole."""
@@ -86,7 +88,7 @@ class Measure:
             raise ValueError(f"{shown(text)} is not a {self.name}; {self._example()}")
         prefix, unit = _split_prefix(plain[number.end() :].strip(), self.units)
         if unit not in self.units:
-            raise ValueError(f"{shown(text)} {self._wrong_unit(prefix + unit)}; {self._example()}")
+            raise ValueError(f"{shown(text)} {self._wrong_unit(number[0], unit)}")
         value = _scaled(number[0], prefix)
         if abs(value) > _LARGEST or (abs(value) < _SMALLEST and not _is_zero(number[0])):
             raise ValueError(f"{shown(text)} is beyond anything a meter has; {self._example()}")
@@ -105,12 +107,15 @@ class Measure:
         example = f"{shown(given)} {self.example.split()[1]}"
         return f'a {self.name} needs its unit, {shown(given)} has none; write for example "{example}"'
 
-    def _wrong_unit(self, written: str) -> str:
+    def _wrong_unit(self, number: str, written: str) -> str:
         if not written:
-            return "has no unit"
-        meant = any(written.casefold().endswith(unit.casefold()) for unit in self.units)
-        units = " or ".join(self.units)
-        return f"is not in {units}" + (", where capital and small letters count" if meant else "")
+            return f"has no unit; {self._example()}"
+        wrong = f"is not in {' or '.join(self.units)}"
+        for unit in self.units:
+            meant = written[: -len(unit)] + unit
+            if meant.casefold() == written.casefold() and _split_prefix(meant, self.units)[1] == unit:
+                return f'{wrong}, capitals count; did you mean "{number} {meant}"?'
+        return f"{wrong}; {self._example()}"
 
 
 AMPERE = Measure("current", ("A",), "1 mA", above=0.0)
@@ -247,11 +252,9 @@ def _split_prefix(written: str, units: tuple[str, ...]) -> tuple[str, str]:
 
 
 def _scaled(number: str, prefix: str) -> float:
-    # quantiphy moves the decimal point instead of multiplying, so "50 uA" is the double nearest
-    # 5e-5.  Text that it would misread is refused before.
-    from quantiphy import Quantity
-
-    return float(Quantity(f"{number} {prefix}V").real)
+    # The decimal point is moved instead of multiplying, so "50 uA" is the double nearest 5e-5.
+    mantissa, _, exponent = number.lower().partition("e")
+    return float(f"{mantissa}e{int(exponent or 0) + _POWERS[prefix]}")
 
 
 def _is_zero(number: str) -> bool:
@@ -277,7 +280,6 @@ def _comma_mend(plain: str) -> str:
 
 
 def _written_length(text: str, name: str) -> float:
-    # Not through quantiphy: it reads the m of "0.7 m" as milli.
     plain = text.translate(_SAME).strip()
     if "," in plain and len(plain) <= _LONGEST:
         raise ValueError(f"{shown(text)} has a comma; {_comma_mend(plain)}")

@@ -6,6 +6,9 @@ for, so that ``dialgen --help`` waits for nothing heavy.
 
 from __future__ import annotations
 
+import difflib
+import gc
+import os
 import sys
 from importlib import import_module
 
@@ -44,6 +47,15 @@ class Commands(click.Group):
         command: click.Command = import_module(f"dialgen.cli.{cmd_name}").command
         return command
 
+    def resolve_command(
+        self, ctx: click.Context, args: list[str]
+    ) -> tuple[str | None, click.Command | None, list[str]]:
+        """Return the command that ``args`` begin with, or refuse with the nearest name."""
+        near = difflib.get_close_matches(args[0], _COMMANDS, n=1)
+        if near and args[0] not in _COMMANDS:
+            ctx.fail(f"no such command '{args[0]}', did you mean {near[0]}?")
+        return super().resolve_command(ctx, args)
+
     def format_commands(self, ctx: click.Context, formatter: click.HelpFormatter) -> None:
         """Write the commands with their line each, without importing them."""
         with formatter.section("Commands"):
@@ -54,16 +66,24 @@ class Commands(click.Group):
     cls=Commands,
     context_settings={"help_option_names": ["-h", "--help"], "max_content_width": 100},
     epilog=_EPILOG,
+    invoke_without_command=True,
 )
 @click.version_option(__version__, prog_name="dialgen")
-def program() -> None:
+@click.pass_context
+def program(ctx: click.Context) -> None:
     """Make true-size, printable scale plates for analogue meters from a plain dial file."""
+    if ctx.invoked_subcommand is None:
+        click.echo(ctx.get_help())
 
 
 def main() -> None:
     """Run the program; exit 0 done, 1 the instrument falls short, 2 the input is wrong."""
     from dialgen.cli.report import guarded
 
+    # A command lives a moment: pydantic need not search the machine for plugins, nor the collector
+    # walk over what start-up has just made.
+    os.environ.setdefault("PYDANTIC_DISABLE_PLUGINS", "1")
+    gc.set_threshold(50_000)
     for stream in (sys.stdout, sys.stderr):
         # A value such as −5 or Ω must come out on any terminal, if need be as a question mark.
         if hasattr(stream, "reconfigure"):

@@ -52,7 +52,7 @@ def readings_key(owner: Key, table: object) -> Key:
 
 
 def _item(key: Key, index: int) -> Key:
-    return (*key, index) if key[-1] == "reading" else key
+    return (*key, index)
 
 
 def _nominal(movement: Movement, reading: Reading, by_drive: NominalAngle, by_value: NominalAngle) -> float:

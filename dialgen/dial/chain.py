@@ -106,12 +106,17 @@ class Chain:
 
     @quietly
     def _forward(self, value: Array, count: int) -> Array:
-        step = value
+        step, size = value, 0.0
         for link in self.links[:count]:
-            domain = link.stage.domain
-            if domain is not EVERYWHERE and not _within(step, domain):
-                self._refuse(value, ~((step >= domain[0]) & (step <= domain[1])))
-            step = link.stage.forward(step)
+            low, high = link.stage.domain
+            if link.stage.domain is not EVERYWHERE and not _within(step, (low, high)):
+                # A hair beyond the domain is the rounding of the links before, as a drive of -1e-17.
+                hair = _GRAIN * size
+                outside = ~((step >= low - hair) & (step <= high + hair))
+                if outside.any():
+                    self._refuse(value, outside)
+                step = np.clip(step, low, high)
+            step, size = link.stage.forward(step), link.size
         if np.isfinite(step).all():
             return step
         self._refuse(value, ~np.isfinite(step))

@@ -10,6 +10,7 @@ from __future__ import annotations
 import difflib
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from functools import cache
+from pathlib import Path
 from typing import Annotated, Any, Self, TypeVar
 
 from pydantic import (
@@ -25,6 +26,15 @@ from pydantic import (
 from dialgen.errors import InputError, Key
 
 _LONGEST_KEY = 40
+_TELLING = 3
+_OTHER_NAMES = {
+    "type": ("kind",), "model": ("kind",), "colour": ("ink",), "color": ("colour", "ink"),
+    "center": ("centre",), "width": ("size",), "height": ("size",), "min": ("from",), "max": ("to",),
+    "start": ("from",), "end": ("to",), "step": ("every",), "text": ("say",), "label": ("say",),
+    "position": ("at",), "zero": ("rest",), "length": ("pointer",), "arc": ("radius",),
+}  # fmt: skip
+MOST_GUESSED = 200
+"""Of how many unknown keys in one table it is guessed what they were meant to be."""
 
 Check = TypeVar("Check", bound=Callable[[Any], Iterator[InputError]])
 
@@ -66,17 +76,23 @@ def needs(*names: str) -> Callable[[Check], Check]:
 class Table(BaseModel):
     """A table of the dial file: frozen, no key that is not listed, checked across its keys."""
 
-    model_config = ConfigDict(extra="forbid", frozen=True, arbitrary_types_allowed=True)
+    model_config = ConfigDict(
+        extra="forbid",
+        frozen=True,
+        arbitrary_types_allowed=True,
+        # Only the whole file and the tables a file uses are ever built: half the start-up.
+        defer_build=True,
+    )
 
     @model_validator(mode="wrap")
     @classmethod
-    def _whole(cls, given: Any, handler: ModelWrapValidatorHandler[Self], info: ValidationInfo) -> Self:
+    def _whole(cls, given: object, handler: ModelWrapValidatorHandler[Self], info: ValidationInfo) -> Self:
         wrong: ValidationError | None = None
         unsound: set[str] = set()
         try:
             made = handler(given)
         except ValidationError as error:
-            if not isinstance(given, dict):
+            if not (isinstance(given, dict) and _checks(cls)):
                 raise
             wrong, unsound = error, set(_unsound(cls, error))
             made = _sound_part(cls, given, unsound, info.context)
@@ -89,7 +105,7 @@ class Table(BaseModel):
 AnyTable = TypeVar("AnyTable", bound=BaseModel)
 
 
-def checked(model: type[AnyTable], given: Any, *prefix: str | int) -> AnyTable:
+def checked(model: type[AnyTable], given: object, *prefix: str | int) -> AnyTable:
     """Return ``given`` as a model.
 
     Raises:
@@ -106,14 +122,32 @@ def at_item(index: int, error: ValueError) -> InputError:
     return error.under(index) if isinstance(error, InputError) else InputError(str(error), (index,))
 
 
-def nearest_key(key: object, known: Iterable[str]) -> str | None:
+def folder_of(info: ValidationInfo) -> Path:
+    """Return the folder of the dial file that is being read, where its CSV files lie."""
+    folder = (info.context or {}).get("folder", Path())
+    return Path(folder)
+
+
+def nearest_key(key: str, known: Iterable[str]) -> str | None:
     """Return the known key that ``key`` was most likely meant to be, or None.
 
-    >>> nearest_key("radios", ["radius", "line"])
-    'radius'
+    >>> nearest_key("radios", ["radius", "line"]), nearest_key("type", ["kind", "range"])
+    ('radius', 'kind')
     """
-    close = difflib.get_close_matches(str(key)[:_LONGEST_KEY].lower(), known, n=1, cutoff=0.6)
+    known = list(known)
+    if (same := same_key(key, known)) or (same := _begun(key, known)):
+        return same
+    close = difflib.get_close_matches(key[:_LONGEST_KEY].lower(), known, n=1, cutoff=0.6)
     return close[0] if close else None
+
+
+def same_key(key: str, known: Iterable[str]) -> str | None:
+    """Return the known key that goes by the name ``key`` elsewhere, or None."""
+    return next((name for name in _OTHER_NAMES.get(key.lower(), ()) if name in known), None)
+
+
+def _begun(key: str, known: Iterable[str]) -> str | None:
+    return next((name for name in known if name.startswith(key) and len(key) >= _TELLING), None)
 
 
 def keys_of(model: type[BaseModel]) -> dict[str, str]:
@@ -130,14 +164,14 @@ def _checks(table: type[Table]) -> tuple[Any, ...]:
 def _unsound(table: type[Table], error: ValidationError) -> Iterator[str]:
     """Yield the fields that are wrong, and those that a misspelt key was meant for."""
     keys = keys_of(table)
-    for item in error.errors(include_url=False, include_input=False, include_context=False):
-        key = item["loc"][0] if item["loc"] else ""
-        near = key if key in keys else nearest_key(key, keys)
-        if near is not None:
-            yield keys[str(near)]
+    items = error.errors(include_url=False, include_input=False, include_context=False)
+    found = [str(item["loc"][0]) for item in items if item["loc"]]
+    yield from (keys[key] for key in found if key in keys)
+    unknown = [key for key in found if key not in keys]
+    yield from (keys[near] for key in unknown[:MOST_GUESSED] if (near := nearest_key(key, keys)))
 
 
-def _sound_part(table: type[AnyTable], given: dict[str, Any], unsound: set[str], context: Any) -> AnyTable:
+def _sound_part(table: type[AnyTable], given: dict[str, Any], unsound: set[str], context: object) -> AnyTable:
     """Return the table without its unsound fields; these are not there at all."""
     found = {}
     for key, name in keys_of(table).items():
@@ -154,4 +188,5 @@ def _sound_part(table: type[AnyTable], given: dict[str, Any], unsound: set[str],
 @cache
 def _reader(table: type[BaseModel], name: str) -> TypeAdapter[Any]:
     field = table.model_fields[name]
-    return TypeAdapter(Annotated[field.annotation, *field.metadata, "one field"])
+    note: Any = Annotated[field.annotation, *field.metadata, "one field"]
+    return TypeAdapter(note)

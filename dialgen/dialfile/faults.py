@@ -11,11 +11,9 @@ from pydantic import BaseModel, ValidationError
 from pydantic_core import ErrorDetails
 
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.dialfile.base import Flaws, keys_of, nearest_key
+from dialgen.dialfile.base import MOST_GUESSED, Flaws, keys_of, nearest_key, same_key
 from dialgen.errors import DialFileError, Fault, InputError, Key
 from dialgen.quantity import shown
-
-_MOST_SUGGESTED = 200
 
 Complaint = tuple[Key, str]
 
@@ -39,7 +37,8 @@ def complaints(error: ValueError, model: type[BaseModel], root: type[BaseModel])
         key, kind = tuple(item["loc"]), item["type"]
         cause = item.get("ctx", {}).get("error")
         if isinstance(cause, Flaws):
-            yield from _of_flaws(cause, (*key, *cause.prefix), root)
+            for inner, message in of_flaws(cause, root):
+                yield (*key, *inner), message
         elif isinstance(cause, InputError):
             yield (*key, *(cause.keys[0] if cause.keys else ())), cause.message
         elif cause is not None and not isinstance(cause, DialFileError):
@@ -64,7 +63,9 @@ def foreign_faults(error: ValidationError) -> Iterator[Fault]:
             yield from foreign_faults(cause.wrong)
 
 
-def _of_flaws(flaws: Flaws, at: Key, root: type[BaseModel]) -> Iterator[Complaint]:
+def of_flaws(flaws: Flaws, root: type[BaseModel]) -> Iterator[Complaint]:
+    """Yield the key and message of everything wrong with one table; see `complaints`."""
+    at = flaws.prefix
     if flaws.wrong:
         for key, message in complaints(flaws.wrong, flaws.model, root):
             yield (*at, *key), message
@@ -76,20 +77,22 @@ def _meant(items: list[ErrorDetails], model: type[BaseModel], root: type[BaseMod
     """Return for each unknown key the known one beside it that was most likely meant."""
     unknown = [tuple(item["loc"]) for item in items if item["type"] == "extra_forbidden"]
     found: dict[Key, Key] = {}
-    for key in unknown[:_MOST_SUGGESTED]:
-        near = nearest_key(key[-1], _known(model, key[:-1]))
-        if near is not None and key[-1] not in _homes(root):
+    for key in unknown[:MOST_GUESSED]:
+        name, known = str(key[-1]), _known(model, key[:-1])
+        near = same_key(name, known) if name in _homes(root) else nearest_key(name, known)
+        if near is not None:
             found[key] = (*key[:-1], near)
     return found
 
 
-def _message(kind: str, key: Key, given: Any, context: dict[str, Any], model: type[BaseModel]) -> str:
+def _message(kind: str, key: Key, given: object, context: dict[str, Any], model: type[BaseModel]) -> str:
     if kind == "missing":
         return f"missing; add {_example(model, key)}"
     if kind in ("model_type", "model_attributes_type", "dict_type"):
-        return f"this is a table of keys, not {shown(given)}; write it as [{_dotted(key)}] with its keys below"
+        return f"this is a table of keys, not {shown(given)}; write its keys below [...], or in braces"
     if kind in ("tuple_type", "list_type"):
-        return f"this is a list of tables, not {shown(given)}; begin each with [[{_dotted(key)}]]"
+        mend = f"begin each with [[{key[-1]}]]" if key[-1] in ("scale", "text") else "write [{ ... }]"
+        return f"there may be several of these, in a list, and this is {shown(given)}; {mend}"
     if kind == "too_short":
         return f"none given; add {_example(model, key)}"
     if kind == "too_long":
@@ -97,15 +100,11 @@ def _message(kind: str, key: Key, given: Any, context: dict[str, Any], model: ty
     return f"{kind.replace('_', ' ')}: {shown(given)}; see the description of the dial file"
 
 
-def _dotted(key: Key) -> str:
-    return ".".join(part for part in key if isinstance(part, str))
-
-
 def _suggestion(key: Key, meant: Key | None, model: type[BaseModel], root: type[BaseModel]) -> str:
-    if homes := _homes(root).get(str(key[-1])):
-        return f"it belongs in {' or '.join(homes)}"
     if meant is not None:
         return f"did you mean {meant[-1]}?"
+    if homes := _homes(root).get(str(key[-1])):
+        return f"it belongs in {' or '.join(homes)}"
     return f"the keys are {', '.join(_known(model, key[:-1]))}"
 
 
@@ -146,7 +145,7 @@ def _model_at(model: type[BaseModel], key: Key) -> type[BaseModel] | None:
     return here
 
 
-def _first_model(annotation: Any) -> type[BaseModel] | None:
+def _first_model(annotation: object) -> type[BaseModel] | None:
     if isinstance(annotation, type) and issubclass(annotation, BaseModel):
         return annotation
     return next((m for a in get_args(annotation) if (m := _first_model(a))), None)

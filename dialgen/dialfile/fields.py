@@ -32,14 +32,17 @@ from dialgen.quantity import (
     shown_unit,
 )
 
-_MOST_POINTS = 2000
+_MOST_POINTS = 5000
 _LONGEST_TEXT = 200
 _LARGEST_VALUE = 1e15
 _SMALLEST_VALUE = 1e-15
 MOST = 1e6
 """The largest pure number that a key may hold."""
 
-Reader = Callable[[Any], Any]
+Value = Any
+"""What a reader gives: of the type that its field says."""
+
+Reader = Callable[[Any], Value]
 
 
 def number(name: str, least: float = -math.inf, most: float = math.inf) -> Reader:
@@ -74,7 +77,7 @@ def angle(given: object) -> float:
         raise ValueError(
             f"an angle is a bare number of degrees, not {shown(given)}; leave out quotes and unit"
         )
-    return number("an angle", -360.0, 360.0)(given)
+    return float(number("an angle", -360.0, 360.0)(given))
 
 
 def length(given: object) -> float:
@@ -178,7 +181,7 @@ def _point(index: int, given: object, first: Reader, second: Reader, example: st
     return _at(index, first, given[0]), _at(index, second, given[1])
 
 
-def _at(index: int, read: Reader, given: object) -> Any:
+def _at(index: int, read: Reader, given: object) -> Value:
     try:
         return read(given)
     except ValueError as error:
@@ -195,6 +198,17 @@ def one_of(*words: str) -> Reader:
         return given
 
     return read
+
+
+def at_most(most: int) -> Reader:
+    """Return a check of how long a list of tables is, before any of them is looked at."""
+
+    def check(given: object) -> object:
+        if isinstance(given, list) and len(given) > most:
+            raise ValueError(f"{len(given)} of them; give at most {most}")
+        return given
+
+    return check
 
 
 def true_or_false(given: object) -> bool:

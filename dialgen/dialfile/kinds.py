@@ -14,7 +14,7 @@ from dialgen.errors import InputError
 from dialgen.quantity import shown
 
 
-def read_kind(given: object, table: dict[str, type], noun: str) -> Any:
+def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
     """Return the law or circuit that ``given`` names: its kind alone, or a table with its keys.
 
     Raises:
@@ -24,9 +24,8 @@ def read_kind(given: object, table: dict[str, type], noun: str) -> Any:
     if isinstance(given, str):
         given = {"kind": given}
     if not isinstance(given, dict):
-        raise InputError(
-            f'a {noun} is a name or a table, not {shown(given)}; write for example {noun} = "{next(iter(table))}"'
-        )
+        example = f'{noun} = "{next(iter(table))}"'
+        raise InputError(f"a {noun} is a name or a table, not {shown(given)}; write for example {example}")
     kind = given.get("kind")
     if not isinstance(kind, str) or kind not in table:
         raise InputError(_no_such_kind(kind, table, noun), ("kind",))
@@ -42,11 +41,13 @@ def read_kind(given: object, table: dict[str, type], noun: str) -> Any:
 def model_of(kind: type) -> type[BaseModel]:
     """Return the pydantic model with the fields of a law or circuit; unknown keys are refused."""
     hints = get_type_hints(kind, include_extras=True)
-    made: dict[str, Any] = {f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)}
+    made: dict[str, Any] = {
+        f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)
+    }
     return create_model(kind.__name__, __config__=ConfigDict(extra="forbid", frozen=True), **made)
 
 
-def _made(kind: type, keys: BaseModel) -> Any:
+def _made(kind: type, keys: BaseModel) -> fields.Value:
     return kind(**{name: getattr(keys, name) for name in keys.model_fields_set})
 
 
@@ -70,11 +71,11 @@ def _no_such_kind(kind: object, table: dict[str, type], noun: str) -> str:
     return f"{shown(kind)} is not a kind of {noun}; {mend}"
 
 
-def _field(name: str, hint: Any) -> Any:
+def _field(name: str, hint: object) -> fields.Value:
     return Annotated[Any, PlainValidator(_reader(name, hint))]
 
 
-def _reader(name: str, hint: Any) -> fields.Reader:
+def _reader(name: str, hint: object) -> fields.Reader:
     if get_origin(hint) is Annotated:
         return fields.reader_for(get_args(hint)[1])
     if get_origin(hint) is Literal:
@@ -82,7 +83,7 @@ def _reader(name: str, hint: Any) -> fields.Reader:
     return fields.formula_text if hint is str else fields.number(name, -fields.MOST, fields.MOST)
 
 
-def _default(field: dataclasses.Field[Any]) -> Any:
+def _default(field: dataclasses.Field[Any]) -> fields.Value:
     if field.default is not dataclasses.MISSING:
         return Field(default=field.default)
     return Field(description=f"{field.name} = ...")

@@ -6,7 +6,9 @@ tree once and notes the place of every key, table and list item.
 
 from __future__ import annotations
 
+from bisect import bisect_left
 from collections.abc import Iterator
+from itertools import accumulate
 from typing import TYPE_CHECKING
 
 from dialgen.errors import Key
@@ -18,26 +20,26 @@ Place = tuple[int, int]
 """Line and column, both from 1; columns in characters."""
 
 _KEYS = ("bare_key", "quoted_key", "dotted_key")
-_VALUES = ("array", "inline_table")
+_DEEPEST = 12
+"""No key of a dial file is as deep; what lies deeper is found by the table around it."""
 
 
 def key_places(text: str) -> dict[Key, Place]:
-    """Return the place of every key in a TOML text that tomllib has already accepted.
+    r"""Return the place of every key in a TOML text that tomllib has already accepted.
 
-    >>> key_places('dialgen = 1\\n[plate]\\nsize = [84, 64]\\n')[("plate", "size")]
+    >>> key_places('dialgen = 1\n[plate]\nsize = [84, 64]\n')[("plate", "size")]
     (3, 1)
     """
     import tree_sitter_toml
     from tree_sitter import Language, Parser
 
     root = Parser(Language(tree_sitter_toml.language())).parse(text.encode()).root_node
-    found: dict[Key, Place] = {}
+    found: dict[Key, tuple[int, int]] = {}
     counts: dict[Key, int] = {}
-    lines = text.split("\n")
     for node in root.children:
         for key, at in _statement(node, counts):
-            found.setdefault(key, _place(at, lines))
-    return found
+            found.setdefault(key, (at.start_point.row, at.start_point.column))
+    return _in_characters(found, text)
 
 
 def nearest(places: dict[Key, Place], key: Key) -> Place:
@@ -83,6 +85,8 @@ def _pair(node: Node, prefix: Key) -> Iterator[tuple[Key, Node]]:
 
 
 def _inside(value: Node, key: Key) -> Iterator[tuple[Key, Node]]:
+    if len(key) > _DEEPEST:
+        return
     if value.type == "inline_table":
         for child in value.children:
             if child.type == "pair":
@@ -101,7 +105,17 @@ def _parts(head: Node) -> tuple[str, ...]:
     return (text[1:-1] if head.type == "quoted_key" else text,)
 
 
-def _place(node: Node, lines: list[str]) -> Place:
-    row, byte = node.start_point
-    before = lines[row].encode()[:byte] if row < len(lines) else b""
-    return row + 1, len(before.decode(errors="replace")) + 1
+def _in_characters(found: dict[Key, tuple[int, int]], text: str) -> dict[Key, Place]:
+    """Return rows and byte columns from 0 as lines and columns in characters from 1."""
+    lines = text.split("\n")
+    starts: dict[int, list[int]] = {}
+    places: dict[Key, Place] = {}
+    for key, (row, byte) in found.items():
+        line = lines[row] if row < len(lines) else ""
+        if not line.isascii():
+            if row not in starts:
+                starts[row] = list(accumulate((len(c.encode()) for c in line), initial=0))
+            places[key] = row + 1, bisect_left(starts[row], byte) + 1
+        else:
+            places[key] = row + 1, byte + 1
+    return places

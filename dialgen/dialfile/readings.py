@@ -7,15 +7,17 @@ from collections.abc import Callable, Iterator
 from pathlib import Path
 from typing import Annotated, Any
 
-from pydantic import PlainValidator, PrivateAttr
+from pydantic import PlainValidator, PrivateAttr, ValidationInfo
 
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Flaws, Table, checked, needs
-from dialgen.dialfile.faults import complaints
+from dialgen.dialfile.base import Flaws, Table, checked, folder_of, needs
+from dialgen.dialfile.faults import of_flaws
 from dialgen.dialfile.fields import Angle, AppliedA, AppliedV, FaceValue
 from dialgen.dialfile.sheets import Cell, Sheet, read_sheet
 from dialgen.errors import DialFileError, Fault, InputError
+from dialgen.quantity import shown
 
+MOST_READINGS = 500
 _APPLIED = ("current", "voltage", "value")
 _SEEN = ("angle", "old")
 _BARE = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?")
@@ -60,14 +62,16 @@ class ScaleReading(Reading):
     def _by_value(self) -> Iterator[InputError]:
         for name in ("current", "voltage"):
             if self.value is None and getattr(self, name) is not None:
-                yield InputError(f"a scale's readings are values on it; write value instead of {name}", (name,))
+                yield InputError(
+                    f"a scale's readings are values on it; write value instead of {name}", (name,)
+                )
 
 
-def readings_file(model: type[Reading]) -> Callable[[object, Any], tuple[Reading, ...]]:
+def readings_file(model: type[Reading]) -> Callable[[object, ValidationInfo], tuple[Reading, ...]]:
     """Return a reader of a CSV file's name that gives the readings in it."""
 
-    def read(given: object, info: Any) -> tuple[Reading, ...]:
-        sheet = read_sheet(info.context["folder"] / fields.text(given), (*_APPLIED, *_SEEN, "direction"))
+    def read(given: object, info: ValidationInfo) -> tuple[Reading, ...]:
+        sheet = read_sheet(folder_of(info) / fields.text(given), (*_APPLIED, *_SEEN, "direction"))
         found: list[Reading] = []
         faults: list[Fault] = []
         for row in sheet.rows:
@@ -84,37 +88,40 @@ def readings_file(model: type[Reading]) -> Callable[[object, Any], tuple[Reading
     return read
 
 
-def table_from_file(given: dict[str, Any], folder: Path) -> dict[str, Any]:
-    """Return a table law's keys with the points of its CSV file (columns value, signal) in them.
+def points_from_file(given: object, folder: Path) -> tuple[list[list[Any]], Sheet]:
+    """Return the points in a CSV file (columns value, signal) that ``given`` names, and the sheet.
 
     Raises:
-        InputError: there are points already, or the file cannot be opened.
+        ValueError: it cannot be opened.
         DialFileError: what the file holds is wrong.
     """
-    if "points" in given:
-        raise InputError("points stand in the dial file and in a CSV; keep one of the two", ("file",))
-    try:
-        path = folder / fields.text(given["file"])
-        sheet = read_sheet(path, ("value", "signal"), needed=("value", "signal"))
-    except DialFileError:
-        raise
-    except ValueError as error:
-        raise InputError(str(error), ("file",)) from None
-    points = [[_number(sheet, row, "value"), _signal(sheet, row)] for row in sheet.rows]
-    _check_ascending(sheet, points)
-    return {**{k: v for k, v in given.items() if k != "file"}, "points": points}
+    columns = ("value", "signal")
+    sheet = read_sheet(folder / fields.text(given), columns, needed=columns)
+    values = [_number(sheet, row, "value") for row in sheet.rows]
+    points = [[value, _signal(sheet, row)] for value, row in zip(values, sheet.rows, strict=True)]
+    if len(points) < 2:
+        raise sheet.fault(sheet.heads[0], "", f"rows with points: {len(points)}; give at least two")
+    for before, here, row in zip(values, values[1:], sheet.rows[1:], strict=False):
+        if not here > before:
+            raise sheet.fault(
+                row["value"], "value", f"{here:g} follows {before:g}; put the rows in ascending order"
+            )
+    return points, sheet
 
 
 def _reading(sheet: Sheet, row: dict[str, Cell], model: type[Reading]) -> Reading:
     first = _first(row)
-    words = {name: row[name].text for name in ("current", "voltage", "direction") if name in row}
-    numbers = {name: _number(sheet, row, name) for name in ("value", *_SEEN) if name in row}
+    words: dict[str, object] = {
+        name: row[name].text for name in ("current", "voltage", "direction") if name in row
+    }
+    numbers: dict[str, object] = {
+        name: _number(sheet, row, name) for name in ("value", *_SEEN) if name in row
+    }
     try:
-        made = checked(model, {**words, **numbers})
+        made = checked(model, words | numbers)
     except Flaws as flaws:
-        assert flaws.wrong is not None
         faults: list[Fault] = []
-        for key, message in complaints(flaws.wrong, model, model):
+        for key, message in of_flaws(flaws, model):
             name = str(key[0]) if key else ""
             faults += sheet.fault(row.get(name, first), name, message).faults
         raise DialFileError(faults) from None
@@ -126,13 +133,19 @@ def _number(sheet: Sheet, row: dict[str, Cell], name: str) -> float:
     cell = _cell(sheet, row, name)
     plain = cell.text.replace("\u2212", "-")
     if not _BARE.fullmatch(plain):
-        raise sheet.fault(cell, name, f'"{cell.text[:40]}" is not a bare number; write one, with a point')
+        raise sheet.fault(cell, name, f"{shown(cell.text)} is not a bare number; write one, with a point")
     return float(plain)
 
 
 def _signal(sheet: Sheet, row: dict[str, Cell]) -> float | str:
-    plain = _cell(sheet, row, "signal").text.replace("\u2212", "-")
-    return float(plain) if _BARE.fullmatch(plain) else plain
+    cell = _cell(sheet, row, "signal")
+    plain = cell.text.replace("\u2212", "-")
+    given = float(plain) if _BARE.fullmatch(plain) else plain
+    try:
+        fields.signal(given)
+    except ValueError as error:
+        raise sheet.fault(cell, "signal", str(error)) from None
+    return given
 
 
 def _cell(sheet: Sheet, row: dict[str, Cell], name: str) -> Cell:
@@ -143,11 +156,3 @@ def _cell(sheet: Sheet, row: dict[str, Cell], name: str) -> Cell:
 
 def _first(row: dict[str, Cell]) -> Cell:
     return next(iter(row.values()), Cell(""))
-
-
-def _check_ascending(sheet: Sheet, points: list[list[Any]]) -> None:
-    for before, here, row in zip(points, points[1:], sheet.rows[1:], strict=False):
-        if not here[0] > before[0]:
-            raise sheet.fault(
-                row["value"], "value", f"{here[0]:g} follows {before[0]:g}; put the rows in ascending order"
-            )

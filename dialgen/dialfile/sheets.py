@@ -50,7 +50,7 @@ def read_sheet(path: Path, columns: tuple[str, ...], needed: tuple[str, ...] = (
     lines = [
         _cells(line, number, sheet)
         for number, line in enumerate(read_text(path, str(path)).replace("\r", "\n").split("\n"), 1)
-        if line.strip() and not line.lstrip().startswith("#")
+        if line.strip(", \t") and not line.lstrip().startswith("#")
     ]
     if not lines:
         raise sheet.fault(Cell(""), "", "no columns; the first line names them, such as current,angle")
@@ -99,7 +99,9 @@ def _cells(line: str, number: int, sheet: Sheet) -> list[Cell]:
     except csv.Error:
         texts = [""] * (_MOST_COLUMNS + 1)
     if len(texts) > _MOST_COLUMNS:
-        raise sheet.fault(Cell("", number), "", "not a line of a CSV file; write a few cells parted by commas")
+        raise sheet.fault(
+            Cell("", number), "", "not a line of a CSV file; write a few cells parted by commas"
+        )
     found, column = [], 1
     for text in texts:
         lead = len(text) - len(text.lstrip())

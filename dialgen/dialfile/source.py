@@ -2,35 +2,47 @@
 
 from __future__ import annotations
 
+import re
 import tomllib
-from collections.abc import Iterable
-from dataclasses import dataclass
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass, field
 from functools import cached_property
 from pathlib import Path
 from typing import Any
 
-from dialgen.dialfile.places import Place, key_places, nearest
+from dialgen.dialfile.places import key_places, nearest
+from dialgen.dialfile.syntax import plain_words
 from dialgen.errors import DialFileError, Fault, InputError, Key
 
-LARGEST_BYTES = 256 * 1024
+LARGEST_BYTES = 128 * 1024
+_LONGEST_KEY = 80
+_WORD = r"""(?:[\w-]++|"[^"\n]*+"|'[^'\n]*+')"""
+# tomllib takes a time that grows with the square of a dotted key's parts.
+_DEEP_KEY = re.compile(rf"""(?<![\w"'.-])(?:{_WORD}[ \t]*+\.[ \t]*+){{20}}""")
+_LONG_NUMBER = re.compile("[0-9_]{4000}")
 
 
 @dataclass(frozen=True)
 class Source:
-    """The text of a dial file, under the name the user gave it."""
+    """The text of a dial file, under the name the user gave it.
+
+    ``elsewhere`` tells file, line and column of keys that stand in another file, such as the
+    readings of a CSV.
+    """
 
     name: str
     folder: Path
     text: str
+    elsewhere: Mapping[Key, tuple[str, int, int]] = field(default_factory=dict)
 
     @cached_property
-    def _places(self) -> dict[Key, Place]:
+    def _places(self) -> dict[Key, tuple[int, int]]:
         return key_places(self.text)
 
     def fault(self, key: Key, message: str) -> Fault:
         """Return a fault at the place of ``key``, or of the nearest table around it."""
-        line, column = nearest(self._places, key)
-        return Fault(file=self.name, line=line, column=column, key=shown_key(key), message=message)
+        file, line, column = self.elsewhere.get(key) or (self.name, *nearest(self._places, key))
+        return Fault(file=file, line=line, column=column, key=shown_key(key), message=message)
 
     def fault_of(self, error: InputError) -> Fault:
         """Return the fault that an error from below stands for; its first key is the one to change."""
@@ -51,63 +63,55 @@ def shown_key(key: Key) -> str:
     text = ""
     for part in key:
         text += f"[{part + 1}]" if isinstance(part, int) else f".{part}" if text else part
-    return text if len(text) <= 80 else text[:77] + "..."
+    return text if len(text) <= _LONGEST_KEY else text[: _LONGEST_KEY - 3] + "..."
 
 
 def read_text(path: Path, shown: str) -> str:
     """Return the text of a small UTF-8 file, with plain line ends.
 
     Raises:
-        DialFileError: it cannot be opened, is too large, or is not UTF-8.
+        ValueError: it cannot be opened.
+        DialFileError: it is too large, or not UTF-8.
     """
     try:
         with path.open("rb") as file:
             raw = file.read(LARGEST_BYTES + 1)
     except (OSError, ValueError) as error:
         reason = error.strerror if isinstance(error, OSError) and error.strerror else "not a file name"
-        raise _whole_file(shown, f"cannot be read: {reason}; give the path of a file") from None
+        raise ValueError(f"cannot read {shown}: {reason.lower()}; give the name of a file") from None
     if len(raw) > LARGEST_BYTES:
-        raise _whole_file(shown, f"over {LARGEST_BYTES // 1024} kB; give a smaller file")
+        raise _at(shown, 1, 1, f"over {LARGEST_BYTES // 1024} kB; give a smaller file")
+    raw = raw.removeprefix(b"\xef\xbb\xbf")
     try:
-        return raw.decode("utf-8-sig").replace("\r\n", "\n")
+        return raw.decode().replace("\r\n", "\n")
     except UnicodeDecodeError as error:
-        before = raw[: error.start].decode("utf-8-sig", errors="replace")
+        before = raw[: error.start].decode()
         line, column = before.count("\n") + 1, len(before) - before.rfind("\n")
-        message = "not UTF-8 text; save the file as UTF-8"
-        raise DialFileError([Fault(file=shown, line=line, column=column, key="", message=message)]) from None
+        raise _at(shown, line, column, "not UTF-8 text; save the file as UTF-8") from None
 
 
 def read_toml(source: Source) -> dict[str, Any]:
     """Return the tables of a dial file.
 
     Raises:
-        DialFileError: it is not TOML.
+        DialFileError: it is not TOML, or so deep or long that it would not be read in good time.
     """
+    for pattern, message in (
+        (_DEEP_KEY, "a key of very many parts; write it flatter"),
+        (_LONG_NUMBER, "a number with too many digits; write it shorter"),
+    ):
+        if found := pattern.search(source.text):
+            before = source.text[: found.start()]
+            raise _at(source.name, before.count("\n") + 1, len(before) - before.rfind("\n"), message)
     try:
         return tomllib.loads(source.text)
     except tomllib.TOMLDecodeError as error:
-        line, column, what = _toml_place(str(error), source.text)
-        message = f"not TOML: {what}; mend the line, or quote the text"
+        raise _at(source.name, *plain_words(str(error), source.text)) from None
     except RecursionError:
-        line, column, message = 1, 1, "not a dial file: nested too deeply; write it flatter"
-    except ValueError:
-        line, column, message = 1, 1, "a number with too many digits; write it shorter"
-    raise DialFileError([Fault(file=source.name, line=line, column=column, key="", message=message)])
+        raise _at(source.name, 1, 1, "not a dial file: nested too deeply; write it flatter") from None
+    except ValueError as error:
+        raise _at(source.name, 1, 1, f"not TOML: {error}; mend that value") from None
 
 
-def _toml_place(message: str, text: str) -> tuple[int, int, str]:
-    # tomllib tells the place in words only: "... (at line 3, column 5)" or "(at end of document)".
-    what, _, at = message.partition(" (at ")
-    words = at.rstrip(")").replace(",", "").split()
-    if words[:1] == ["line"]:
-        return int(words[1]), int(words[3]), _small(what)
-    lines = text.rstrip("\n").split("\n")
-    return len(lines), len(lines[-1]) + 1, _small(what) + " at the end of the file"
-
-
-def _small(what: str) -> str:
-    return what[:1].lower() + what[1:120]
-
-
-def _whole_file(shown: str, message: str) -> DialFileError:
-    return DialFileError([Fault(file=shown, line=1, column=1, key="", message=message)])
+def _at(file: str, line: int, column: int, message: str) -> DialFileError:
+    return DialFileError([Fault(file=file, line=line, column=column, key="", message=message)])

@@ -11,7 +11,9 @@ The number of numerals wanted for a length follows GOST 27626-88 (known from a l
 from __future__ import annotations
 
 import math
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass, replace
+from itertools import pairwise
 
 import numpy as np
 
@@ -24,6 +26,7 @@ _HALF_MISFIT = 1.0
 _EXCESS = 0.45
 _OFF_MIDDLE = 0.1
 _QUARTERS = 0.6
+_MOST_STEPS = 24
 
 
 def auto_numbered(ruler: Ruler) -> tuple[float, ...]:
@@ -42,54 +45,75 @@ def _forced(ruler: Ruler) -> tuple[float, ...]:
     return (ruler.start, *zero, ruler.end)
 
 
-def _clear(ruler: Ruler, values: Sequence[float], forced: Sequence[float]) -> bool:
-    """Return whether no two neighbours crowd each other, but for two that must both stand."""
-    array = np.array(values)
-    places, widths = ruler.place_mm(array), ruler.width_mm(array)
-    room = np.diff(places) - (widths[1:] + widths[:-1]) / 2 - ruler.clear_mm
-    both = np.isin(array, forced)
-    return bool(((room >= 0) | (both[1:] & both[:-1])).all())
+@dataclass(frozen=True, slots=True)
+class _Choice:
+    """One numeral step, the values it numbers, and what it costs that the ends do not fit it."""
+
+    step: float
+    quarter: bool
+    values: tuple[float, ...]
+    misfit: float
 
 
 def _even_steps(ruler: Ruler, forced: tuple[float, ...]) -> tuple[float, ...]:
     least, most = wanted_count(ruler.length_mm)
     best: tuple[float, tuple[float, ...]] = (math.inf, forced)
     whole_fits = False
-    span = ruler.end - ruler.start
-    magnitude = math.floor(math.log10(span))
-    for mantissa, exponent in ((m, e) for m in (10, 20, 50, 25) for e in range(magnitude - 3, magnitude + 1)):
-        step = decimal_value(mantissa, exponent - 1)
-        if not 1 <= span / step <= 60 or (mantissa == 25 and whole_fits):
+    for choice in _roomy(ruler, list(_choices(ruler, forced)), forced):
+        if choice.quarter and whole_fits:
             continue
-        values, misfit = _stepped(ruler, step, forced)
-        if not _clear(ruler, values, forced):
-            continue
-        count = len(values)
+        count = len(choice.values)
         excess = max(least - count, count - most, 0)
-        whole_fits = whole_fits or not (misfit or excess)
-        cost = (
-            excess + misfit * _MISFIT + (mantissa == 25) * _QUARTERS + 0.1 * abs(count - (least + most) / 2)
-        )
-        best = min(best, (cost, values), key=lambda item: item[0])
+        whole_fits = whole_fits or not (choice.misfit or excess)
+        cost = excess * _EXCESS + choice.misfit + choice.quarter * _QUARTERS
+        cost += _OFF_MIDDLE * abs(count - (least + most) / 2)
+        best = min(best, (cost, choice.values), key=lambda item: item[0])
     return best[1]
 
 
+def _choices(ruler: Ruler, forced: tuple[float, ...]) -> Iterator[_Choice]:
+    """Yield the steps of 1, 2 and 5·10^n that number a bearable count of values, then of 2.5·10^n."""
+    span = ruler.end - ruler.start
+    magnitude = math.floor(math.log10(span))
+    for mantissa in (10, 20, 50, 25):
+        for exponent in range(magnitude - 2, magnitude + 1):
+            step = decimal_value(mantissa, exponent - 1)
+            if 1 <= span / step <= _MOST_STEPS:
+                values, misfit = _stepped(ruler, step, forced)
+                yield _Choice(step, mantissa == 25, values, misfit)
+
+
+def _roomy(ruler: Ruler, choices: Sequence[_Choice], forced: tuple[float, ...]) -> Iterator[_Choice]:
+    """Yield the choices whose numerals are clear of each other, less those that crowd an odd end.
+
+    Only two values that must both stand may crowd each other.
+    """
+    # All choices are placed and measured in one call: the chain works on arrays.
+    every = np.array(sorted({v for choice in choices for v in choice.values}))
+    places, widths = ruler.place_mm(every), ruler.width_mm(every)
+    needed = {v: (p, w / 2) for v, p, w in zip(every.tolist(), places.tolist(), widths.tolist(), strict=True)}
+
+    def clear(one: float, other: float) -> bool:
+        (p, half), (q, other_half) = needed[one], needed[other]
+        return q - p >= half + other_half + ruler.clear_mm
+
+    for choice in choices:
+        values = list(choice.values)
+        while len(values) > 2 and values[1] not in forced and choice.misfit and not clear(values[0], values[1]):
+            del values[1]
+        while len(values) > 2 and values[-2] not in forced and choice.misfit and not clear(values[-2], values[-1]):
+            del values[-2]
+        if all(clear(a, b) or (a in forced and b in forced) for a, b in pairwise(values)):
+            yield replace(choice, values=tuple(values))
+
+
 def _stepped(ruler: Ruler, step: float, forced: tuple[float, ...]) -> tuple[tuple[float, ...], float]:
-    """Return the multiples of a step with the ends, less those that crowd an end, and what misfits cost."""
-    inside = multiples(step, ruler.start, ruler.end)
-    odd_ends = [end for end in (ruler.start, ruler.end) if not any(_same(end, v) for v in inside)]
-    for end in odd_ends:
-        beside = [v for v in inside if not _roomy(ruler, v, end) and v not in forced]
-        inside = [v for v in inside if v not in beside]
-    inner = [v for v in inside if not _same(v, ruler.start) and not _same(v, ruler.end)]
+    """Return the multiples of a step with the ends and zero, and what the ends' misfit costs."""
+    ends = (ruler.start, ruler.end)
+    inner = [v for v in multiples(step, *ends) if not _same(v, ends[0]) and not _same(v, ends[1])]
+    odd_ends = [end for end in ends if not multiples(step, end, end)]
     misfit = sum(_HALF_MISFIT if multiples(step / 2, end, end) else _MISFIT for end in odd_ends)
     return (ruler.start, *inner, ruler.end), misfit
-
-
-def _roomy(ruler: Ruler, one: float, other: float) -> bool:
-    pair = np.array([one, other])
-    places, widths = ruler.place_mm(pair), ruler.width_mm(pair)
-    return bool(abs(places[1] - places[0]) >= widths.sum() / 2 + ruler.clear_mm)
 
 
 def _same(one: float, other: float) -> bool:

@@ -72,7 +72,7 @@ class Formula:
         stage = follow(compile_formula(self.signal), span)
         places = np.append(stage.places, stage.domain[1])
         signals = stage.forward(places)
-        if signals.min() <= 0 <= signals.max():
+        if signals.min() < 0 < signals.max() or (math.isinf(places[-1]) and signals[-1] == 0):
             return 0.0
         end = 0 if abs(signals[0]) < abs(signals[-1]) else -1
         size = float(np.max(np.abs(stage.forward(sample_places(span, 65)))))
@@ -144,9 +144,10 @@ def _evaluate(expression: Expression, x: Array) -> Array:
 def _holds_to_infinity(expression: Expression, above: Array, rising: bool) -> bool:
     signals = _evaluate(expression, above)
     with np.errstate(invalid="ignore"):
-        steps = np.diff(signals)
-    turns = steps < 0 if rising else steps > 0
-    return not (np.isnan(signals).any() or turns.any())
+        steps = np.diff(signals) if rising else -np.diff(signals)
+    sizes = np.abs(signals[np.isfinite(signals)])
+    rounding = 1e-12 * float(sizes.max()) if sizes.size else 0.0
+    return not (np.isnan(signals).any() or (steps < -rounding).any())
 
 
 def _on(expression: Expression, start: float, places: Array, rising: bool) -> Array:
@@ -158,18 +159,23 @@ def _on(expression: Expression, start: float, places: Array, rising: bool) -> Ar
     if not len(bad):
         return places
     good = places[: bad[0]]
-    # The formula turns, or ends, between two places: go as near that point as doubles allow.
-    last = float(good[-1]) if len(good) else start
-    edge = _edge(expression, last, float(places[bad[0]]), rising)
-    return np.append(good, edge) if edge != last else good
+    # The formula turns, or ends, between two places; a turn may lie before the last good one.
+    sure = [start, *good.tolist()][max(len(good) - 1, 0)]
+    edge = _edge(expression, sure, float(places[bad[0]]), rising)
+    kept = good[:-1]
+    return np.append(kept, edge) if edge != sure else kept
 
 
 def _edge(expression: Expression, good: float, bad: float, rising: bool) -> float:
+    """Return how far from ``good`` towards ``bad`` the formula goes on, to the grain of a level turn."""
+    step = 1e-7 * (bad - good)
+    sign = 1.0 if rising else -1.0
     value = float(_evaluate(expression, np.array(good)))
     for _ in range(60):
         middle = (good + bad) / 2
-        signal = float(_evaluate(expression, np.array(middle)))
-        if math.isfinite(signal) and (signal > value if rising else signal < value):
+        before, signal = _evaluate(expression, np.array([middle - step, middle])).tolist()
+        # Both must hold: past a turn the slope is wrong, past a pole the signal.
+        if math.isfinite(signal) and sign * signal > max(sign * value, sign * before):
             good, value = middle, signal
         else:
             bad = middle

@@ -44,6 +44,8 @@ class Mirrored:
 
     def forward(self, x: Array) -> Array:
         """Return the deflection; below 0 the mirror image about the resting point."""
+        if x.size and x.min() >= 0:
+            return self.half.forward(x)
         return self.at_zero + np.sign(x) * (self.half.forward(np.abs(x)) - self.at_zero)
 
     def inverse(self, y: Array) -> Array:

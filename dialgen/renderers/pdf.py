@@ -5,8 +5,10 @@ from __future__ import annotations
 import io
 import math
 from collections.abc import Iterable, Mapping
+from functools import lru_cache
 from typing import assert_never
 
+from reportlab.pdfbase.pdfdoc import BasicFonts, PDFDictionary, PDFObjectReference
 from reportlab.pdfgen.canvas import FILL_NON_ZERO, Canvas
 from reportlab.pdfgen.pathobject import PDFPathObject
 
@@ -16,6 +18,7 @@ from dialgen.renderers.curves import cubic, steps
 from dialgen.renderers.runs import Lines, Run, fill_of, inked_glyphs, rgb, runs, stroke_of
 
 POINTS_PER_MM = 72 / 25.4
+_FORM_RESOURCES = PDFDictionary({"Font": PDFObjectReference(BasicFonts)})
 
 
 def render(drawing: Drawing, options: Options) -> bytes:
@@ -60,7 +63,7 @@ def _draw(canvas: Canvas, run: Run, forms: Mapping[str, str]) -> None:
         return
     match run:
         case Lines() | Arc() | Circle() | Outline():
-            path = _path(canvas, steps(run))
+            path = _path(steps(run))
             canvas.drawPath(path, stroke=bool(stroke), fill=bool(fill), fillMode=FILL_NON_ZERO)
         case Letters():
             for placed in run.glyphs:
@@ -70,8 +73,14 @@ def _draw(canvas: Canvas, run: Run, forms: Mapping[str, str]) -> None:
             assert_never(run)
 
 
-def _path(canvas: Canvas, path_steps: Iterable[PathStep]) -> PDFPathObject:
-    path = canvas.beginPath()
+@lru_cache(maxsize=4096)
+def _glyph_path(glyph: Glyph) -> PDFPathObject:
+    """Return a letter's outline; it belongs to the font, and every face that uses it shares it."""
+    return _path(cubic(glyph.path))
+
+
+def _path(path_steps: Iterable[PathStep]) -> PDFPathObject:
+    path = PDFPathObject()
     draw = {"M": path.moveTo, "L": path.lineTo, "C": path.curveTo, "Z": path.close}
     for code, values in path_steps:
         draw[code](*values)
@@ -83,8 +92,10 @@ def _define(canvas: Canvas, glyph: Glyph, form: str) -> None:
     xs = [x for _, values in glyph.path for x in values[::2]]
     ys = [y for _, values in glyph.path for y in values[1::2]]
     canvas.beginForm(form, min(xs) - 0.01, min(ys) - 0.01, max(xs) + 0.01, max(ys) + 0.01)
-    canvas.drawPath(_path(canvas, cubic(glyph.path)), stroke=0, fill=1, fillMode=FILL_NON_ZERO)
-    canvas.endForm()
+    canvas.drawPath(_glyph_path(glyph), stroke=0, fill=1, fillMode=FILL_NON_ZERO)
+    # A letter needs no more than the font that reportlab names at the head of every stream; its
+    # few hundred bytes are not worth a compressor.
+    canvas.endForm(Resources=_FORM_RESOURCES, compression=0)
 
 
 def _place(canvas: Canvas, placed: Placed, form: str) -> None:

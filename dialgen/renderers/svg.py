@@ -11,7 +11,7 @@ from xml.etree import ElementTree
 
 import svgwrite
 
-from dialgen.drawing import Arc, Cap, Circle, Drawing, Letters, Outline, PathStep, Placed, Point
+from dialgen.drawing import Arc, Cap, Circle, Drawing, Glyph, Letters, Outline, PathStep, Placed, Point
 from dialgen.renderers import Options
 from dialgen.renderers.curves import placed_steps, stops
 from dialgen.renderers.runs import Lines, Run, fill_of, inked_glyphs, layer_names, runs, stroke_of
@@ -45,7 +45,7 @@ def render(drawing: Drawing, options: Options) -> bytes:
         sheet.set_desc(title=_xml_text(drawing.title))
     defined = {} if options.inline_glyphs else inked_glyphs(drawing)
     for name, glyph in defined.items():
-        sheet.defs.add(sheet.path(_data(glyph.path), id=name))
+        sheet.defs.add(sheet.path(_glyph_data(glyph), id=name))
     glyph_ids = {glyph.name: name for name, glyph in defined.items()}
     for name, layer in zip(layer_names(drawing), drawing.layers, strict=True):
         group = sheet.add(sheet.g(id=name))
@@ -152,6 +152,12 @@ def _turn(arc: Arc, end: Point, *, clockwise: bool) -> str:
 
 def _at(point: Point) -> str:
     return f"{number(point[0])},{number(-point[1])}"
+
+
+@lru_cache(maxsize=4096)
+def _glyph_data(glyph: Glyph) -> str:
+    """Return a letter's outline; it belongs to the font, and every face that uses it shares it."""
+    return _data(glyph.path)
 
 
 def _data(path: Iterable[PathStep]) -> str:

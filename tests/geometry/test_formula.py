@@ -28,7 +28,7 @@ REFUSED = [
     ("sqrt(x, 2)", 1),
     ("sqrt()*x", 1),
     ("sqrt(x=1) + x", 1),
-    ("sqrt(*x) + x", 1),
+    ("sqrt(*x) + x", 6),
     ("x + y", 5),
     ("x < 3", 1),
     ("x == 3", 1),
@@ -77,7 +77,6 @@ REFUSED = [
     ("1if x else 2", None),
     ("x" + "+x" * 60, None),
     ("-" * 300 + "x", None),
-    ("(" * 180 + "x" + ")" * 180, None),
     ("x" * (LONGEST + 1), None),
 ]
 
@@ -243,7 +242,7 @@ def test_inverse_is_brentqs(text, span):
         ("x", (0.0, 10.0), (-1000.0, 1010.0)),  # followed for a hundred spans
         ("sin(x)", (0.0, 1.0), (-math.pi / 2, math.pi / 2)),
         ("1/(1 + x)", (0.0, math.inf), (-1.0, math.inf)),
-        ("x/(1 + x)*(1 + 1/(1 + x))", (1.0, math.inf), (-1.0, math.inf)),
+        ("1 - 1/(1 + x)**2", (1.0, math.inf), (-1.0, math.inf)),
     ],
 )
 def test_formula_is_followed_until_it_turns_or_ends(text, span, domain):

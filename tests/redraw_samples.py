@@ -1,0 +1,36 @@
+#!/usr/bin/env python3
+"""Draw every sample again: ``python tests/redraw_samples.py`` writes its SVG, PDF and PNG beside it."""
+
+from __future__ import annotations
+
+import sys
+from pathlib import Path
+
+SAMPLES = Path(__file__).parents[1] / "samples"
+RESOLUTION_DPI = 300.0
+COMMAND = "python tests/redraw_samples.py"
+
+
+def dial_files() -> list[Path]:
+    """Return the samples' dial files, each in a folder of its own."""
+    return sorted(SAMPLES.glob("*/*.toml"))
+
+
+def redraw(dial_file: Path) -> list[Path]:
+    """Draw one sample in every format kept in the repository, and return what was written."""
+    import dialgen
+    from dialgen.renderers import Options
+
+    face = dialgen.load(dial_file)
+    for warning in face.warnings():
+        print(f"warning: {warning}", file=sys.stderr)
+    written = [dial_file.with_suffix(suffix) for suffix in (".svg", ".pdf", ".png")]
+    for path in written:
+        face.draw(path, options=Options(resolution_dpi=RESOLUTION_DPI))
+    return written
+
+
+if __name__ == "__main__":
+    sys.path.insert(0, str(SAMPLES.parent))  # this checkout, not an installed one
+    for sample in dial_files():
+        print(*(path.relative_to(SAMPLES.parent) for path in redraw(sample)))

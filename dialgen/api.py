@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import os
-import tempfile
+import secrets
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from functools import cached_property
@@ -172,19 +172,16 @@ def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
 
 
 def _written_beside(path: Path, data: bytes) -> str:
+    """Write a new file next to ``path`` and return its name; its rights are those of any new file."""
     if path.is_dir():
         raise IsADirectoryError(21, "it is a folder", str(path))
-    handle, name = tempfile.mkstemp(prefix=f".{path.name[:40]}.", suffix=".tmp", dir=path.parent)
-    try:
-        with os.fdopen(handle, "wb") as file:
+    name = str(path.with_name(f".{path.name[:40]}.{os.getpid()}.{secrets.token_hex(4)}.tmp"))
+    with open(name, "xb") as file:
+        try:
             file.write(data)
-        # mkstemp makes files for the owner alone; a drawing gets the usual rights.
-        mask = os.umask(0)
-        os.umask(mask)
-        os.chmod(name, path.stat().st_mode & 0o777 if path.exists() else 0o666 & ~mask)
-    except BaseException:
-        Path(name).unlink(missing_ok=True)
-        raise
+        except BaseException:
+            os.unlink(name)
+            raise
     return name
 
 

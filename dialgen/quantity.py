@@ -10,6 +10,7 @@ from __future__ import annotations
 import math
 import re
 from dataclasses import dataclass
+from decimal import Decimal
 from typing import NamedTuple
 
 PREFIXES = {
@@ -152,7 +153,7 @@ def split_unit(written: str, units: tuple[str, ...] = PREFIXED_UNITS) -> tuple[f
     rest = _SPELLINGS.get(plain[1:], plain[1:])
     if plain[:1] in PREFIXES and rest in units:
         return PREFIXES[plain[0]], rest
-    return 1.0, plain
+    return 1.0, _SPELLINGS.get(plain, plain)
 
 
 def shown_unit(written: str) -> str:
@@ -207,9 +208,7 @@ def plain_number(value: float) -> str:
     """
     if math.isinf(value):
         return "−∞" if value < 0 else "∞"
-    text = f"{value:.12g}"
-    if "e" in text:
-        text = f"{value:.30f}".rstrip("0").rstrip(".") if abs(value) < 1 else f"{value:.0f}"
+    text = f"{Decimal(f'{value:.12g}'):f}"
     return text.replace("-", "−") if text != "-0" else "0"
 
 

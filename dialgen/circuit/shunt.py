@@ -13,6 +13,7 @@ from dialgen.stage import Affine, Stage
 
 RATED = 'a bought shunt, "100 A/75 mV"'
 _EQUAL = 1e-12
+_NEAR_MATCH = 0.005
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -95,10 +96,14 @@ class Shunt:
 
     def _designed_swamp(self, rated: Rating, coil_a: float, range_a: float, known_ohm: float) -> float:
         swamp_ohm = rated.resistance_ohm * (range_a - coil_a) / coil_a - known_ohm
+        if -_NEAR_MATCH * known_ohm <= swamp_ohm < 0:
+            # A shunt made for this very movement: nothing is fitted, and the marks say by how
+            # little (the movement's own share of the current) it then reads low.
+            return 0.0
         if swamp_ohm < 0:
             raise InputError(
-                f"at {range_a:g} A this shunt drops {rated.resistance_ohm * range_a:.4g} V, less than the "
-                f"{coil_a * known_ohm:.4g} V that coil and leads need; take a shunt with more drop",
+                f"at {range_a:g} A this shunt drops {rated.resistance_ohm * range_a:.6g} V, less than the "
+                f"{coil_a * known_ohm:.6g} V that coil and leads need; take a shunt with more drop",
                 ("rated",),
                 ("range",),
             )

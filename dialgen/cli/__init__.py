@@ -80,8 +80,9 @@ def main() -> None:
     """Run the program; exit 0 done, 1 the instrument falls short, 2 the input is wrong."""
     from dialgen.cli.report import guarded
 
-    # A command lives a moment: pydantic need not search the machine for plugins, nor the collector
-    # walk over what start-up has just made.
+    # A command lives a moment: numpy need not start a pool of threads for matrices we have none of,
+    # pydantic not search the machine for plugins, nor the collector walk over what start-up made.
+    os.environ.setdefault("OPENBLAS_NUM_THREADS", "1")
     os.environ.setdefault("PYDANTIC_DISABLE_PLUGINS", "1")
     gc.set_threshold(50_000)
     for stream in (sys.stdout, sys.stderr):

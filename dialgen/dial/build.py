@@ -19,7 +19,7 @@ from dialgen.geometry.correction import Correction
 from dialgen.geometry.points import Observed
 from dialgen.geometry.response import EVEN
 from dialgen.geometry.sampling import check_one_way, sample_places
-from dialgen.stage import Affine, Array, Span, Stage
+from dialgen.stage import Affine, Span, Stage
 
 _STOP_ROOM_DEG = 5.0
 _NO_DRIVE = 1e-12
@@ -99,7 +99,12 @@ def _observed_curve(movement: Movement, scale: Scale, shared: Circuit | None, ke
     if law.position == "old":
         positions = [old_angle(movement, at) for at in positions]
     try:
-        curve = law.curve(tuple(positions), half_value(scale, shared))
+        half = half_value(scale, shared)
+        if half is None and math.isinf(scale.end):
+            raise InputError(
+                "the pointer is seen at inf only beside an ohms circuit with half; add one, or end the scale"
+            )
+        curve = law.curve(tuple(positions), half)
         check_one_way(curve, (scale.start, scale.end), 129)
     except InputError as error:
         raise error.under(*key, "law") from None
@@ -220,13 +225,16 @@ def _no_first_value(value: float) -> float:
 def _check_ends(made: ScaleDial) -> None:
     """Refuse a scale whose ends the pointer cannot reach, or whose angles do not move one way."""
     scale, chain, key = made.spec, made.chain, made.key
-    ends: list[Array] = []
-    for name, value in (("from", scale.start), ("to", scale.end)):
-        try:
-            ends.append(chain.angle(np.array([value])))
-        except NoSuchValue as error:
-            raise NoSuchValue(error.message, (*key, name), *error.keys) from None
-    if ends[0][0] == ends[1][0]:
+    try:
+        first, last = chain.angle(np.array([scale.start, scale.end]))
+    except NoSuchValue:
+        for name, value in (("from", scale.start), ("to", scale.end)):
+            try:
+                chain.angle(np.array([value]))
+            except NoSuchValue as error:
+                raise NoSuchValue(error.message, (*key, name), *error.keys) from None
+        raise
+    if first == last:
         raise InputError(
             "both ends of the scale stand at one angle; change from, to or the circuit", (*key, "to")
         )

@@ -20,6 +20,7 @@ from dialgen.stage import EVERYWHERE, Array, Span, Stage
 
 _BLOCK = 8192
 _GRAIN = 1e-12
+_AT_STOP = 1e-9
 
 quietly = np.errstate(over="ignore", divide="ignore", invalid="ignore")
 """A step too large for a double comes out infinite or NaN, which is refused with the value named."""
@@ -64,7 +65,11 @@ class Chain:
     def _angle(self, value: Array) -> Array:
         angle_deg = self._forward(value, len(self.links))
         low, high = self.stops_deg
-        bad = ~((angle_deg >= low) & (angle_deg <= high))
+        if _within(angle_deg, (low, high)):
+            return angle_deg
+        # A scale may end at a stop: what lies a hair beyond it by rounding stands at it.
+        hair = _AT_STOP * abs(self.full_deg - self.rest_deg)
+        bad = (angle_deg < low - hair) | (angle_deg > high + hair)
         if bad.any():
             first = int(np.flatnonzero(bad)[0])
             raise NoSuchValue(
@@ -73,7 +78,7 @@ class Chain:
                 "change the range, or the stops if the pointer swings farther",
                 ("movement", "stops"),
             )
-        return angle_deg
+        return np.clip(angle_deg, low, high)
 
     def value(self, angle_deg: Array) -> Array:
         """Return the value shown at each angle.

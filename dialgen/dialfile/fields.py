@@ -36,6 +36,7 @@ _MOST_POINTS = 5000
 _LONGEST_TEXT = 200
 _LARGEST_VALUE = 1e15
 _SMALLEST_VALUE = 1e-15
+_LEAST_LENGTH_MM = 0.01
 MOST = 1e6
 """The largest pure number that a key may hold."""
 
@@ -86,10 +87,10 @@ def length(given: object) -> float:
 
 
 def length_above(given: object) -> float:
-    """Return a length in millimetres, above 0."""
+    """Return a length in millimetres that can be seen."""
     value = read_length(given, "a length")
-    if value <= 0:
-        raise ValueError(f"a length of {value:g} mm is nothing; write millimetres above 0")
+    if value < _LEAST_LENGTH_MM:
+        raise ValueError(f"a length of {value:g} mm is nothing to see; write {_LEAST_LENGTH_MM} mm or more")
     return value
 
 

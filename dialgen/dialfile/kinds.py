@@ -27,6 +27,8 @@ def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
         example = f'{noun} = "{next(iter(table))}"'
         raise InputError(f"a {noun} is a name or a table, not {shown(given)}; write for example {example}")
     kind = given.get("kind")
+    if kind is None and (meant := next((k for k in given if nearest_key(k, ["kind"])), None)):
+        raise InputError("not a key here; did you mean kind?", (meant,))
     if not isinstance(kind, str) or kind not in table:
         raise InputError(_no_such_kind(kind, table, noun), ("kind",))
     keys = {k: v for k, v in given.items() if k != "kind"}

@@ -18,6 +18,7 @@ from dialgen.lettering import letters
 from dialgen.quantity import shown_unit
 
 _INK = "#000000"
+_UPRIGHT_DEG = 12.0
 
 
 def compose(dial: Dial, scales: Sequence[RuledScale]) -> Drawing:
@@ -55,11 +56,11 @@ def _layer(name: str, items: Sequence[Primitive]) -> Layer:
 
 def _scale_line(scale: RuledScale) -> Primitive:
     """Return the line from the first mark to the last, its ends flush with their widths."""
-    look, line, spec = scale.look, scale.line, scale.spec
+    look, line = scale.look, scale.line
     style = Style(stroke=look.ink, width_mm=look.line_width_mm)
-    ends_deg = np.sort(scale.dial.chain.angle(np.array([spec.start, spec.end])))
+    ends_deg = np.sort(scale.ends_deg)
     if isinstance(line, ArcLine):
-        first, last = (float(a) for a in line.about_centre(ends_deg))
+        first, last = line.about_centre(ends_deg).tolist()
         first, last = min(first, last), max(first, last)
         flush_deg = math.degrees(look.numbered_width_mm / 2 / line.radius_mm)
         return Arc(line.centre, line.radius_mm, first - flush_deg, last + flush_deg, style)
@@ -92,11 +93,13 @@ def _unit(scale: RuledScale, *, alone: bool) -> list[Letters]:
 def _unit_place(scale: RuledScale, height_mm: float, *, alone: bool) -> Point:
     """Return the middle of the unit: between pivot and arc, or on the free side of a straight line."""
     spec, look = scale.spec, scale.look
-    ends_deg = scale.dial.chain.angle(np.array([spec.start, spec.end]))
+    ends_deg = scale.ends_deg
     taken = look.numeral_mm + look.space_mm if spec.numerals == "inside" else 0.0
     taken += look.numbered_mm if spec.marks != "outward" else 0.0
     if isinstance(scale.line, ArcLine):
         middle_deg = float(scale.line.about_centre(ends_deg).mean())
+        # A scale that is all but upright has its unit on the plate's own middle line.
+        middle_deg = 0.0 if abs(middle_deg) < _UPRIGHT_DEG else middle_deg
         room_mm = scale.line.radius_mm - taken
         reach_mm = 0.62 * room_mm if alone else room_mm - 0.9 * height_mm - look.space_mm
         return polar(scale.line.centre, reach_mm, middle_deg)

@@ -9,6 +9,7 @@ from end to end is found over the whole scale at once.
 from __future__ import annotations
 
 import math
+import operator
 from collections.abc import Iterator
 from dataclasses import dataclass
 
@@ -29,6 +30,8 @@ _HALF_DIGIT = 1.5
 _MORE_DIGITS = 2.2
 _LONG = 0.8
 _SHORT = 0.7
+_UNLIKE = 0.5
+_BARE = 1.0
 _TOO_LONG = 3.0
 _UNDIVIDED = 1.5
 _ODD_END = 0.5
@@ -119,6 +122,8 @@ def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
     """Yield the edges of 1 to 5 units between multiples of that unit, for every power of ten."""
     finite = np.flatnonzero(np.isfinite(nodes.values))
     values = nodes.values[finite]
+    if len(values) < 2:
+        return
     sizes = np.abs(values[values != 0])
     steps = np.diff(values).min()
     for power in range(math.floor(math.log10(steps)), math.ceil(math.log10(sizes.max())) + 1):
@@ -142,7 +147,10 @@ def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
     others = np.arange(1, last)
     first_cost, last_cost = (_ODD_END if _is_odd(v) else _NOT_LEGAL for v in nodes.values[[0, last]].tolist())
     yield _roomy(nodes, np.zeros_like(others), others, first_cost)
-    yield _roomy(nodes, others, np.full_like(others, last), last_cost)
+    # A gap to infinity can have no marks: the shorter, the better.
+    bare = 0.0 if math.isfinite(nodes.values[last]) else _BARE
+    lengths = nodes.places[last] - nodes.places[others]
+    yield _roomy(nodes, others, np.full_like(others, last), last_cost + bare * lengths / nodes.wanted_mm)
 
 
 def _is_odd(value: float) -> bool:
@@ -201,20 +209,35 @@ def _undivided(nodes: _Nodes, here: Indices, there: Indices, parts: tuple[int, .
 def _cheapest_path(nodes: _Nodes, edges: list[_Edges]) -> tuple[float, list[int]]:
     """Return the cheapest path from the first node to the last and its cost, infinite where there is none.
 
-    Edges lead upwards only, so nodes taken in order are settled when they are reached (dynamic
-    programming).
+    Edges lead upwards only, so those taken in the order of their start find all that lead there
+    already settled (dynamic programming).  What a path pays from gap to gap for their unlike
+    lengths makes the edges, not the nodes, the steps of the programme.
     """
     here = np.concatenate([e.here for e in edges])
+    there = np.concatenate([e.there for e in edges])
     order = np.argsort(here, kind="stable")
-    count = len(nodes.values)
-    best = [math.inf] * count
-    back = [-1] * count
-    best[0] = 0.0
-    theres, costs = np.concatenate([e.there for e in edges]), np.concatenate([e.costs for e in edges])
-    for i, j, cost in zip(here[order].tolist(), theres[order].tolist(), costs[order].tolist(), strict=True):
-        if best[i] + cost < best[j]:
-            best[j], back[j] = best[i] + cost, i
-    path = [count - 1]
-    while back[path[-1]] >= 0:
-        path.append(back[path[-1]])
-    return best[-1], path[::-1]
+    sizes = np.log2(nodes.places[there] - nodes.places[here])
+    columns = (here, there, np.concatenate([e.costs for e in edges]), sizes)
+    arrivals: list[list[_Arrival]] = [[] for _ in nodes.values]
+    for start, end, cost, size in zip(*(c[order].tolist() for c in columns), strict=True):
+        if start == 0:
+            arrivals[end].append((cost, size, 0, None))
+        elif arrivals[start]:
+            total, before = min(
+                [(a[0] + _UNLIKE * abs(size - a[1]), a) for a in arrivals[start]], key=_first
+            )
+            arrivals[end].append((total + cost, size, start, before))
+    if not arrivals[-1]:
+        return math.inf, []
+    step: _Arrival | None = min(arrivals[-1], key=_first)
+    cost, path = step[0] if step else math.inf, [len(nodes.values) - 1]
+    while step:
+        path.append(step[2])
+        step = step[3]
+    return cost, path[::-1]
+
+
+_Arrival = tuple[float, float, int, "_Arrival | None"]
+"""A way to a node: its cost, the size of its last gap, where that began, and how it got there."""
+
+_first = operator.itemgetter(0)

@@ -16,12 +16,13 @@ from dialgen.face.divisions import MOST_MARKS, Rank, divide, stepped
 from dialgen.face.looks import Look, look_for
 from dialgen.face.numbering import auto_numbered
 from dialgen.face.plate import Outliner
-from dialgen.face.ruler import Ruler, multiples
+from dialgen.face.ruler import UNEVEN, Ruler, multiples
 from dialgen.geometry.lines import ArcLine, ScaleLine, StraightLine
 from dialgen.quantity import plain_number
 from dialgen.stage import Array
 
 _STEPS = 96
+_FEW_STEPS = 32
 
 NumeralWidth = Callable[[str, float], float]
 """The width in mm of a numeral's text at a height in mm."""
@@ -43,10 +44,11 @@ class Mark:
 
 @dataclass(frozen=True, slots=True, eq=False)
 class RuledScale:
-    """A scale with its line, its marks in ascending order of value, and the look of both."""
+    """A scale with its line, the angles of its two ends, its marks by value, and the look of it all."""
 
     dial: ScaleDial
     line: ScaleLine
+    ends_deg: Array
     marks: tuple[Mark, ...]
     look: Look
 
@@ -97,7 +99,7 @@ def _rule_scale(scale: ScaleDial, plate: Outliner, numeral_width: NumeralWidth) 
         else {e.at: e.label if e.label is not None else plain_number(e.at) for e in entries}
     )
     marks = _marks(spec, key, ruler, sorted(labels), automatic=entries is None)
-    return RuledScale(scale, line, _placed(scale, line, plate, marks, labels), look)
+    return RuledScale(scale, line, ends, _placed(scale, line, plate, marks, labels), look)
 
 
 def _ruler(scale: ScaleDial, line: ScaleLine, ends: Array, look: Look, numeral_width: NumeralWidth) -> Ruler:
@@ -118,18 +120,33 @@ def _ruler(scale: ScaleDial, line: ScaleLine, ends: Array, look: Look, numeral_w
             above = (look.numeral_mm + look.clear_mm) / across
         return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm
 
-    along = chain.value(np.linspace(ends[0], ends[1], _STEPS + 1))
-    along[0], along[-1] = spec.start, spec.end
     return Ruler(
         start=spec.start,
         end=spec.end,
         place_mm=place_mm,
-        along=along,
+        along=_along(scale, line, ends, place_mm),
         width_mm=width_mm,
         digit_mm=min(numeral_width("0", look.numeral_mm), look.numeral_mm) * _crowding(spec, look),
         gap_mm=spec.gap,
         clear_mm=look.clear_mm,
     )
+
+
+def _along(scale: ScaleDial, line: ScaleLine, ends: Array, place_mm: Callable[[Array], Array]) -> Array:
+    """Return values at all but equal steps of place."""
+    spec = scale.spec
+    if math.isfinite(spec.end):
+        values = np.linspace(spec.start, spec.end, _FEW_STEPS + 1)
+        places = place_mm(values)
+        steps = places[1:] - places[:-1]
+        if steps.max() <= UNEVEN * steps.min():
+            # All but even: the places between are near enough, and the inverse need not be asked.
+            return np.interp(np.linspace(0.0, places[-1], _FEW_STEPS + 1), places, values)
+    angles = np.linspace(ends[0], ends[1], _STEPS + 1)
+    places = np.abs(line.along(angles) - line.along(ends[:1]))
+    along = scale.chain.value(np.interp(np.linspace(0.0, places[-1], _STEPS + 1), places, angles))
+    along[0], along[-1] = spec.start, spec.end
+    return along
 
 
 def _crowding(spec: Scale, look: Look) -> float:

@@ -121,7 +121,8 @@ class _OhmsWise:
         # Nothing stands beyond infinity.
         limit = float(self.inner.forward(np.array(max(self.inner.domain[0], 0.0))))
         falls = self.inner.values[-1] < self.inner.values[0]
-        return (-math.inf, limit) if falls else (limit, math.inf)
+        low, high = self.inner.image
+        return (low, limit) if falls else (limit, high)
 
     def _value(self, share: float) -> float:
         return (

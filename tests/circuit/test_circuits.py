@@ -143,7 +143,15 @@ SERIES_CURVE = [
     (9.0, 0.1),
     (19.0, 0.05),
 ]
-SHUNT_CURVE = [(0.1, 0.090909), (0.25, 0.2), (1 / 3, 0.25), (1.0, 0.5), (3.0, 0.75), (9.0, 0.9), (math.inf, 1.0)]
+SHUNT_CURVE = [
+    (0.1, 0.090909),
+    (0.25, 0.2),
+    (1 / 3, 0.25),
+    (1.0, 0.5),
+    (3.0, 0.75),
+    (9.0, 0.9),
+    (math.inf, 1.0),
+]
 
 
 @pytest.mark.parametrize(("x", "share"), SERIES_CURVE)
@@ -187,7 +195,9 @@ def test_shunt_as_built_obeys_kirchhoff(shunt_ohm, coil_ohm, lead_ohm, swamp_ohm
 @given(st.floats(0.5, 200.0), st.floats(0.06, 0.15), st.floats(1.0, 50.0), st.floats(0.01, 1.0))
 def test_rated_shunt_gets_a_swamp_that_gives_full_deflection(range_a, drop_v, coil_ohm, lead_ohm):
     """Beside a bought shunt the swamp that Kirchhoff's equations ask for at full scale is designed."""
-    circuit = Shunt(range=ampere(range_a), rated=Rating(current_a=range_a, drop_v=drop_v), leads=ohm(lead_ohm))
+    circuit = Shunt(
+        range=ampere(range_a), rated=Rating(current_a=range_a, drop_v=drop_v), leads=ohm(lead_ohm)
+    )
     # At full scale the coil branch takes 1 mA, so the shunt takes the rest and sets the voltage.
     branch_v = (range_a - 1e-3) * drop_v / range_a
     swamp_ohm = branch_v / 1e-3 - coil_ohm - lead_ohm
@@ -197,6 +207,15 @@ def test_rated_shunt_gets_a_swamp_that_gives_full_deflection(range_a, drop_v, co
         expected = coil_current(branches, [(1, share * range_a)], (2, 0, 1 / coil_ohm)) / 1e-3
         assert drive(circuit, share * range_a, coil_ohm=coil_ohm) == pytest.approx(expected, rel=1e-7)
         assert expected == pytest.approx(share, rel=1e-7)
+
+
+def test_rated_shunt_made_for_the_movement_gets_no_swamp():
+    """A 75 mV shunt beside a movement of just 75 mV needs no swamp, and reads low by the coil's own share."""
+    circuit = Shunt(range=ampere(100.0), rated=read_rating("100 A/75 mV"))
+    branches = [(1, 0, 100 / 0.075), (1, 0, 1 / 75.0)]
+    expected = coil_current(branches, [(1, 100.0)], (1, 0, 1 / 75.0)) / 1e-3
+    assert drive(circuit, 100.0, coil_ohm=75.0) == pytest.approx(expected, rel=1e-10)
+    assert expected == pytest.approx(0.99999, abs=1e-8)
 
 
 def test_rated_shunt_with_a_given_swamp_reads_what_it_reads():
@@ -215,7 +234,7 @@ def test_rated_shunt_with_a_given_swamp_reads_what_it_reads():
     st.floats(-0.5, 1.2),
 )
 def test_multiplier_with_line_and_suppressed_zero_obeys_kirchhoff(span_v, suppress_v, swamp, line, share):
-    """Source, zener, line, multiplier, swamp and coil in one loop: Kirchhoff's voltage law gives the drive."""
+    """Source, zener, line, multiplier, swamp and coil in one loop obey Kirchhoff's voltage law."""
     range_v = suppress_v + span_v
     circuit = Multiplier(range=volt(range_v), swamp=ohm(swamp), line=ohm(line), suppress=volt(suppress_v))
     # Design condition at full scale; then the loop at another voltage as a network of conductances:
@@ -247,14 +266,14 @@ def test_shunt_ohmmeter_obeys_kirchhoff(coil_ohm, feed_ohm, unknown_ohm):
     coil_branch = (1, 0, 1 / coil_ohm)
     feed = (1, 0, 1 / feed_ohm)  # the cell behind the feed, as a current source beside it
     open_a = coil_current([coil_branch, feed], [(1, 1.5 / feed_ohm)], coil_branch)
-    loaded_a = coil_current(
-        [coil_branch, feed, (1, 0, 1 / unknown_ohm)], [(1, 1.5 / feed_ohm)], coil_branch
-    )
+    loaded_a = coil_current([coil_branch, feed, (1, 0, 1 / unknown_ohm)], [(1, 1.5 / feed_ohm)], coil_branch)
     got = drive(ShuntOhmmeter(half=ohm(half_ohm)), unknown_ohm, coil_ohm=coil_ohm)
     assert got == pytest.approx(loaded_a / open_a, rel=1e-9)
 
 
-@pytest.mark.parametrize(("rest", "full", "expected"), [(None, None, 0.75), (50.0, None, 0.5), (50.0, 150.0, 0.25)])
+@pytest.mark.parametrize(
+    ("rest", "full", "expected"), [(None, None, 0.75), (50.0, None, 0.5), (50.0, 150.0, 0.25)]
+)
 def test_direct_by_hand(rest, full, expected):
     """(75 - r)/(full - r): 75 of 0 to 100 is 0.75, of 50 to 100 half, of 50 to 150 a quarter."""
     assert drive(Direct(rest=rest, full=full), 75.0, full=100.0) == pytest.approx(expected)

@@ -145,16 +145,13 @@ def ohmmeters(draw) -> Wired:
     return Wired(keys, 0.0, end, lambda v: v / (half + v) if math.isfinite(v) else 1.0, half)
 
 
-def _direct(
-    keys: str, start: float, end: float, signal: Callable[[float], float], zero: float, half: float = 1.0
-) -> Wired:
+def _direct(keys: str, start: float, end: float, signal: Callable[[float], float], zero: float) -> Wired:
     full = signal(end)
     return Wired(
         f"{keys}\n{_ends(start, end)}",
         start,
         end,
         lambda v: (signal(v) - zero) / (full - zero),
-        half,
         negative=(signal(start) - zero) / (full - zero) < 0,
     )
 
@@ -176,7 +173,7 @@ FORMULAS: list[tuple[str, float, float, Callable[[float], float], float]] = [
 
 
 @st.composite
-def directs(draw) -> Wired:
+def directs(draw) -> Wired:  # noqa: PLR0911  (a row for each law)
     """A movement that takes the law's signal as it comes."""
     which = draw(
         st.sampled_from(("linear", "power", "decibel", "log", "reflection", "table", "formula", "formula"))
@@ -192,7 +189,7 @@ def directs(draw) -> Wired:
         keys = f'unit = "kW"\nlaw = {{ kind = "power", exponent = {exponent} }}'
         return _direct(keys, start, top, lambda v: (1000 * v) ** exponent, 0.0)
     if which == "decibel":
-        start, end = draw(st.floats(-40.0, -5.0)), draw(st.floats(0.0, 6.0))
+        start, end = (round(draw(st.floats(*ends)), 2) for ends in ((-40.0, -5.0), (0.0, 6.0)))
         of, per = draw(st.sampled_from((("amplitude", 20.0), ("power", 10.0))))
         keys = f'unit = "dB"\nlaw = {{ kind = "decibel", of = "{of}" }}'
         return _direct(keys, start, end, lambda v: 10.0 ** (v / per), 0.0)

@@ -68,7 +68,9 @@ def test_rest_is_not_assumed_beside_a_reading_of_it(off_rest):
     assert made.remarks == ()
 
 
-@pytest.mark.parametrize(("off", "warned"), [(0.0024, False), (0.0026, True), (-0.0026, True), (-0.0024, False)])
+@pytest.mark.parametrize(
+    ("off", "warned"), [(0.0024, False), (0.0026, True), (-0.0026, True), (-0.0024, False)]
+)
 def test_a_zero_that_is_off_is_warned_of(off, warned):
     """A rest reading off by more than 0.25 % of the span gets the advice to set the zero and repeat."""
     made = from_readings([(REST, REST + off * SPAN), (40.0, 40.5)], REST, FULL)

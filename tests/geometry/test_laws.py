@@ -33,7 +33,7 @@ DBU += [(8.0, 1.9457), (12.0, 3.0837)]
 
 @pytest.mark.parametrize(("dbu", "volts"), DBU)
 def test_dbu_in_volts(dbu, volts):
-    """dBu as an amplitude of 0.7745967 V, and as 1 mW in 600 ohm, give the volts of the published tables."""
+    """Decibels over 0.7745967 V, and over 1 mW in 600 ohm, give the volts of the published tables."""
     amplitude = Decibel(reference=Amount(0.7745966692414834, "V"))
     power = Decibel(reference=Amount(1e-3, "W"), of="power", load=Amount(600.0, "Ω"))
     assert signal(amplitude, dbu) == pytest.approx(volts, abs=6e-5)
@@ -169,7 +169,9 @@ def test_linear_alone_is_the_value_in_its_unit():
 
 def test_table_passes_through_its_points_in_their_unit():
     """A table gives its own signals at its own values, and tells their unit."""
-    law = Table(points=((0.0, Amount(0.0, "V")), (100.0, Amount(5.269e-3, "V")), (200.0, Amount(0.0108, "V"))))
+    law = Table(
+        points=((0.0, Amount(0.0, "V")), (100.0, Amount(5.269e-3, "V")), (200.0, Amount(0.0108, "V")))
+    )
     assert [signal(law, v) for v in (0.0, 100.0, 200.0)] == pytest.approx([0.0, 5.269e-3, 0.0108])
     assert law.signal_unit("degC") == "V"
     assert Table(points=((0.0, 1.0), (1.0, 2.0))).signal_unit("degC") is None

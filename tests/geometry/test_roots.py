@@ -13,7 +13,7 @@ FUNCTIONS = {
     "falling": lambda x: -np.exp(x / 2),
     "kinked": lambda x: np.where(x < 0.3, x, 0.3 + 50 * (x - 0.3)),
     "flat spot": lambda x: (x - 0.5) ** 5,
-    "root-like": lambda x: np.cbrt(x),
+    "root-like": np.cbrt,
 }
 
 

@@ -12,7 +12,7 @@ from dialgen.cli.report import say_warnings
 
 if TYPE_CHECKING:
     from dialgen.api import Face
-    from dialgen.face.ruling import Mark, RuledScale
+    from dialgen.face.ruling import RuledScale, Spot
 
 _EPILOG = """\b
 Examples:
@@ -44,13 +44,14 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
     """
     from dialgen import api
     from dialgen.errors import InputError
+    from dialgen.face.ruling import spots
 
     face = api.load(file)
     say_warnings(face.warnings())
     if only is not None and only > len(face.scales):
         raise InputError(f"there is no scale {only}; the dial has {len(face.scales)}")
     chosen = [s for i, s in enumerate(face.scales, 1) if only in (None, i)]
-    shown = [(s, _marks_at(s, values) if values else s.marks) for s in chosen]
+    shown = [(s, spots(s.dial, s.line, values) if values else s.marks) for s in chosen]
     if as_json:
         click.echo(json.dumps({"scales": [_scale_json(s, marks) for s, marks in shown]}, ensure_ascii=False))
         return
@@ -59,13 +60,7 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
         click.echo(line)
 
 
-def _marks_at(scale: RuledScale, values: tuple[float, ...]) -> tuple[Mark, ...]:
-    from dialgen.face.ruling import marks_at
-
-    return marks_at(scale, values)
-
-
-def _scale_json(scale: RuledScale, marks: tuple[Mark, ...]) -> dict[str, object]:
+def _scale_json(scale: RuledScale, marks: tuple[Spot, ...]) -> dict[str, object]:
     spec = scale.spec
     return {
         "unit": spec.unit,
@@ -74,8 +69,8 @@ def _scale_json(scale: RuledScale, marks: tuple[Mark, ...]) -> dict[str, object]
         "marks": [
             {
                 "value": _number(m.value),
-                "rank": m.rank.value if m.rank else None,
-                "label": m.label,
+                "rank": getattr(m, "rank", None),
+                "label": getattr(m, "label", None),
                 "drive": m.drive,
                 "angle": m.angle_deg,
                 "x": m.x,
@@ -90,17 +85,17 @@ def _number(value: float) -> float | str:
     return value if math.isfinite(value) else "inf" if value > 0 else "-inf"
 
 
-def _scale_text(scale: RuledScale, marks: tuple[Mark, ...]) -> str:
-    from dialgen.face.ruling import linear_error
+def _scale_text(scale: RuledScale, marks: tuple[Spot, ...]) -> str:
+    from dialgen.face.worth import linear_error
     from dialgen.quantity import plain_number, shown_unit
 
     unit = shown_unit(scale.spec.unit)
-    rows = []
+    rows: list[tuple[str, ...]] = []
     for m in marks:
         off = linear_error(scale, m)
         rows.append(
             (
-                m.label or plain_number(m.value),
+                getattr(m, "label", None) or plain_number(m.value),
                 f"{m.drive:.6f}",
                 f"{m.angle_deg:.4f}",
                 f"{m.x:.4f}",

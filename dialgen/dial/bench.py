@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
+from typing import TypeVar
 
 import numpy as np
 
@@ -12,8 +13,12 @@ from dialgen.dialfile.readings import Reading
 from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.correction import Correction, from_readings
 from dialgen.geometry.monotone import through
+from dialgen.stage import Array
 
-NominalAngle = Callable[[float], float]
+Read = TypeVar("Read")
+
+NominalAngle = Callable[[Array], Array]
+"""From drives, or from values of a scale, to the angles where the pointer should stand."""
 
 
 def correction(
@@ -31,14 +36,14 @@ def correction(
     Raises:
         InputError: a reading that cannot be placed, or readings that do not move one way.
     """
-    pairs = []
-    for i, reading in enumerate(readings):
-        try:
-            pairs.append((_nominal(movement, reading, by_drive, by_value), _observed(movement, reading)))
-        except InputError as error:
-            if not error.keys or error.keys[0][:1] != ("movement",):
-                error.keys = (_item(key, i),)
-            raise
+    applied = _each(key, readings, lambda reading: _applied(movement, reading))
+    observed = _each(key, readings, lambda reading: _observed(movement, reading))
+    nominal = np.zeros(len(readings))
+    for by_scale, angles in ((False, by_drive), (True, by_value)):
+        chosen = [i for i, (is_value, _) in enumerate(applied) if is_value is by_scale]
+        if chosen:
+            nominal[chosen] = _together(key, chosen, np.array([applied[i][1] for i in chosen]), angles)
+    pairs = list(zip(nominal.tolist(), observed, strict=True))
     try:
         made = from_readings(pairs, movement.rest, movement.full)
     except InputError as error:
@@ -55,14 +60,46 @@ def _item(key: Key, index: int) -> Key:
     return (*key, index)
 
 
-def _nominal(movement: Movement, reading: Reading, by_drive: NominalAngle, by_value: NominalAngle) -> float:
+def _each(key: Key, readings: Sequence[Reading], read: Callable[[Reading], Read]) -> list[Read]:
+    """Return what ``read`` makes of each reading; an error is placed at the reading it is about."""
+    found = []
+    for i, reading in enumerate(readings):
+        try:
+            found.append(read(reading))
+        except InputError as error:
+            raise _placed(error, _item(key, i)) from None
+    return found
+
+
+def _together(key: Key, indices: Sequence[int], amounts: Array, angles: NominalAngle) -> Array:
+    """Return the nominal angles of several readings, asked for at once."""
+    try:
+        return angles(amounts)
+    except InputError:
+        # One of them is wrong; asked one by one, it can be named.
+        for i, amount in zip(indices, amounts, strict=True):
+            try:
+                angles(np.array([amount]))
+            except InputError as error:
+                raise _placed(error, _item(key, i)) from None
+        raise
+
+
+def _placed(error: InputError, key: Key) -> InputError:
+    if not error.keys or error.keys[0][:1] != ("movement",):
+        error.keys = (key,)
+    return error
+
+
+def _applied(movement: Movement, reading: Reading) -> tuple[bool, float]:
+    """Return whether a reading was taken by value, and that value, or else the drive it stands for."""
     if reading.value is not None:
-        return by_value(reading.value)
+        return True, reading.value
     coil = Coil(current=movement.current, resistance=movement.resistance)
     if reading.current is not None:
-        return by_drive(reading.current / coil.current_a("a reading by current"))
+        return False, reading.current / coil.current_a("a reading by current")
     drop_v = coil.current_a("a reading by voltage") * coil.resistance_ohm("a reading by voltage")
-    return by_drive((reading.voltage or 0.0) / drop_v)
+    return False, (reading.voltage or 0.0) / drop_v
 
 
 def _observed(movement: Movement, reading: Reading) -> float:

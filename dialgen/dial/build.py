@@ -19,7 +19,7 @@ from dialgen.geometry.correction import Correction
 from dialgen.geometry.points import Observed
 from dialgen.geometry.response import EVEN
 from dialgen.geometry.sampling import check_one_way, sample_places
-from dialgen.stage import Affine, Span, Stage
+from dialgen.stage import Affine, Array, Span, Stage
 
 _STOP_ROOM_DEG = 5.0
 _NO_DRIVE = 1e-12
@@ -60,7 +60,7 @@ def build(file: DialFile) -> Dial:
     if errors:
         raise Refused(errors)
     lowest = [
-        _lowest_drive(wiring, scale) if wiring else _lowest_deflection(file.movement, scale, file.circuit)
+        _lowest_drive(wiring) if wiring else _lowest_deflection(file.movement, scale, file.circuit)
         for wiring, scale in zip(wirings, file.scale, strict=True)
     ]
     stops = file.movement.stops or _default_stops(file.movement, negative=min(lowest) < -_NO_DRIVE)
@@ -120,11 +120,8 @@ def _lowest_deflection(movement: Movement, scale: Scale, shared: Circuit | None)
     return float(((ends - movement.rest) / (movement.full - movement.rest)).min())
 
 
-def _lowest_drive(wiring: Wiring, scale: Scale) -> float:
-    values = np.array([scale.start, scale.end])
-    for each in wiring.links:
-        values = each.stage.forward(values)
-    finite = values[np.isfinite(values)]
+def _lowest_drive(wiring: Wiring) -> float:
+    finite = wiring.drives[np.isfinite(wiring.drives)]
     return float(finite.min()) if finite.size else 0.0
 
 
@@ -197,15 +194,16 @@ class _Maker:
         chain = Chain((made,), None, movement.rest, movement.full, self.stops_deg, scale.unit)
         return ScaleDial(scale, key, chain, Correction(stage=Affine(1.0)), None)
 
-    def _by_drive(self, drive: float) -> float:
+    def _by_drive(self, drives: Array) -> Array:
         movement = self.movement
         low, high = movement.response.domain
-        if not low <= drive <= high:
+        outside = drives[(drives < low) | (drives > high)]
+        if outside.size:
             raise NoSuchValue(
-                f"a drive of {drive:.4g} is outside the movement's response; leave this reading out"
+                f"a drive of {outside[0]:.4g} is outside the movement's response; leave this reading out"
             )
-        deflection = float(movement.response.forward(np.array([drive]))[0])
-        return movement.rest + deflection * (movement.full - movement.rest)
+        deflections = movement.response.forward(drives)
+        return movement.rest + deflections * (movement.full - movement.rest)
 
     def _by_first_value(self) -> NominalAngle:
         if self.first_wiring is None:
@@ -215,10 +213,10 @@ class _Maker:
     def _by_value(self, chain: Chain) -> NominalAngle:
         # A reading may lie beyond the nominal stops: the departure is what it is there to show.
         free = replace(chain, stops_deg=(-math.inf, math.inf))
-        return lambda value: float(free.angle(np.array(value)))
+        return free.angle
 
 
-def _no_first_value(value: float) -> float:
+def _no_first_value(values: Array) -> Array:
     raise InputError("a reading by value needs a first scale with a law and circuit; give current or voltage")
 
 

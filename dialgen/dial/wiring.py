@@ -16,7 +16,7 @@ from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.formula import Formula
 from dialgen.geometry.laws import Law, Linear
 from dialgen.geometry.points import Observed, Table
-from dialgen.geometry.sampling import check_one_way, sample_places
+from dialgen.geometry.sampling import check_moves, sample_places
 from dialgen.quantity import split_unit
 from dialgen.stage import Affine, Array, Span, Stage
 
@@ -31,12 +31,14 @@ class Wiring:
 
     Args:
         links: value to drive.
+        drives: the drives over the scale, from its first value on.
         terminals: what the circuit was built from.
         circuit: the circuit itself, and the key of its table.
         remarks: what was assumed.
     """
 
     links: tuple[Link, ...]
+    drives: Array
     terminals: Terminals
     circuit: Circuit
     circuit_key: Key
@@ -79,7 +81,11 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     span = (scale.start * factor, scale.end * factor)
     stage = law.stage(span)
     circuit = scale.circuit or shared or Direct()
-    _check_law(stage, law, scale, key, span=span, takes=circuit.takes)
+    values = sample_places(
+        (scale.start, scale.end), _FORMULA_SAMPLES if isinstance(law, Formula) else _SAMPLES
+    )
+    law_link, signals = link(stage, values * factor)
+    _check_law(law, stage, scale, key, span=span, takes=circuit.takes, values=values, signals=signals)
     circuit_key: Key = (*key, "circuit") if scale.circuit else ("circuit",)
     signal_unit = law.signal_unit(unit)
     _check_units(circuit, signal_unit, law, key, circuit_key)
@@ -92,17 +98,17 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         unit=signal_unit,
     )
     try:
-        circuit_stage = circuit.stage(terminals)
+        circuit_link, drives = link(circuit.stage(terminals), signals)
     except InputError as error:
         raise _placed(error, circuit_key) from None
-    values = sample_places((scale.start, scale.end), 33)
-    links = []
-    for each in ([Affine(factor)] if factor != 1.0 else []) + [stage, circuit_stage]:
-        made, values = link(each, values)
-        links.append(made)
-    remarks = (*_own_current(circuit, terminals, circuit_key), *past_points(law, scale, key))
+    prefix_link = [Link(Affine(factor), abs(span[0]))] if factor != 1.0 else []
     return Wiring(
-        links=tuple(links), terminals=terminals, circuit=circuit, circuit_key=circuit_key, remarks=remarks
+        links=(*prefix_link, law_link, circuit_link),
+        drives=drives,
+        terminals=terminals,
+        circuit=circuit,
+        circuit_key=circuit_key,
+        remarks=(*_own_current(circuit, terminals, circuit_key), *past_points(law, scale, key)),
     )
 
 
@@ -112,7 +118,27 @@ def half_value(scale: Scale, shared: Circuit | None) -> float | None:
     return half.value / split_unit(scale.unit)[0] if half is not None else None
 
 
-def _check_law(stage: Stage, law: Law, scale: Scale, key: Key, *, span: Span, takes: str | None) -> None:
+def _check_law(
+    law: Law,
+    stage: Stage,
+    scale: Scale,
+    key: Key,
+    *,
+    span: Span,
+    takes: str | None,
+    values: Array,
+    signals: Array,
+) -> None:
+    low, high = stage.domain
+    if not (low <= span[0] and span[1] <= high and math.isfinite(span[1]) and np.isfinite(signals).all()):
+        _check_law_ends(law, stage, scale, key, span=span, takes=takes)
+    try:
+        check_moves(values, signals)
+    except InputError as error:
+        raise InputError(error.message, (*key, "law"), (*key, "from"), (*key, "to")) from None
+
+
+def _check_law_ends(law: Law, stage: Stage, scale: Scale, key: Key, *, span: Span, takes: str | None) -> None:
     for name, value, at in (("from", scale.start, span[0]), ("to", scale.end, span[1])):
         # A circuit that takes ohms has a limit of its own at an open pair of terminals.
         open_ended = math.isinf(at) and takes == "Ω"
@@ -123,10 +149,6 @@ def _check_law(stage: Stage, law: Law, scale: Scale, key: Key, *, span: Span, ta
                 (*key, name),
                 (*key, "law"),
             )
-    try:
-        check_one_way(stage, span, _FORMULA_SAMPLES if isinstance(law, Formula) else _SAMPLES)
-    except InputError as error:
-        raise InputError(error.message, (*key, "law"), (*key, "from"), (*key, "to")) from None
 
 
 def _signal(stage: Stage, at: float) -> float:

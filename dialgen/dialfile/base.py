@@ -23,7 +23,7 @@ from pydantic import (
     model_validator,
 )
 
-from dialgen.errors import InputError, Key
+from dialgen.errors import InputError, Key, Refused
 
 _LONGEST_KEY = 40
 _TELLING = 3
@@ -36,10 +36,11 @@ _OTHER_NAMES = {
 MOST_GUESSED = 200
 """Of how many unknown keys in one table it is guessed what they were meant to be."""
 
+Item = TypeVar("Item")
 Check = TypeVar("Check", bound=Callable[[Any], Iterator[InputError]])
 
 
-class Flaws(ValueError):  # noqa: N818  (it carries errors, it is not one more)
+class Flaws(ValueError):
     """Everything wrong with one table.
 
     Args:
@@ -120,6 +121,24 @@ def checked(model: type[AnyTable], given: object, *prefix: str | int) -> AnyTabl
 def at_item(index: int, error: ValueError) -> InputError:
     """Return an error about a single value as one about the list item ``index``."""
     return error.under(index) if isinstance(error, InputError) else InputError(str(error), (index,))
+
+
+def each(items: Sequence[object], read: Callable[[int, object], Item]) -> tuple[Item, ...]:
+    """Return every list item as ``read`` gives it, from its index and itself.
+
+    Raises:
+        Refused: several items are wrong; one alone raises its own error.
+    """
+    found: list[Item] = []
+    errors: list[InputError] = []
+    for i, item in enumerate(items):
+        try:
+            found.append(read(i, item))
+        except InputError as error:
+            errors.append(error)
+    if errors:
+        raise errors[0] if len(errors) == 1 else Refused(errors)
+    return tuple(found)
 
 
 def folder_of(info: ValidationInfo) -> Path:

@@ -12,7 +12,7 @@ from pydantic_core import ErrorDetails
 
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.dialfile.base import MOST_GUESSED, Flaws, keys_of, nearest_key, same_key
-from dialgen.errors import DialFileError, Fault, InputError, Key
+from dialgen.errors import DialFileError, Fault, InputError, Key, Refused
 from dialgen.quantity import shown
 
 Complaint = tuple[Key, str]
@@ -39,8 +39,9 @@ def complaints(error: ValueError, model: type[BaseModel], root: type[BaseModel])
         if isinstance(cause, Flaws):
             for inner, message in of_flaws(cause, root):
                 yield (*key, *inner), message
-        elif isinstance(cause, InputError):
-            yield (*key, *(cause.keys[0] if cause.keys else ())), cause.message
+        elif isinstance(cause, (InputError, Refused)):
+            for each in cause.errors if isinstance(cause, Refused) else [cause]:
+                yield (*key, *(each.keys[0] if each.keys else ())), each.message
         elif cause is not None and not isinstance(cause, DialFileError):
             yield key, str(cause)
         elif kind == "extra_forbidden":

@@ -14,7 +14,7 @@ from pydantic import PlainValidator
 
 from dialgen.circuit.direct import FACE_VALUE
 from dialgen.circuit.shunt import RATED, read_rating
-from dialgen.dialfile.base import at_item
+from dialgen.dialfile.base import at_item, each
 from dialgen.errors import InputError
 from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
 from dialgen.lettering import measure
@@ -171,7 +171,7 @@ def points(first: Reader, second: Reader, example: str, least: int = 2) -> Reade
             raise ValueError(f"this is a list of pairs, not {shown(given)}; write for example {example}")
         if not least <= len(given) <= _MOST_POINTS:
             raise ValueError(f"{len(given)} points; give {least} to {_MOST_POINTS}, such as {example}")
-        return tuple(_point(i, p, first, second, example) for i, p in enumerate(given))
+        return each(given, lambda i, point: _point(i, point, first, second, example))
 
     return read_points
 

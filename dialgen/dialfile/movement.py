@@ -11,7 +11,7 @@ from dialgen.dialfile import fields
 from dialgen.dialfile.base import Table, needs
 from dialgen.dialfile.fields import Angle, CurrentA, FaceValue, LengthAbove, ResistanceOhm
 from dialgen.dialfile.readings import MOST_READINGS, Reading, readings_file
-from dialgen.errors import InputError
+from dialgen.errors import InputError, Refused
 from dialgen.geometry import response
 from dialgen.quantity import shown
 from dialgen.stage import Stage
@@ -61,6 +61,8 @@ def _response(given: object) -> Stage:
 def _keyed(key: str, read: fields.Reader, given: object) -> fields.Value:
     try:
         return read(given)
+    except Refused as refused:
+        raise Refused([error.under(key) for error in refused.errors]) from None
     except InputError as error:
         raise error.under(key) from None
     except ValueError as error:

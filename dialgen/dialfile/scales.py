@@ -11,7 +11,7 @@ from pydantic import BeforeValidator, Field, PlainValidator, ValidationInfo
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.circuit.terminals import Circuit
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table, at_item, checked, folder_of, needs
+from dialgen.dialfile.base import Table, at_item, checked, each, folder_of, needs
 from dialgen.dialfile.fields import FaceEnd, FaceValue, LengthAbove, Lettered, Position, UnitText, YesNo
 from dialgen.dialfile.kinds import read_kind
 from dialgen.dialfile.movement import readings_once
@@ -82,7 +82,7 @@ def _numbered(given: object) -> Every | tuple[Entry, ...] | None:
         raise ValueError(f"{shown(given)} does not say what to number; write {choices}")
     if len(given) > _MOST_NUMBERED:
         raise ValueError(f"{len(given)} values to number; give at most {_MOST_NUMBERED}")
-    return tuple(_entry(i, item) for i, item in enumerate(given))
+    return each(given, _entry)
 
 
 def _entry(index: int, given: object) -> Entry:

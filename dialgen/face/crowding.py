@@ -36,6 +36,7 @@ _TOO_LONG = 3.0
 _UNDIVIDED = 1.5
 _ODD_END = 0.5
 _NOT_LEGAL = 8.0
+_HAIR_MM = 1e-9
 _DECADE = 1.0
 
 
@@ -134,7 +135,7 @@ def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
             there = np.searchsorted(values, targets - 1e-6 * unit)
             found = there < len(values)
             found[found] = np.abs(values[there[found]] - targets[found]) <= 1e-6 * unit
-            yield _roomy(nodes, whole[found], there[found], gap_cost, _PARTS[count], count * unit)
+            yield _roomy(nodes, whole[found], there[found], gap_cost, parts=_PARTS[count], gap=count * unit)
 
 
 def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
@@ -176,14 +177,16 @@ def _roomy(
     here: Indices,
     there: Indices,
     cost: float | Array,
+    *,
     parts: tuple[int, ...] = (),
     gap: float = 0.0,
 ) -> _Edges:
     """Return the edges that leave room between numerals and jump over no forced value, with costs."""
     lengths = nodes.places[there] - nodes.places[here]
     room = lengths - (nodes.widths[here] + nodes.widths[there]) / 2 - nodes.clear_mm
-    next_stop = nodes.stops[np.minimum(np.searchsorted(nodes.stops, here, side="right"), len(nodes.stops) - 1)]
-    fits = (room >= 0) & (there <= next_stop) & (there > here)
+    after = np.searchsorted(nodes.stops, here, side="right")
+    next_stop = nodes.stops[np.minimum(after, len(nodes.stops) - 1)]
+    fits = (room >= -_HAIR_MM) & (there <= next_stop) & (there > here)
     here, there, lengths = here[fits], there[fits], lengths[fits]
     off = np.log2(lengths / nodes.wanted_mm)
     steep = np.maximum(1.0, (lengths / (_TOO_LONG * nodes.wanted_mm)) ** 1.5)
@@ -194,7 +197,9 @@ def _roomy(
     return _Edges(here, there, costs)
 
 
-def _undivided(nodes: _Nodes, here: Indices, there: Indices, parts: tuple[int, ...], gap: float) -> NDArray[np.bool_]:
+def _undivided(
+    nodes: _Nodes, here: Indices, there: Indices, parts: tuple[int, ...], gap: float
+) -> NDArray[np.bool_]:
     """Return whether not even the coarsest division of each gap would leave its marks apart.
 
     Within a gap the scale is taken to stretch evenly from the density at one end to the other's.
@@ -223,9 +228,7 @@ def _cheapest_path(nodes: _Nodes, edges: list[_Edges]) -> tuple[float, list[int]
         if start == 0:
             arrivals[end].append((cost, size, 0, None))
         elif arrivals[start]:
-            total, before = min(
-                [(a[0] + _UNLIKE * abs(size - a[1]), a) for a in arrivals[start]], key=_first
-            )
+            total, before = min([(a[0] + _UNLIKE * abs(size - a[1]), a) for a in arrivals[start]], key=_first)
             arrivals[end].append((total + cost, size, start, before))
     if not arrivals[-1]:
         return math.inf, []

@@ -116,7 +116,7 @@ def _levelled(
 ) -> list[Division | None]:
     """Return one division for all gaps of one size: on an even scale the coarsest that any needs."""
     sizes = [float(f"{b - a:.9g}") for a, b in gaps]
-    coarsest = {}
+    coarsest: dict[float, int] = {}
     for size, division in zip(sizes, chosen, strict=True):
         parts = division.parts if division else 1
         coarsest[size] = min(parts, coarsest.get(size, MOST_PARTS))
@@ -138,17 +138,18 @@ def stepped(
         numbered: the numbered values.
 
     Raises:
-        InputError: more than 3000 marks, or pieces that do not ascend within the scale.
+        InputError: more than 3000 marks in all, or pieces that do not ascend within the scale.
     """
     marks: dict[float, float] = {}
     low = start
     for i, (high, step) in enumerate(pieces):
         if not low < high or high > end:
             raise InputError(
-                f"a piece to {high:g} does not follow {low:g} within the scale; let the pieces ascend up to {end:g}",
+                f"a piece to {high:g} does not follow {low:g} within the scale; "
+                f"let the pieces ascend up to {end:g}",
                 (i, "to"),
             )
-        if (high - low) / step > MOST_MARKS:
+        if len(marks) + (high - low) / step > MOST_MARKS:
             raise InputError(
                 f"a step of {step:g} gives over {MOST_MARKS} marks; take a larger one", (i, "every")
             )

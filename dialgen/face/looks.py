@@ -39,7 +39,7 @@ class Look:
     unit_mm: float
     ink: str = "#000000"
 
-    def length_mm(self, rank: Rank | None) -> float:
+    def length_mm(self, rank: Rank) -> float:
         """Return the length of a mark."""
         return {
             Rank.NUMBERED: self.numbered_mm,
@@ -47,7 +47,7 @@ class Look:
             Rank.FINE: self.fine_mm,
         }[rank]
 
-    def width_mm(self, rank: Rank | None) -> float:
+    def width_mm(self, rank: Rank) -> float:
         """Return the width of a mark."""
         return {
             Rank.NUMBERED: self.numbered_width_mm,

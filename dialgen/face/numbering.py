@@ -27,12 +27,15 @@ _EXCESS = 0.45
 _OFF_MIDDLE = 0.1
 _QUARTERS = 0.6
 _MOST_STEPS = 24
+_HAIR_MM = 1e-9
 
 
 def auto_numbered(ruler: Ruler) -> tuple[float, ...]:
     """Return the values to number, ascending, infinity last."""
     forced = _forced(ruler)
-    return _even_steps(ruler, forced) if ruler.is_even() else cheapest_numerals(ruler, forced, _wanted_gap_mm(ruler))
+    if ruler.is_even():
+        return _even_steps(ruler, forced)
+    return cheapest_numerals(ruler, forced, _wanted_gap_mm(ruler))
 
 
 def wanted_count(length_mm: float) -> tuple[int, int]:
@@ -91,18 +94,19 @@ def _roomy(ruler: Ruler, choices: Sequence[_Choice], forced: tuple[float, ...]) 
     # All choices are placed and measured in one call: the chain works on arrays.
     every = np.array(sorted({v for choice in choices for v in choice.values}))
     places, widths = ruler.place_mm(every), ruler.width_mm(every)
-    needed = {v: (p, w / 2) for v, p, w in zip(every.tolist(), places.tolist(), widths.tolist(), strict=True)}
+    rows = zip(every.tolist(), places.tolist(), widths.tolist(), strict=True)
+    needed = {value: (place, width / 2) for value, place, width in rows}
 
     def clear(one: float, other: float) -> bool:
         (p, half), (q, other_half) = needed[one], needed[other]
-        return q - p >= half + other_half + ruler.clear_mm
+        room_mm: float = abs(q - p) - half - other_half
+        return room_mm >= ruler.clear_mm - _HAIR_MM
 
     for choice in choices:
         values = list(choice.values)
-        while len(values) > 2 and values[1] not in forced and choice.misfit and not clear(values[0], values[1]):
-            del values[1]
-        while len(values) > 2 and values[-2] not in forced and choice.misfit and not clear(values[-2], values[-1]):
-            del values[-2]
+        for end, beside in ((0, 1), (-1, -2)) if choice.misfit else ():
+            while len(values) > 2 and values[beside] not in forced and not clear(values[end], values[beside]):
+                del values[beside]
         if all(clear(a, b) or (a in forced and b in forced) for a, b in pairwise(values)):
             yield replace(choice, values=tuple(values))
 

@@ -91,7 +91,8 @@ def check_holes(plate: Plate) -> Iterator[InputError]:
     for i, hole in enumerate(plate.hole):
         if not shape.holds(hole.at):
             yield InputError(
-                f"the hole at {hole.at[0]:g}, {hole.at[1]:g} is off the plate; coordinates count from the pivot",
+                f"the hole at {hole.at[0]:g}, {hole.at[1]:g} is off the plate; "
+                "coordinates count from the pivot",
                 ("plate", "hole", i, "at"),
                 ("plate", "pivot"),
             )

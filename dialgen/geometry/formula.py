@@ -220,7 +220,7 @@ def compile_formula(text: str) -> Expression:
         raise FormulaError(error.message, start + len(before) + 1) from None
 
 
-class _Unread(Exception):  # noqa: N818  (never leaves this module)
+class _Unread(Exception):
     """A syntax node that is not arithmetic, and why."""
 
     def __init__(self, message: str, node: ast.expr) -> None:

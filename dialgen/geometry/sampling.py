@@ -26,15 +26,24 @@ def check_one_way(stage: Stage, span: Span, count: int) -> None:
         InputError: naming the values between which it turns, or where it has no signal.
     """
     places = sample_places(span, count)
-    signals = stage.forward(places)
+    check_moves(places, stage.forward(places))
+
+
+def check_moves(values: Array, signals: Array) -> None:
+    """Refuse signals that do not move strictly one way as the values rise.
+
+    Raises:
+        InputError: naming the values between which they turn, or where there is none.
+    """
     if not np.isfinite(signals).all():
-        bad = float(places[~np.isfinite(signals)][0])
+        bad = float(values[~np.isfinite(signals)][0])
         raise InputError(f"the law has no signal at {bad:.6g}; it must hold over the whole scale")
-    steps = np.diff(signals)
-    turned = np.flatnonzero(np.sign(steps) != np.sign(signals[-1] - signals[0]))
-    if len(turned) or signals[-1] == signals[0]:
-        at = int(turned[0]) if len(turned) else 0
+    steps = signals[1:] - signals[:-1]
+    rising = signals[-1] > signals[0]
+    turned = np.flatnonzero(steps <= 0 if rising else steps >= 0)
+    if len(turned):
+        at = int(turned[0])
         raise InputError(
-            f"the law turns or stands still between {places[at]:.6g} and {places[at + 1]:.6g}; "
+            f"the law turns or stands still between {values[at]:.6g} and {values[at + 1]:.6g}; "
             "it must move strictly one way over the scale"
         )

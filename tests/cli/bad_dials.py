@@ -265,7 +265,7 @@ SENSE = [
         "value beyond stops",
         '"40 A"\nbuilt = "1.885 mohm"',
         '"20 A"',
-        "36:1",
+        "35:1",
         "scale[1].to",
         "beyond the stops -49 and 49",
     ),

@@ -1,0 +1,89 @@
+"""A scale measured for its divider: places along its line, and the room its numerals take there."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable
+
+import numpy as np
+
+from dialgen.dial import ScaleDial
+from dialgen.dialfile.models import Scale
+from dialgen.face.looks import Look
+from dialgen.face.ruler import UNEVEN, Ruler
+from dialgen.geometry.lines import ScaleLine
+from dialgen.quantity import plain_number
+from dialgen.stage import Array
+
+_STEPS = 96
+_FEW_STEPS = 32
+
+NumeralWidth = Callable[[str, float], float]
+"""The width in mm of a numeral's text at a height in mm."""
+
+
+def survey(
+    scale: ScaleDial, line: ScaleLine, ends_deg: Array, look: Look, numeral_width: NumeralWidth
+) -> Ruler:
+    """Return the ruler of a scale on its line.
+
+    Args:
+        scale: the scale and its chain.
+        line: the line its marks stand on.
+        ends_deg: the pointer's angles at its first and last value.
+        look: the sizes of its numerals.
+        numeral_width: what a numeral's text takes.
+    """
+    spec, chain = scale.spec, scale.chain
+    first, last = (float(p) for p in line.along(ends_deg))
+    sign = 1.0 if last > first else -1.0
+
+    def place_mm(values: Array) -> Array:
+        return sign * (line.along(chain.angle(values)) - first)
+
+    def width_mm(values: Array) -> Array:
+        # Two upright boxes are clear of each other as soon as they are beside or above each other,
+        # whichever comes first along the line.
+        widths = np.array([numeral_width(plain_number(v), look.numeral_mm) for v in values.tolist()])
+        across, upward = (np.abs(d) for d in line.directions(chain.angle(values)))
+        with np.errstate(divide="ignore"):
+            beside = (widths + look.clear_mm) / upward
+            above = (look.numeral_mm + look.clear_mm) / across
+        return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm
+
+    return Ruler(
+        start=spec.start,
+        end=spec.end,
+        place_mm=place_mm,
+        along=_along(scale, line, ends_deg, place_mm),
+        width_mm=width_mm,
+        digit_mm=min(numeral_width("0", look.numeral_mm), look.numeral_mm) * _crowding(spec, look),
+        gap_mm=spec.gap,
+        clear_mm=look.clear_mm,
+    )
+
+
+def _along(scale: ScaleDial, line: ScaleLine, ends_deg: Array, place_mm: Callable[[Array], Array]) -> Array:
+    """Return values at all but equal steps of place."""
+    spec = scale.spec
+    if math.isfinite(spec.end):
+        values = np.linspace(spec.start, spec.end, _FEW_STEPS + 1)
+        places = place_mm(values)
+        steps = places[1:] - places[:-1]
+        if steps.max() <= UNEVEN * steps.min():
+            # All but even: the places between are near enough, and the inverse need not be asked.
+            return np.interp(np.linspace(0.0, places[-1], _FEW_STEPS + 1), places, values)
+    angles = np.linspace(ends_deg[0], ends_deg[1], _STEPS + 1)
+    places = np.abs(line.along(angles) - line.along(ends_deg[:1]))
+    along = scale.chain.value(np.interp(np.linspace(0.0, places[-1], _STEPS + 1), places, angles))
+    along[0], along[-1] = spec.start, spec.end
+    return along
+
+
+def _crowding(spec: Scale, look: Look) -> float:
+    """Return how much farther apart places on the line are than at the numerals' distance."""
+    if spec.radius is None:
+        return 1.0
+    reach = look.numbered_mm + look.space_mm + look.numeral_mm / 2
+    numerals = spec.radius + (reach if spec.numerals == "outside" else -reach)
+    return spec.radius / max(numerals, 0.1 * spec.radius)

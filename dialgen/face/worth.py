@@ -1,0 +1,36 @@
+"""What a linear face would have been wrong by: the worth of a face made for its movement."""
+
+from __future__ import annotations
+
+import math
+
+import numpy as np
+
+from dialgen.dial import ScaleDial
+from dialgen.face.ruling import RuledScale, Spot
+
+
+def linear_error(ruled: RuledScale, spot: Spot) -> float | None:
+    """Return the error that a linear face would have had at a value, in face units.
+
+    The linear face is divided evenly between the nominal angles of the scale's ends, for the
+    circuit as designed; None where the scale has no finite end.
+    """
+    spec = ruled.spec
+    nominal = nominal_ends(ruled.dial)
+    if nominal is None or math.isinf(spot.value) or math.isinf(spec.end):
+        return None
+    first, last = nominal
+    return spec.start + (spot.angle_deg - first) / (last - first) * (spec.end - spec.start) - spot.value
+
+
+def nominal_ends(scale: ScaleDial) -> tuple[float, float] | None:
+    """Return the angles of the scale's ends by the circuit as designed and an ideal movement."""
+    chain, spec = scale.chain, scale.spec
+    if scale.wiring is None:
+        return chain.rest_deg, chain.full_deg
+    drives = scale.wiring.designed(np.array([spec.start, spec.end]))
+    if not np.isfinite(drives).all():
+        return None
+    first, last = (chain.rest_deg + float(d) * (chain.full_deg - chain.rest_deg) for d in drives)
+    return first, last

@@ -7,6 +7,7 @@ take "1,5 V" for 15 V and "4k7" for 4 of unit k7 without complaint.
 
 from __future__ import annotations
 
+import json
 import math
 import re
 from dataclasses import dataclass
@@ -222,7 +223,7 @@ def shown(given: object) -> str:
         case bool():
             text = str(given).lower()
         case str():
-            text = f'"{given}"'
+            text = json.dumps(given, ensure_ascii=False)
         case float():
             text = f"{given:.12g}"
         case list() | tuple():

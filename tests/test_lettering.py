@@ -148,7 +148,7 @@ class TestFonts:
     @pytest.mark.parametrize("index", [0, 1])
     def test_outlines_and_boxes(self, index):
         """Every glyph of both fonts has fontTools' outline and, to the exact curve, its bounds."""
-        font = fonts()[index]
+        font = list(fonts())[index]
         file = truth(font.name)
         outlines = file.getGlyphSet()
         for glyph_id, name in enumerate(file.getGlyphOrder()):
@@ -163,7 +163,7 @@ class TestFonts:
     @pytest.mark.parametrize("index", [0, 1])
     def test_glyph_names_differ(self, index):
         """No two glyphs of a font share a name, so a drawing can tell them apart by it."""
-        font = fonts()[index]
+        font = list(fonts())[index]
         count = len(truth(font.name).getGlyphOrder())
         assert len({font.glyph(i).name for i in range(count)}) == count
 
@@ -174,7 +174,7 @@ class TestFonts:
     @pytest.mark.parametrize("index", [0, 1])
     def test_advances(self, index):
         """A character alone is as wide as hmtx says, each font sized to the same capital height."""
-        font = fonts()[index]
+        font = list(fonts())[index]
         hmtx = truth(font.name)["hmtx"]
         checked = 0
         for code in truth(font.name).getBestCmap():

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import json
 import math
+from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
 import click
@@ -12,7 +13,7 @@ from dialgen.cli.report import say_warnings
 
 if TYPE_CHECKING:
     from dialgen.api import Face
-    from dialgen.face.ruling import RuledScale, Spot
+    from dialgen.face.ruling import Mark, RuledScale, Spot
 
 _EPILOG = """\b
 Examples:
@@ -60,7 +61,7 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
         click.echo(line)
 
 
-def _scale_json(scale: RuledScale, marks: tuple[Spot, ...]) -> dict[str, object]:
+def _scale_json(scale: RuledScale, marks: Sequence[Spot | Mark]) -> dict[str, object]:
     spec = scale.spec
     return {
         "unit": spec.unit,
@@ -85,7 +86,7 @@ def _number(value: float) -> float | str:
     return value if math.isfinite(value) else "inf" if value > 0 else "-inf"
 
 
-def _scale_text(scale: RuledScale, marks: tuple[Spot, ...]) -> str:
+def _scale_text(scale: RuledScale, marks: Sequence[Spot | Mark]) -> str:
     from dialgen.face.worth import linear_error
     from dialgen.quantity import plain_number, shown_unit
 

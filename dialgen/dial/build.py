@@ -22,6 +22,7 @@ from dialgen.geometry.sampling import check_one_way, sample_places
 from dialgen.stage import Affine, Array, Span, Stage
 
 _STOP_ROOM_DEG = 5.0
+_LEAST_TRAVEL_DEG = 0.01
 _NO_DRIVE = 1e-12
 
 Made = TypeVar("Made")
@@ -232,7 +233,8 @@ def _check_ends(made: ScaleDial) -> None:
             except NoSuchValue as error:
                 raise NoSuchValue(error.message, (*key, name), *error.keys) from None
         raise
-    if first == last:
+    if abs(last - first) < _LEAST_TRAVEL_DEG:
         raise InputError(
-            "both ends of the scale stand at one angle; change from, to or the circuit", (*key, "to")
+            f"the whole scale takes {abs(last - first):.2g} degrees; change from, to, the circuit or its full",
+            (*key, "to"),
         )

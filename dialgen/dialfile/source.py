@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import json
 import re
 import tomllib
 from collections.abc import Iterable, Mapping
@@ -18,7 +19,9 @@ LARGEST_BYTES = 128 * 1024
 _LONGEST_KEY = 80
 _WORD = r"""(?:[\w-]++|"[^"\n]*+"|'[^'\n]*+')"""
 # tomllib takes a time that grows with the square of a dotted key's parts.
-_DEEP_KEY = re.compile(rf"""(?<![\w"'.-])(?:{_WORD}[ \t]*+\.[ \t]*+){{20}}""")
+_MANY_PARTS = 20
+_DEEP_KEY = re.compile(rf"""(?<![\w"'.-])(?:{_WORD}[ \t]*+\.[ \t]*+){{{_MANY_PARTS}}}""")
+_BARE_KEY = re.compile("[A-Za-z0-9_-]+")
 _LONG_NUMBER = re.compile("[0-9_]{4000}")
 
 
@@ -62,7 +65,11 @@ def shown_key(key: Key) -> str:
     """
     text = ""
     for part in key:
-        text += f"[{part + 1}]" if isinstance(part, int) else f".{part}" if text else part
+        if isinstance(part, int):
+            text += f"[{part + 1}]"
+        else:
+            name = part if _BARE_KEY.fullmatch(part) else json.dumps(part, ensure_ascii=False)
+            text += f".{name}" if text else name
     return text if len(text) <= _LONGEST_KEY else text[: _LONGEST_KEY - 3] + "..."
 
 
@@ -96,11 +103,12 @@ def read_toml(source: Source) -> dict[str, Any]:
     Raises:
         DialFileError: it is not TOML, or so deep or long that it would not be read in good time.
     """
-    for pattern, message in (
-        (_DEEP_KEY, "a key of very many parts; write it flatter"),
-        (_LONG_NUMBER, "a number with too many digits; write it shorter"),
+    many_dots = any(line.count(".") >= _MANY_PARTS for line in source.text.split("\n"))
+    for suspect, pattern, message in (
+        (many_dots, _DEEP_KEY, "a key of very many parts; write it flatter"),
+        (True, _LONG_NUMBER, "a number with too many digits; write it shorter"),
     ):
-        if found := pattern.search(source.text):
+        if suspect and (found := pattern.search(source.text)):
             before = source.text[: found.start()]
             raise _at(source.name, before.count("\n") + 1, len(before) - before.rfind("\n"), message)
     try:

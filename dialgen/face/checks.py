@@ -3,12 +3,10 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from itertools import pairwise
 
 import numpy as np
 
 from dialgen.dialfile.models import Scale
-from dialgen.drawing import Point
 from dialgen.errors import InputError, Key, NoSuchValue
 from dialgen.face.plate import Outliner
 from dialgen.geometry.lines import ScaleLine
@@ -32,38 +30,41 @@ def check_meets(line: ScaleLine, angles: Array, values: Sequence[float], spec: S
         )
 
 
-def check_order(values: Sequence[float], angles: Sequence[float], key: Key) -> None:
+def check_order(values: Sequence[float], angles: Array, key: Key) -> None:
     """Refuse marks whose angles do not follow each other as their values do.
 
     Raises:
         InputError: naming the first two.
     """
-    rising = bool(angles) and angles[-1] > angles[0]
-    for (value, here), (follower, there) in pairwise(zip(values, angles, strict=True)):
-        if there == here or (there > here) != rising:
-            raise InputError(
-                f"the marks {value:g} and {follower:g} do not follow each other; the law must move one way, "
-                "and marks must stand apart",
-                (*key, "law"),
-            )
+    steps = angles[1:] - angles[:-1]
+    turned = np.flatnonzero(steps <= 0 if angles.size and angles[-1] > angles[0] else steps >= 0)
+    if len(turned):
+        at = int(turned[0])
+        raise InputError(
+            f"the marks {values[at]:g} and {values[at + 1]:g} do not follow each other; "
+            "the law must move one way, and marks must stand apart",
+            (*key, "law"),
+        )
 
 
 def check_on_plate(
-    plate: Outliner, values: Sequence[float], points: Sequence[Point], spec: Scale, key: Key
+    plate: Outliner, values: Sequence[float], points: tuple[Array, Array], spec: Scale, key: Key
 ) -> None:
-    """Refuse marks whose points lie off the plate.
+    """Refuse marks whose points, given by their x and y, lie off the plate.
 
     Raises:
         InputError: naming the first of them.
     """
-    for value, (x, y) in zip(values, points, strict=True):
-        if not plate.holds((x, y)):
-            raise InputError(
-                f"the mark at {value:g} {spec.unit} would lie at {x:.4g}, {y:.4g}, off the plate; "
-                "make the plate larger or move the scale line",
-                (*key, _line_key(spec)),
-                ("plate", "size"),
-            )
+    off = np.flatnonzero(np.logical_not(plate.holds(*points)))
+    if len(off):
+        at = int(off[0])
+        x, y = points[0][at], points[1][at]
+        raise InputError(
+            f"the mark at {values[at]:g} {spec.unit} would lie at {x:.4g}, {y:.4g}, off the plate; "
+            "make the plate larger or move the scale line",
+            (*key, _line_key(spec)),
+            ("plate", "size"),
+        )
 
 
 def _line_key(spec: Scale) -> str:

@@ -10,7 +10,8 @@ import numpy as np
 from dialgen.dial import Dial
 from dialgen.dialfile.models import FreeText
 from dialgen.drawing import Arc, Cap, Drawing, Layer, Letters, Line, Point, Primitive, Purpose, Style, polar
-from dialgen.face.numerals import mark_ends, numerals
+from dialgen.face.divisions import Rank
+from dialgen.face.numerals import mark_ends, numerals, reaches
 from dialgen.face.plate import cut_layer, guide_layer, outliner
 from dialgen.face.ruling import RuledScale
 from dialgen.geometry.lines import ArcLine
@@ -74,12 +75,13 @@ def _scale_line(scale: RuledScale) -> Primitive:
 def _mark_lines(scale: RuledScale) -> list[Line]:
     """Return a line for each mark, those of one rank together so that a renderer may join them."""
     look = scale.look
-    styles = {
-        rank: Style(stroke=look.ink, width_mm=look.width_mm(rank), cap=Cap.BUTT)
-        for rank in {mark.rank for mark in scale.marks}
-    }
-    ranked = sorted(scale.marks, key=lambda mark: mark.rank, reverse=True)
-    return [Line(*mark_ends(mark, scale.spec.marks, look), styles[mark.rank]) for mark in ranked]
+    reach = reaches(scale.spec.marks, look)
+    lines = []
+    for rank in Rank:
+        style = Style(stroke=look.ink, width_mm=look.width_mm(rank), cap=Cap.BUTT)
+        ranked = [mark for mark in scale.marks if mark.rank is rank]
+        lines += [Line(*mark_ends(mark, reach[rank]), style) for mark in ranked]
+    return lines
 
 
 def _unit(scale: RuledScale, *, alone: bool) -> list[Letters]:

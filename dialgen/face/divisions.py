@@ -17,7 +17,6 @@ import numpy as np
 
 from dialgen.errors import InputError
 from dialgen.face.ruler import Ruler, multiples
-from dialgen.stage import Array
 
 MOST_PARTS = 10
 MOST_MARKS = 3000
@@ -92,15 +91,16 @@ def _finest_roomy(
     """Return for each gap its finest division whose marks are no nearer than the least gap."""
     # All marks of all choices are placed in one call: the chain works on arrays.
     cuts = [
-        [low, *_cut(low, high, d.parts), high]
+        np.linspace(low, high, division.parts + 1)
         for (low, high), legal in zip(gaps, choices, strict=True)
-        for d in legal
+        for division in legal
     ]
     if not cuts:
         return [None] * len(gaps)
-    lengths = np.cumsum([len(cut) for cut in cuts])[:-1]
-    places = np.split(ruler.place_mm(np.concatenate(cuts)), lengths)
-    nearest = iter([float(np.diff(place).min()) for place in places])
+    steps = np.diff(ruler.place_mm(np.concatenate(cuts)))
+    # Within a cut its steps stand one after another; the step from cut to cut is passed over.
+    starts = np.cumsum([0, *(len(cut) for cut in cuts[:-1])])
+    nearest = iter([steps[at : at + len(cut) - 1].min() for at, cut in zip(starts, cuts, strict=True)])
     chosen: list[Division | None] = []
     for legal in choices:
         # The list is used up whole, so that every gap reads its own distances.
@@ -155,22 +155,42 @@ def stepped(
             )
         marks.update(dict.fromkeys(multiples(step, low, high), step))
         low = high
+    values = np.array(sorted(marks))
     shown = np.array(sorted(numbered))
-    plain = [
-        v for v in sorted(marks) if not len(shown) or np.abs(shown - v).min() > 1e-9 * max(abs(v), 1e-12)
-    ]
-    return [(v, _explicit_rank(v, marks[v], shown)) for v in plain]
+    if not len(shown):
+        return [(value, Rank.FINE) for value in values.tolist()]
+    after = np.searchsorted(shown, values)
+    nearest = np.minimum(
+        np.abs(values - shown[np.maximum(after - 1, 0)]),
+        np.abs(values - shown[np.minimum(after, len(shown) - 1)]),
+    )
+    plain = nearest > 1e-9 * np.maximum(np.abs(values), 1e-12)
+    ranks = _GapRanks(shown.tolist())
+    rows = zip(values[plain].tolist(), after[plain].tolist(), strict=True)
+    return [(value, ranks.rank(value, marks[value], gap)) for value, gap in rows]
 
 
-def _explicit_rank(value: float, step: float, numbered: Array) -> Rank:
-    """Return middle for the marks that the gap's own coarser legal division would have."""
-    after = int(np.searchsorted(numbered, value))
-    if not 0 < after < len(numbered) or math.isinf(numbered[after]):
-        return Rank.FINE
-    low, high = float(numbered[after - 1]), float(numbered[after])
-    parts = (high - low) / step
-    if abs(parts - round(parts)) > 1e-6 or round(parts) < 2:
-        return Rank.FINE
-    legal = [d.parts for d in legal_divisions(high - low)]
-    division = Division(round(parts), _middle_every(round(parts), legal or [2]))
-    return _rank(round((value - low) / step), division)
+class _GapRanks:
+    """The ranks of explicit marks: middle where the gap's own coarser legal division has a mark."""
+
+    def __init__(self, numbered: Sequence[float]) -> None:
+        self.numbered = numbered
+        self.divisions: dict[tuple[int, float], Division | None] = {}
+
+    def rank(self, value: float, step: float, after: int) -> Rank:
+        """Return the rank of a mark of a step that stands before the ``after``-th numbered value."""
+        if not 0 < after < len(self.numbered):
+            return Rank.FINE
+        low, high = self.numbered[after - 1], self.numbered[after]
+        if (after, step) not in self.divisions:
+            self.divisions[after, step] = _stepped_division(high - low, step)
+        division = self.divisions[after, step]
+        return _rank(round((value - low) / step), division) if division else Rank.FINE
+
+
+def _stepped_division(gap: float, step: float) -> Division | None:
+    parts = gap / step
+    if math.isinf(gap) or abs(parts - round(parts)) > 1e-6 or round(parts) < 2:
+        return None
+    legal = [division.parts for division in legal_divisions(gap)]
+    return Division(round(parts), _middle_every(round(parts), legal or [2]))

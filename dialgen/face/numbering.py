@@ -26,7 +26,6 @@ _HALF_MISFIT = 1.0
 _EXCESS = 0.45
 _OFF_MIDDLE = 0.1
 _QUARTERS = 0.6
-_MOST_STEPS = 24
 _HAIR_MM = 1e-9
 
 
@@ -77,11 +76,12 @@ def _even_steps(ruler: Ruler, forced: tuple[float, ...]) -> tuple[float, ...]:
 def _choices(ruler: Ruler, forced: tuple[float, ...]) -> Iterator[_Choice]:
     """Yield the steps of 1, 2 and 5·10^n that number a bearable count of values, then of 2.5·10^n."""
     span = ruler.end - ruler.start
+    _, most = wanted_count(ruler.length_mm)
     magnitude = math.floor(math.log10(span))
     for mantissa in (10, 20, 50, 25):
         for exponent in range(magnitude - 2, magnitude + 1):
             step = decimal_value(mantissa, exponent - 1)
-            if 1 <= span / step <= _MOST_STEPS:
+            if 1 <= span / step <= 2 * most:
                 values, misfit = _stepped(ruler, step, forced)
                 yield _Choice(step, mantissa == 25, values, misfit)
 

@@ -6,18 +6,22 @@ import math
 from collections.abc import Iterator
 
 from dialgen.drawing import Letters, Point, Style
+from dialgen.face.divisions import Rank
 from dialgen.face.looks import Look
 from dialgen.face.ruling import Mark, RuledScale
 from dialgen.lettering import letters, measure
 
 
-def mark_ends(mark: Mark, side: str, look: Look) -> tuple[Point, Point]:
-    """Return a mark's inner and outer end: from, up to or across its point on the scale line."""
-    length_mm = look.length_mm(mark.rank)
-    inner, outer = {"outward": (0.0, length_mm), "inward": (-length_mm, 0.0)}.get(
-        side, (-length_mm / 2, length_mm / 2)
-    )
+def reaches(side: str, look: Look) -> dict[Rank, tuple[float, float]]:
+    """Return how far marks of each rank reach from their point on the line, inwards (minus) and out."""
+    shares = {"outward": (0.0, 1.0), "inward": (-1.0, 0.0), "across": (-0.5, 0.5)}[side]
+    return {rank: (shares[0] * look.length_mm(rank), shares[1] * look.length_mm(rank)) for rank in Rank}
+
+
+def mark_ends(mark: Mark, reach: tuple[float, float]) -> tuple[Point, Point]:
+    """Return a mark's inner and outer end."""
     (ux, uy), x, y = mark.direction, mark.x, mark.y
+    inner, outer = reach
     return (x + inner * ux, y + inner * uy), (x + outer * ux, y + outer * uy)
 
 
@@ -25,9 +29,10 @@ def numerals(scale: RuledScale) -> Iterator[tuple[Mark, Letters]]:
     """Yield every labelled mark with its numeral."""
     spec, look = scale.spec, scale.look
     style = Style(fill=look.ink)
+    ranks = reaches(spec.marks, look)
     for mark in scale.marks:
         if mark.label:
-            inner, outer = mark_ends(mark, spec.marks, look)
+            inner, outer = mark_ends(mark, ranks[mark.rank])
             ux, uy = mark.direction
             start, away = (outer, (ux, uy)) if spec.numerals == "outside" else (inner, (-ux, -uy))
             box = measure(mark.label, look.numeral_mm)

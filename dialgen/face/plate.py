@@ -6,6 +6,9 @@ import math
 from collections.abc import Iterator
 from typing import Protocol
 
+import numpy as np
+from numpy.typing import ArrayLike, NDArray
+
 from dialgen.dialfile.models import Plate
 from dialgen.drawing import Circle, Layer, Line, Outline, Point, Purpose, Style, Vertex
 from dialgen.errors import InputError
@@ -24,8 +27,8 @@ class Outliner(Protocol):
         """Left, bottom, width and height in millimetres."""
         ...
 
-    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
-        """Return whether a point lies on the plate, at least ``inset_mm`` from its edge."""
+    def holds(self, x: ArrayLike, y: ArrayLike) -> NDArray[np.bool_]:
+        """Return whether each point lies on the plate."""
         ...
 
     def outline(self, style: Style) -> Outline | Circle:
@@ -40,14 +43,15 @@ class Rectangle:
         self.box = box
         self.corner_mm = corner_mm
 
-    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
-        """Return whether the point is inside, corners rounded off."""
+    def holds(self, x: ArrayLike, y: ArrayLike) -> NDArray[np.bool_]:
+        """Return whether each point is inside, corners rounded off."""
         left, bottom, width, height = self.box
-        across = abs(point[0] - left - width / 2) - width / 2 + self.corner_mm
-        upward = abs(point[1] - bottom - height / 2) - height / 2 + self.corner_mm
+        across = np.abs(np.subtract(x, left + width / 2)) - width / 2 + self.corner_mm
+        upward = np.abs(np.subtract(y, bottom + height / 2)) - height / 2 + self.corner_mm
         # Distance from the rectangle shrunk by the corner radius, outside positive.
-        outside = math.hypot(max(across, 0.0), max(upward, 0.0)) + min(max(across, upward), 0.0)
-        return outside <= self.corner_mm - inset_mm + _SLACK_MM
+        outside = np.hypot(np.maximum(across, 0.0), np.maximum(upward, 0.0))
+        outside = outside + np.minimum(np.maximum(across, upward), 0.0)
+        return np.asarray(outside <= self.corner_mm + _SLACK_MM)
 
     def outline(self, style: Style) -> Outline:
         """Return the rectangle, clockwise from the lower left corner upwards."""
@@ -67,9 +71,10 @@ class Disc:
         side = 2 * self.radius_mm
         return self.centre[0] - self.radius_mm, self.centre[1] - self.radius_mm, side, side
 
-    def holds(self, point: Point, inset_mm: float = 0.0) -> bool:
-        """Return whether the point is within the circle."""
-        return math.dist(point, self.centre) <= self.radius_mm - inset_mm + _SLACK_MM
+    def holds(self, x: ArrayLike, y: ArrayLike) -> NDArray[np.bool_]:
+        """Return whether each point is within the circle."""
+        distance = np.hypot(np.subtract(x, self.centre[0]), np.subtract(y, self.centre[1]))
+        return np.asarray(distance <= self.radius_mm + _SLACK_MM)
 
     def outline(self, style: Style) -> Circle:
         """Return the circle."""
@@ -89,7 +94,7 @@ def check_holes(plate: Plate) -> Iterator[InputError]:
     """Yield an error for every hole whose middle is off the plate."""
     shape = outliner(plate)
     for i, hole in enumerate(plate.hole):
-        if not shape.holds(hole.at):
+        if not shape.holds(*hole.at):
             yield InputError(
                 f"the hole at {hole.at[0]:g}, {hole.at[1]:g} is off the plate; "
                 "coordinates count from the pivot",
@@ -107,7 +112,7 @@ def cut_layer(plate: Plate) -> Layer:
 def guide_layer(plate: Plate) -> Layer:
     """Return what helps to fit the plate: a cross at the pivot, and the window of the case."""
     items: list[Line | Outline] = []
-    if outliner(plate).holds((0.0, 0.0)):
+    if outliner(plate).holds(0.0, 0.0):
         items = [
             Line((-_CROSS_MM, 0.0), (_CROSS_MM, 0.0), GUIDE),
             Line((0.0, -_CROSS_MM), (0.0, _CROSS_MM), GUIDE),

@@ -68,6 +68,6 @@ def _over_edge(layer: Layer, plate: Outliner) -> str | None:
                 points, what = [item.start, item.end], "a mark"
             case _:
                 continue
-        if not all(plate.holds(point) for point in points):
+        if not plate.holds(*zip(*points, strict=True)).all():
             return what
     return None

@@ -2,13 +2,15 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+import itertools
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
+from typing import NamedTuple
 
 import numpy as np
 
 from dialgen.dial import Dial, ScaleDial
-from dialgen.dialfile.models import Entry, Every, Scale
+from dialgen.dialfile.models import Every, Scale
 from dialgen.errors import InputError, Key, Refused
 from dialgen.face.checks import check_meets, check_on_plate, check_order
 from dialgen.face.divisions import MOST_MARKS, Rank, divide, stepped
@@ -22,8 +24,7 @@ from dialgen.quantity import plain_number
 from dialgen.stage import Array
 
 
-@dataclass(frozen=True, slots=True)
-class Spot:
+class Spot(NamedTuple):
     """Where a value falls: its drive, the pointer's angle, and the point where that meets the line.
 
     ``direction`` is the unit vector along which a mark there is drawn, away from the pivot.
@@ -37,10 +38,19 @@ class Spot:
     direction: tuple[float, float]
 
 
-@dataclass(frozen=True, slots=True)
-class Mark(Spot):
-    """A mark on the face: its spot, how much it stands out, and the text at it, if any."""
+_Row = tuple[float, float, float, float, float, tuple[float, float]]
+"""The fields of a spot."""
 
+
+class Mark(NamedTuple):
+    """A mark on the face: where its value falls, how much it stands out, and the text at it, if any."""
+
+    value: float
+    drive: float
+    angle_deg: float
+    x: float
+    y: float
+    direction: tuple[float, float]
     rank: Rank
     label: str | None
 
@@ -94,31 +104,26 @@ def _rule_scale(scale: ScaleDial, plate: Outliner, numeral_width: NumeralWidth) 
     ends = scale.chain.angle(np.array([spec.start, spec.end]))
     check_meets(line, ends, [spec.start, spec.end], spec, key)
     look = look_for(spec, abs(float(np.diff(line.along(ends))[0])))
-    entries = _entries(spec, key)
+    asked = _asked(spec, key)
     ruler = survey(scale, line, ends, look, numeral_width)
-    labels = (
-        {v: plain_number(v) for v in auto_numbered(ruler)}
-        if entries is None
-        else {e.at: e.label if e.label is not None else plain_number(e.at) for e in entries}
-    )
-    marks = _marks(spec, key, ruler, sorted(labels), automatic=entries is None)
+    labels = {v: plain_number(v) for v in auto_numbered(ruler)} if asked is None else asked
+    marks = _marks(spec, key, ruler, sorted(labels), automatic=asked is None)
     return RuledScale(scale, line, ends, _placed(scale, line, plate, marks, labels), look)
 
 
-def _entries(spec: Scale, key: Key) -> Sequence[Entry] | None:
-    """Return the values that the file asks to number, checked; None where it leaves them open."""
+def _asked(spec: Scale, key: Key) -> dict[float, str] | None:
+    """Return the values that the file asks to number with their labels; None where it leaves them open."""
     asked = spec.numbered
     if asked is None:
         return None
     if isinstance(asked, Every):
-        count = (spec.end - spec.start) / asked.every
-        if not count <= MOST_MARKS:
+        if not (spec.end - spec.start) / asked.every <= MOST_MARKS:
             raise InputError(
                 f"a step of {asked.every:g} gives over {MOST_MARKS} numerals; take a larger one",
                 (*key, "numbered", "every"),
             )
-        return [Entry(at=v) for v in multiples(asked.every, spec.start, spec.end)]
-    seen: set[float] = set()
+        return {value: plain_number(value) for value in multiples(asked.every, spec.start, spec.end)}
+    labels: dict[float, str] = {}
     for i, entry in enumerate(asked):
         if not spec.start <= entry.at <= spec.end:
             raise InputError(
@@ -127,10 +132,10 @@ def _entries(spec: Scale, key: Key) -> Sequence[Entry] | None:
                 (*key, "numbered", i),
                 (*key, "to"),
             )
-        if entry.at in seen:
+        if entry.at in labels:
             raise InputError(f"{entry.at:g} is numbered twice; leave one out", (*key, "numbered", i))
-        seen.add(entry.at)
-    return asked
+        labels[entry.at] = plain_number(entry.at) if entry.label is None else entry.label
+    return labels
 
 
 def _marks(
@@ -162,13 +167,20 @@ def spots(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tuple[S
     Raises:
         NoSuchValue: a value that the scale cannot show, or where the pointer misses the line.
     """
+    return tuple(itertools.starmap(Spot, _rows(values, *_located(scale, line, values))))
+
+
+def _located(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tuple[Array, ...]:
+    """Return drives, angles, x and y of points, and x and y of the directions there."""
     array = np.array(values)
     drives, angles = scale.chain.drive(array), scale.chain.angle(array)
     check_meets(line, angles, values, scale.spec, scale.key)
-    points = zip(*(axis.tolist() for axis in line.points(angles)), strict=True)
-    directions = zip(*(axis.tolist() for axis in line.directions(angles)), strict=True)
-    rows = zip(values, drives.tolist(), angles.tolist(), points, directions, strict=True)
-    return tuple(Spot(value, drive, angle, x, y, along) for value, drive, angle, (x, y), along in rows)
+    return drives, angles, *line.points(angles), *line.directions(angles)
+
+
+def _rows(values: Sequence[float], *columns: Array) -> Iterator[_Row]:
+    for value, drive, angle, x, y, ux, uy in zip(values, *(c.tolist() for c in columns), strict=True):
+        yield value, drive, angle, x, y, (ux, uy)
 
 
 def _placed(
@@ -179,10 +191,9 @@ def _placed(
     labels: dict[float, str],
 ) -> tuple[Mark, ...]:
     values = [value for value, _ in marks]
-    found = spots(scale, line, values)
-    check_order(values, [spot.angle_deg for spot in found], scale.key)
-    check_on_plate(plate, values, [(spot.x, spot.y) for spot in found], scale.spec, scale.key)
-    return tuple(
-        Mark(s.value, s.drive, s.angle_deg, s.x, s.y, s.direction, rank, labels.get(s.value))
-        for s, (_, rank) in zip(found, marks, strict=True)
-    )
+    columns = _located(scale, line, values)
+    _, angles, xs, ys, *_ = columns
+    check_order(values, angles, scale.key)
+    check_on_plate(plate, values, (xs, ys), scale.spec, scale.key)
+    rows = zip(_rows(values, *columns), marks, strict=True)
+    return tuple(Mark(*row, rank, labels.get(value)) for row, (value, rank) in rows)

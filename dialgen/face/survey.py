@@ -9,6 +9,7 @@ import numpy as np
 
 from dialgen.dial import ScaleDial
 from dialgen.dialfile.models import Scale
+from dialgen.errors import InputError
 from dialgen.face.looks import Look
 from dialgen.face.ruler import UNEVEN, Ruler
 from dialgen.geometry.lines import ScaleLine
@@ -17,6 +18,7 @@ from dialgen.stage import Array
 
 _STEPS = 96
 _FEW_STEPS = 32
+_LEAST_STEP, _LARGEST_VALUE = 1e-30, 1e30
 
 NumeralWidth = Callable[[str, float], float]
 """The width in mm of a numeral's text at a height in mm."""
@@ -77,6 +79,12 @@ def _along(scale: ScaleDial, line: ScaleLine, ends_deg: Array, place_mm: Callabl
     places = np.abs(line.along(angles) - line.along(ends_deg[:1]))
     along = scale.chain.value(np.interp(np.linspace(0.0, places[-1], _STEPS + 1), places, angles))
     along[0], along[-1] = spec.start, spec.end
+    if np.abs(along[1:-1]).max() > _LARGEST_VALUE or not (np.diff(along) > _LEAST_STEP).all():
+        raise InputError(
+            "equal steps along the scale stand for values too near or too large to tell; "
+            "choose a law or circuit that spreads them",
+            (*scale.key, "law"),
+        )
     return along
 
 

@@ -7,10 +7,10 @@ import math
 import numpy as np
 
 from dialgen.dial import ScaleDial
-from dialgen.face.ruling import RuledScale, Spot
+from dialgen.face.ruling import Mark, RuledScale, Spot
 
 
-def linear_error(ruled: RuledScale, spot: Spot) -> float | None:
+def linear_error(ruled: RuledScale, spot: Spot | Mark) -> float | None:
     """Return the error that a linear face would have had at a value, in face units.
 
     The linear face is divided evenly between the nominal angles of the scale's ends, for the

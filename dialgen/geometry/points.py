@@ -94,6 +94,10 @@ class Observed:
                 return through(values, positions_deg)
             if any(not b > a for a, b in pairwise(values)):
                 raise InputError("the points must stand in ascending order of value; sort them")
+            if values[0] <= -half:
+                raise InputError(
+                    f"an ohms circuit with half {half:g} shows nothing at {values[0]:g}; leave it out"
+                )
             shares = [half / (half + value) for value in values]
             return _OhmsWise(through(shares[::-1], positions_deg[::-1]), half)
         except InputError as error:

@@ -80,13 +80,20 @@ class Font:
         return Glyph(f"{self.name}-{self._hb.glyph_to_string(glyph_id)}", path, ink_box(path))
 
 
-@cache
-def fonts() -> tuple[Font, ...]:
-    """Return the fonts, opened, the one to ask first at the front."""
-    return (
-        _open("barlow", "fontpkg_barlow_semi_condensed", "BarlowSemiCondensed-Medium.ttf"),
-        _open("fira", "fontpkg_fira_sans_condensed", "FiraSansCondensed-Regular.ttf"),
-    )
+_FILES = (
+    ("barlow", "fontpkg_barlow_semi_condensed", "BarlowSemiCondensed-Medium.ttf"),
+    ("fira", "fontpkg_fira_sans_condensed", "FiraSansCondensed-Regular.ttf"),
+)
+
+
+def fonts() -> Iterator[Font]:
+    """Yield the fonts, the one to ask first at the front; each is opened when it is first reached."""
+    yield from map(_open, range(len(_FILES)))
+
+
+def main_font() -> Font:
+    """Return the font that is asked first."""
+    return _open(0)
 
 
 @cache
@@ -128,9 +135,11 @@ def _span(steps: list[tuple[float, ...]]) -> tuple[float, float]:
     return min(reached), max(reached)
 
 
-def _open(name: str, package: str, file: str) -> Font:
+@cache
+def _open(index: int) -> Font:
     from importlib.resources import files
 
+    name, package, file = _FILES[index]
     return Font(name, (files(package) / "files" / file).read_bytes())
 
 

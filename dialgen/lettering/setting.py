@@ -17,7 +17,7 @@ from itertools import groupby
 
 from dialgen.drawing import Glyph, Letters, Placed, Point, Style
 from dialgen.errors import CharacterError, InputError
-from dialgen.lettering.fonts import Font, font_for, fonts
+from dialgen.lettering.fonts import Font, font_for, main_font
 
 NUMERAL_CHARACTERS = "0123456789+\N{MINUS SIGN}.,\N{INFINITY} "
 """The characters of numerals: no two of them kern, so they are set without the shaper."""
@@ -174,7 +174,7 @@ def _set_numeral(text: str) -> _Line:
     """Set a text of numeral characters alone; raise KeyError at any other."""
     advances, cap_units = _numeral_advances()
     inked = _numeral_glyphs()
-    em = fonts()[0].ems_per_cap
+    em = main_font().ems_per_cap
     spots: list[_Spot] = []
     pen = 0
     for character in text:
@@ -239,12 +239,12 @@ def _font_or_refuse(character: str, text: str) -> Font:
 @cache
 def _numeral_advances() -> tuple[dict[str, int], int]:
     """Return the advance of each numeral character, and the height of a capital, in font units."""
-    font = fonts()[0]
+    font = main_font()
     return {c: advance for c in NUMERAL_CHARACTERS for _, advance, _, _ in font.shape(c)}, font.cap_units
 
 
 @cache
 def _numeral_glyphs() -> dict[str, Glyph]:
     """Return the glyph of each numeral character."""
-    font = fonts()[0]
+    font = main_font()
     return {c: font.glyph(glyph_id) for c in NUMERAL_CHARACTERS for glyph_id, _, _, _ in font.shape(c)}

@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import math
 import re
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from functools import lru_cache
+from itertools import groupby
 from typing import assert_never
 from xml.etree import ElementTree
 
@@ -19,6 +20,8 @@ from dialgen.renderers.runs import Lines, Run, fill_of, inked_glyphs, layer_name
 # An A command gives an arc by its ends.  Near half a turn the centre that follows from them swings
 # wildly: ends rounded by 5e-6 mm move it by 0.02 mm.  Up to 120 degrees it moves no more than they do.
 _WIDEST_DEG = 120.0
+# Less than this, in ems, is rounding: a line of lettering is level.
+_LEVEL = 1e-9
 
 # What XML 1.0 cannot hold, escaped or not.
 _NOT_XML = re.compile("[^\t\n\r -\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
@@ -102,18 +105,36 @@ class _Word:
         self._xml = ElementTree.Element(
             "g", {"aria-label": _xml_text(letters.text), "fill": fill, "role": "img"}
         )
-        for placed in letters.glyphs:
-            if not placed.glyph.path:
-                continue
-            if ids:
-                place = {"transform": _matrix(placed), "xlink:href": f"#{ids[placed.glyph.name]}"}
-                ElementTree.SubElement(self._xml, "use", place)
-            else:
+        inked = [placed for placed in letters.glyphs if placed.glyph.path]
+        if not ids:
+            for placed in inked:
                 ElementTree.SubElement(self._xml, "path", {"d": _data(placed_steps(placed))})
+            return
+        # Letters of one size and turn, most often the whole string, share one matrix.
+        sets = [list(group) for _, group in groupby(inked, lambda p: (p.size_mm, p.angle_deg))]
+        for group in sets:
+            home = self._xml if len(sets) == 1 else ElementTree.SubElement(self._xml, "g")
+            home.set("transform", _matrix(group[0]))
+            _use(home, group, ids)
 
     def get_xml(self) -> ElementTree.Element:
         """Return the group."""
         return self._xml
+
+
+def _use(home: ElementTree.Element, group: Sequence[Placed], ids: Mapping[str, str]) -> None:
+    """Add letters of one size and turn, each by how many ems it stands along and above the first."""
+    first = group[0]
+    turn = math.radians(first.angle_deg)
+    cos, sin = math.cos(turn) / first.size_mm, math.sin(turn) / first.size_mm
+    for placed in group:
+        place = {"xlink:href": f"#{ids[placed.glyph.name]}"}
+        dx, dy = placed.x - first.x, placed.y - first.y
+        if along := dx * cos - dy * sin:
+            place["x"] = number(along)
+        if abs(above := dx * sin + dy * cos) > _LEVEL:
+            place["y"] = number(-above)
+        ElementTree.SubElement(home, "use", place)
 
 
 def _paint(run: Run) -> dict[str, str]:

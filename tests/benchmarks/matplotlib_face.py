@@ -39,8 +39,13 @@ def draw(face: dict, suffix: str) -> bytes:
         radius = arc["radius"]
         axes.add_patch(
             Arc(
-                arc["centre"], 2 * radius, 2 * radius, theta1=90 - arc["end"], theta2=90 - arc["start"],
-                color=arc["colour"], linewidth=arc["width"] * points,
+                arc["centre"],
+                2 * radius,
+                2 * radius,
+                theta1=90 - arc["end"],
+                theta2=90 - arc["start"],
+                color=arc["colour"],
+                linewidth=arc["width"] * points,
             )  # fmt: skip
         )
     for x, y, radius in face["circles"]:
@@ -48,8 +53,13 @@ def draw(face: dict, suffix: str) -> bytes:
     for box in face["boxes"]:
         axes.add_patch(
             FancyBboxPatch(
-                box[:2], box[2], box[3], boxstyle="round,pad=0,rounding_size=2", fill=False,
-                edgecolor="#d00000", linewidth=0.1 * points,
+                box[:2],
+                box[2],
+                box[3],
+                boxstyle="round,pad=0,rounding_size=2",
+                fill=False,
+                edgecolor="#d00000",
+                linewidth=0.1 * points,
             )  # fmt: skip
         )
     font = FontProperties(family="DejaVu Sans")
@@ -65,7 +75,9 @@ def draw(face: dict, suffix: str) -> bytes:
             place = Affine2D().translate(label["x"], label["y"]) + axes.transData
             axes.add_patch(PathPatch(path, transform=place, facecolor="#000000", linewidth=0))
     out = io.BytesIO()
-    figure.savefig(out, format=suffix[1:], metadata={"Date": None} if suffix == ".svg" else {"CreationDate": None})
+    figure.savefig(
+        out, format=suffix[1:], metadata={"Date": None} if suffix == ".svg" else {"CreationDate": None}
+    )
     return out.getvalue()
 
 

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 import os
 import re
 import tempfile
@@ -15,7 +16,7 @@ from hypothesis import strategies as st
 
 from dialgen import api
 from dialgen.dialfile import Source, parse
-from dialgen.errors import DialFileError, DialgenError
+from dialgen.errors import DialFileError, DialgenError, NoSuchValue
 
 _EXAMPLES = int(os.environ.get("DIALGEN_FUZZ", "200"))
 _FUZZ = settings(max_examples=_EXAMPLES, deadline=2000, suppress_health_check=[HealthCheck.too_slow])
@@ -215,6 +216,18 @@ def _load_and_draw(text: bytes) -> None:
         for scale in face.scales:
             angles = [mark.angle_deg for mark in scale.marks]
             assert angles in (sorted(angles), sorted(angles, reverse=True))
+        for number in range(1, len(face.scales) + 1):
+            _ask(face, number)
+
+
+def _ask(face: api.Face, scale: int) -> None:
+    """Ask a face for angles and values far outside it: it answers with a number or refuses."""
+    for asked in (0.0, -1.0, 1e-300, 1e300, -1e300, math.inf, -math.inf, math.nan, 50.0, 359.0):
+        for answer in (face.angle, face.value):
+            try:
+                assert not math.isnan(answer(asked, scale))
+            except NoSuchValue as error:
+                assert "; " in error.message  # noqa: PT017
 
 
 @_FUZZ

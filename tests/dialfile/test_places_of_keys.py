@@ -95,6 +95,7 @@ def test_no_key_of_any_toml_is_missed(value: object) -> None:
     ("key", "text"),
     [
         ((), ""),
+        (("Ω", "a b", "c\n"), '"Ω"."a b"."c\\n"'),
         (("scale", 0, "to"), "scale[1].to"),
         (("a", "b", 2, 0), "a.b[3][1]"),
         (("x" * 99,), "x" * 77 + "..."),

@@ -57,9 +57,13 @@ def svg_figures(data: bytes) -> list[Figure]:
             figures.append(np.column_stack([cx + r * np.cos(turn), cy + r * np.sin(turn)]))
             continue
         source = ids[element.get(f"{XLINK}href")[1:]] if element.tag == f"{SVG}use" else element
-        a, b, c, d, e, f = _svg_matrix(element.get("transform"))
-        for x, y in (contour.T for contour in svg_path(source.get("d"))):
-            figures.append(np.column_stack([a * x + c * y + e, b * x + d * y + f]))
+        moved = [float(element.get(axis, 0)) for axis in "xy"] if source is not element else [0.0, 0.0]
+        for contour in svg_path(source.get("d")):
+            figure = contour + moved
+            for outer in (element, *element.iterancestors()):
+                a, b, c, d, e, f = _svg_matrix(outer.get("transform"))
+                figure = figure @ [[a, b], [c, d]] + [e, f]
+            figures.append(figure)
     return [figure * (1, -1) for figure in figures]
 
 

@@ -235,6 +235,7 @@ def _check_ends(made: ScaleDial) -> None:
         raise
     if abs(last - first) < _LEAST_TRAVEL_DEG:
         raise InputError(
-            f"the whole scale takes {abs(last - first):.2g} degrees; change from, to, the circuit or its full",
+            f"the whole scale takes {abs(last - first):.2g} degrees; "
+            "change from, to, the circuit or its full",
             (*key, "to"),
         )

@@ -20,6 +20,7 @@ def draw(face: dict, suffix: str) -> bytes:
     from matplotlib.figure import Figure
     from matplotlib.font_manager import FontProperties
     from matplotlib.patches import Arc, Circle, FancyBboxPatch, PathPatch
+    from matplotlib.path import Path
     from matplotlib.textpath import TextPath
     from matplotlib.transforms import Affine2D
 
@@ -46,7 +47,7 @@ def draw(face: dict, suffix: str) -> bytes:
                 theta2=90 - arc["start"],
                 color=arc["colour"],
                 linewidth=arc["width"] * points,
-            )  # fmt: skip
+            )
         )
     for x, y, radius in face["circles"]:
         axes.add_patch(Circle((x, y), radius, fill=False, color="#d00000", linewidth=0.1 * points))
@@ -60,20 +61,27 @@ def draw(face: dict, suffix: str) -> bytes:
                 fill=False,
                 edgecolor="#d00000",
                 linewidth=0.1 * points,
-            )  # fmt: skip
+            )
         )
     font = FontProperties(family="DejaVu Sans")
+    outlines = []
     for label in face["labels"]:
         if suffix == ".svg":
             axes.text(
-                label["x"], label["y"], label["text"], ha="center", va="center",
-                fontsize=label["height"] * 1.4 * points, fontproperties=font,
-            )  # fmt: skip
+                label["x"],
+                label["y"],
+                label["text"],
+                ha="center",
+                va="center",
+                fontsize=label["height"] * 1.4 * points,
+                fontproperties=font,
+            )
         else:
-            # matplotlib embeds its font in a PDF; outlines take a path.
+            # matplotlib embeds its font in a PDF; for outlines all labels become one path.
             path = TextPath((0, 0), label["text"], size=label["height"] * 1.4, prop=font)
-            place = Affine2D().translate(label["x"], label["y"]) + axes.transData
-            axes.add_patch(PathPatch(path, transform=place, facecolor="#000000", linewidth=0))
+            outlines.append(path.transformed(Affine2D().translate(label["x"], label["y"])))
+    if outlines:
+        axes.add_patch(PathPatch(Path.make_compound_path(*outlines), facecolor="#000000", linewidth=0))
     out = io.BytesIO()
     figure.savefig(
         out, format=suffix[1:], metadata={"Date": None} if suffix == ".svg" else {"CreationDate": None}
@@ -87,8 +95,12 @@ def describe(drawing: object) -> dict:
 
     face: dict = {
         "page": [drawing.left, drawing.bottom, drawing.width, drawing.height],
-        "lines": [], "arcs": [], "circles": [], "boxes": [], "labels": [],
-    }  # fmt: skip
+        "lines": [],
+        "arcs": [],
+        "circles": [],
+        "boxes": [],
+        "labels": [],
+    }
     groups: dict = {}
     for layer in drawing.layers:
         for item in layer.items:
@@ -97,9 +109,15 @@ def describe(drawing: object) -> dict:
                     groups.setdefault(item.style, []).append([item.start, item.end])
                 case Arc():
                     face["arcs"].append(
-                        {"centre": item.centre, "radius": item.radius_mm, "start": item.start_deg,
-                         "end": item.end_deg, "width": item.style.width_mm, "colour": item.style.stroke}
-                    )  # fmt: skip
+                        {
+                            "centre": item.centre,
+                            "radius": item.radius_mm,
+                            "start": item.start_deg,
+                            "end": item.end_deg,
+                            "width": item.style.width_mm,
+                            "colour": item.style.stroke,
+                        }
+                    )
                 case Circle():
                     face["circles"].append([*item.centre, item.radius_mm])
                 case Outline():

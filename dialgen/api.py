@@ -156,7 +156,9 @@ def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
     waiting: list[tuple[str, Path]] = []
     try:
         for path, data in files:
-            waiting.append((_written_beside(path, data), path))
+            # Through a link the file it leads to is replaced, not the link.
+            target = Path(os.path.realpath(path))
+            waiting.append((_written_beside(target, data), target))
         while waiting:
             temporary, path = waiting[0]
             os.replace(temporary, path)

@@ -154,6 +154,17 @@ def test_a_failed_draw_leaves_the_old_file(dial_file: Path) -> None:
     assert sorted(p.name for p in dial_file.parent.iterdir()) == ["meter.svg", "meter.toml"]
 
 
+def test_an_output_that_is_a_link_is_written_through(dial_file: Path) -> None:
+    """Drawing to a symbolic link replaces the file it leads to and keeps the link."""
+    target = dial_file.with_name("real.svg")
+    target.write_text("old", encoding="utf-8")
+    link = dial_file.with_name("link.svg")
+    link.symlink_to(target)
+    run("draw", dial_file, "-o", link)
+    assert link.is_symlink()
+    assert target.read_bytes().startswith(b"<?xml")
+
+
 def test_watch_draws_again_when_the_file_changes(dial_file: Path) -> None:
     """``--watch`` draws, survives a mistake, draws again once it is mended, and ends at Ctrl-C."""
     output = dial_file.with_suffix(".svg")

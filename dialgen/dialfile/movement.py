@@ -129,18 +129,17 @@ class Movement(Table):
                 f"the stops {low:g} and {high:g} leave no swing; give the lower angle first", ("stops",)
             )
 
-    @needs("stops", "rest", "full")
-    def _between_stops(self) -> Iterator[InputError]:
-        if self.stops is None or not self.stops[0] < self.stops[1]:
-            return
-        low, high = self.stops
-        for name, at in (("rest", self.rest), ("full", self.full)):
-            if not low <= at <= high:
+    @needs("stops", "full")
+    def _full_between_stops(self) -> Iterator[InputError]:
+        # The rest point may lie beyond: a mechanically suppressed zero stands against its stop.
+        if self.stops is not None and self.stops[0] < self.stops[1]:
+            low, high = self.stops
+            if not low <= self.full <= high:
                 yield InputError(
-                    f"{name} at {at:g} degrees is beyond the stops {low:g} and {high:g}; "
-                    f"widen the stops or move {name}",
+                    f"full at {self.full:g} degrees is beyond the stops {low:g} and {high:g}; "
+                    "widen the stops or move full",
                     ("stops",),
-                    (name,),
+                    ("full",),
                 )
 
     @needs("reading", "readings")

@@ -123,19 +123,7 @@ def _asked(spec: Scale, key: Key) -> dict[float, str] | None:
                 (*key, "numbered", "every"),
             )
         return {value: plain_number(value) for value in multiples(asked.every, spec.start, spec.end)}
-    labels: dict[float, str] = {}
-    for i, entry in enumerate(asked):
-        if not spec.start <= entry.at <= spec.end:
-            raise InputError(
-                f"{entry.at:g} is outside the scale, {spec.start:g} to {spec.end:g}; "
-                "leave it out or widen the scale",
-                (*key, "numbered", i),
-                (*key, "to"),
-            )
-        if entry.at in labels:
-            raise InputError(f"{entry.at:g} is numbered twice; leave one out", (*key, "numbered", i))
-        labels[entry.at] = plain_number(entry.at) if entry.label is None else entry.label
-    return labels
+    return {e.at: plain_number(e.at) if e.label is None else e.label for e in asked}
 
 
 def _marks(

@@ -254,12 +254,12 @@ SENSE = [
         "the lower angle first",
     ),
     Bad(
-        "rest beyond stops",
-        "rest = -44.0",
-        "rest = -60.0",
+        "full beyond stops",
+        "full = 44.0",
+        "full = 60.0",
         "13:1",
         "movement.stops",
-        "rest at -60 degrees is beyond",
+        "full at 60 degrees is beyond",
     ),
     Bad(
         "value beyond stops",

@@ -69,7 +69,6 @@ _SEVERAL = [
         + _PLATE
         + _SCALE,
         [
-            "movement.stops: rest at -60 degrees is beyond the stops",
             "movement.stops: full at 60 degrees is beyond the stops",
             "movement.old.full: the old scale runs from 1 to 1",
             "movement.old.zz: not a key here",

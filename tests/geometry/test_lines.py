@@ -158,6 +158,7 @@ def test_places_along_a_line_are_distances_and_rise_with_the_angle(x1, y1, x2, y
 @given(st.floats(-170.0, 170.0), st.floats(20.0, 60.0), st.floats(-15.0, 15.0), st.floats(-15.0, 15.0))
 def test_mirrored_arc_has_mirrored_points(angle, radius, cx, cy):
     """The arc with its centre mirrored meets the mirrored pointer at the mirrored point."""
+    assume(math.hypot(cx, cy) < radius)  # from outside the arc, some pointers miss it
     x, y = ArcLine(radius, (cx, cy)).points(np.array(angle))
     mx, my = ArcLine(radius, (-cx, cy)).points(np.array(-angle))
     assert (float(mx), float(my)) == (-float(x), float(y))

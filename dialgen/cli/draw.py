@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+import contextlib
 import time
+from collections.abc import Callable
 from pathlib import Path
 
 import click
@@ -109,9 +111,13 @@ def _draw(
     )
 
 
-def _watch(file: str, draw: object) -> None:
-    """Draw now and at every change of the dial file or a CSV beside it, and say so."""
-    assert callable(draw)
+def _watch(file: str, draw: Callable[[], None]) -> None:
+    """Draw now and at every change of the dial file or a CSV beside it, until Ctrl-C."""
+    with contextlib.suppress(KeyboardInterrupt):
+        _draw_at_changes(file, draw)
+
+
+def _draw_at_changes(file: str, draw: Callable[[], None]) -> None:
     folder = Path(file).parent
     say(f"watching {file}; Ctrl-C stops")
     seen: object = None

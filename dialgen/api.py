@@ -1,9 +1,11 @@
-"""Dial, face and renderers put together: what both ways in, command line and workbench, stand on."""
+"""Dial, face and renderers put together: what every way in stands on."""
 
 from __future__ import annotations
 
+import errno
 import os
 import secrets
+import shutil
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from functools import cached_property
@@ -118,6 +120,7 @@ class Face:
         """Write the face to ``path``, whose ending says in which format; see `render`.
 
         Raises:
+            InputError, MissingExtra: as `render` does.
             OutputError: the file cannot be written; one already there is left as it was.
         """
         data = self.render(
@@ -150,10 +153,14 @@ def load(path: str | PathLike[str]) -> Face:
 def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
     """Write files whole: each to a neighbour first, and all into place only when all are written.
 
+    A new file has the usual rights, one that is replaced keeps its own.
+
     Raises:
-        OutputError: one cannot be written; then none is touched.
+        OutputError: one cannot be written, and none is put into place; or, rarely, one cannot be
+            put into place, and those before it already are.
     """
-    waiting: list[tuple[str, Path]] = []
+    waiting: list[tuple[Path, Path]] = []
+    path = Path()
     try:
         for path, data in files:
             # Through a link the file it leads to is replaced, not the link.
@@ -164,27 +171,31 @@ def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
             os.replace(temporary, path)
             waiting.pop(0)
     except (OSError, ValueError) as error:
-        reason = getattr(error, "strerror", None) or str(error)
-        raise OutputError(
-            f"{path}: cannot be written: {reason}; give a path in a folder you may write to"
-        ) from None
+        raise OutputError(f"{path}: cannot be written: {_why(error)}") from None
     finally:
         for temporary, _ in waiting:
-            Path(temporary).unlink(missing_ok=True)
+            temporary.unlink(missing_ok=True)
 
 
-def _written_beside(path: Path, data: bytes) -> str:
-    """Write a new file next to ``path`` and return its name; its rights are those of any new file."""
+def _why(error: OSError | ValueError) -> str:
+    reason = (getattr(error, "strerror", None) or str(error)).lower()
+    full = isinstance(error, OSError) and error.errno in (errno.ENOSPC, errno.EDQUOT, errno.EFBIG)
+    return f"{reason}; {'make room' if full else 'give a path in a folder you may write to'}"
+
+
+def _written_beside(path: Path, data: bytes) -> Path:
+    """Write a new file next to ``path`` and return it."""
     if path.is_dir():
-        raise IsADirectoryError(21, "it is a folder", str(path))
-    name = str(path.with_name(f".{path.name[:40]}.{os.getpid()}.{secrets.token_hex(4)}.tmp"))
-    with open(name, "xb") as file:
-        try:
-            file.write(data)
-        except BaseException:
-            os.unlink(name)
-            raise
-    return name
+        raise IsADirectoryError(errno.EISDIR, "it is a folder", str(path))
+    neighbour = path.with_name(f".{path.name[:40]}.{os.getpid()}.{secrets.token_hex(4)}.tmp")
+    try:
+        neighbour.write_bytes(data)
+        if path.exists():
+            shutil.copymode(path, neighbour)
+    except BaseException:
+        neighbour.unlink(missing_ok=True)
+        raise
+    return neighbour
 
 
 def _like(given: ArrayLike, made: Array) -> float | Array:

@@ -40,7 +40,7 @@ class InputError(DialgenError, ValueError):
         self.keys = keys
 
     def under(self, *prefix: str | int) -> InputError:
-        """Return this error with every key placed under ``prefix``, for the caller that knows where."""
+        """Put every key under ``prefix``, in place, for the caller that knows where; return this error."""
         self.keys = tuple((*prefix, *key) for key in self.keys) or (prefix,)
         return self
 

@@ -175,11 +175,19 @@ def _line_at(lines: Lines, side: str, point: np.ndarray, direction: np.ndarray) 
 
 
 def _found(path: Path, lines: Lines) -> np.ndarray:
-    """Return the line of every mark, a row each; those of a rank are of one length, finer ones shorter."""
+    """Return the line of every mark, a row each; those of a rank reach equally far, finer ones less.
+
+    From a straight scale line all of a rank end at one height, so marks that lean are longer.
+    """
     rows, lengths = [], {}
     for rank, side, point, direction in _marks(path):
         rows.append(_line_at(lines, side, point, direction))
         length = math.dist(rows[-1][:2], rows[-1][2:])
+        straight = _face(path).scales[int(rank.split()[0])].spec.line
+        if straight is not None:
+            along = np.subtract(straight[1], straight[0])
+            along = along / math.hypot(*along)
+            length *= abs(along[0] * direction[1] - along[1] * direction[0])
         assert lengths.setdefault(rank, length) == pytest.approx(length, abs=2 * MICRON_MM)
     for number in {rank.split()[0] for rank in lengths}:
         ranked = [

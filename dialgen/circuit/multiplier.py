@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
-from dialgen.circuit.terminals import Terminals
+from dialgen.circuit.terminals import RESISTANCE_KEY, Terminals
 from dialgen.errors import InputError
 from dialgen.quantity import OHM, VOLT, VOLT_ABOVE, Amount
 from dialgen.stage import Affine, Stage
@@ -44,6 +44,6 @@ class Multiplier:
                     f"what is in series need {known_ohm * coil_a:.4g} V; "
                     "take a larger range or a more sensitive movement",
                     ("range",),
-                    ("movement", "resistance"),
+                    RESISTANCE_KEY,
                 )
         return Affine(1.0 / (whole_ohm * coil_a), -suppress_v / (whole_ohm * coil_a))

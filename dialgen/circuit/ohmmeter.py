@@ -51,19 +51,7 @@ class ShuntOhmmeter:
     battery: Annotated[Amount | None, VOLT_ABOVE] = None
 
     def stage(self, terminals: Terminals) -> Stage:
-        """Return signal/(signal + half), by current division.
-
-        Raises:
-            InputError: half is not below the coil's own resistance, beside which it must stand.
-        """
-        coil_ohm = terminals.coil.resistance
-        if coil_ohm is not None and self.battery and self.half.value > coil_ohm * (1 + 1e-9):
-            raise InputError(
-                f"half scale lies at the coil and its feed in parallel, below the coil's {coil_ohm:g} Ω, "
-                f"not at {self.half.value:g} Ω; take a smaller half",
-                ("half",),
-                ("movement", "resistance"),
-            )
+        """Return signal/(signal + half), by current division; ``battery`` is for the design of its feed."""
         return _ShuntStage(self.half.value)
 
 

@@ -8,7 +8,7 @@ from typing import Annotated, ClassVar
 
 from dialgen.circuit.terminals import CURRENT_KEY, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, OHM_ABOVE, VOLT_ABOVE, Amount
+from dialgen.quantity import AMPERE, OHM, OHM_ABOVE, VOLT_ABOVE, Amount, shown
 from dialgen.stage import Affine, Stage
 
 RATED = 'a bought shunt, "100 A/75 mV"'
@@ -39,7 +39,7 @@ def read_rating(text: object) -> Rating:
     0.00075
     """
     if not isinstance(text, str) or len(parts := re.split(r"\s*/\s*", text)) != 2:
-        raise ValueError(f'{text!r} is not a shunt\'s rating; write for example "100 A/75 mV"')
+        raise ValueError(f'{shown(text)} is not a shunt\'s rating; write for example "100 A/75 mV"')
     current, drop = AMPERE.read(parts[0]), VOLT_ABOVE.read(parts[1])
     return Rating(current_a=current.value, drop_v=drop.value)
 

@@ -15,7 +15,7 @@ from dialgen.dial.chain import Chain
 from dialgen.dial.wiring import Wiring, half_value, link, past_points, wire
 from dialgen.dialfile.models import DialFile, Movement, Scale
 from dialgen.errors import InputError, Key, NoSuchValue, Refused, Remark
-from dialgen.geometry.correction import Correction
+from dialgen.geometry.correction import NO_DEPARTURE, Correction
 from dialgen.geometry.points import Observed
 from dialgen.geometry.response import EVEN
 from dialgen.geometry.sampling import check_one_way, sample_places
@@ -193,7 +193,7 @@ class _Maker:
         made, _ = link(stage, sample_places((scale.start, scale.end), 33))
         movement = self.movement
         chain = Chain((made,), None, movement.rest, movement.full, self.stops_deg, scale.unit)
-        return ScaleDial(scale, key, chain, Correction(stage=Affine(1.0)), None)
+        return ScaleDial(scale, key, chain, Correction(stage=NO_DEPARTURE), None)
 
     def _by_drive(self, drives: Array) -> Array:
         movement = self.movement

@@ -119,12 +119,11 @@ class Chain:
                 hair = _GRAIN * size
                 outside = ~((step >= low - hair) & (step <= high + hair))
                 if outside.any():
-                    self._refuse(value, outside)
+                    raise self._refusal(value, outside)
                 step = np.clip(step, low, high)
             step, size = link.stage.forward(step), link.size
-        if np.isfinite(step).all():
-            return step
-        self._refuse(value, ~np.isfinite(step))
+        if not np.isfinite(step).all():
+            raise self._refusal(value, ~np.isfinite(step))
         return step
 
     @quietly
@@ -148,11 +147,11 @@ class Chain:
             )
         return result
 
-    def _refuse(self, value: Array, bad: NDArray[np.bool_]) -> None:
+    def _refusal(self, value: Array, bad: NDArray[np.bool_]) -> NoSuchValue:
         first = value[bad].flat[0]
         if math.isnan(first):
-            raise NoSuchValue("a value that is not a number has no angle; give a number")
-        raise NoSuchValue(
+            return NoSuchValue("a value that is not a number has no angle; give a number")
+        return NoSuchValue(
             f"{self._named(first)} is outside what the law and the circuit can show; give another value"
         )
 

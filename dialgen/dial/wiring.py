@@ -101,7 +101,7 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         circuit_link, drives = link(circuit.stage(terminals), signals)
     except InputError as error:
         raise _placed(error, circuit_key) from None
-    prefix_link = [Link(Affine(factor), abs(span[0]))] if factor != 1.0 else []
+    prefix_link = [link(Affine(factor), values)[0]] if factor != 1.0 else []
     return Wiring(
         links=(*prefix_link, law_link, circuit_link),
         drives=drives,
@@ -170,10 +170,11 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key, circuit
     if circuit.takes is None or unit is None or circuit.takes == unit:
         return
     plain = isinstance(law, Linear) and law.per is None
-    names = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
+    names: dict[str, str] = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
     what = names.get(unit, f"in {unit}") if unit else "a pure number"
     raise InputError(
-        f"the {circuit.kind} takes {names[circuit.takes]}, but the scale's signal is {what}; "
+        f"the {circuit.kind} takes {names.get(circuit.takes, circuit.takes)}, "
+        f"but the scale's signal is {what}; "
         "change the unit, the law or the circuit",
         (*key, "unit" if plain else "law"),
         (*circuit_key, "kind"),

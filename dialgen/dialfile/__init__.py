@@ -12,7 +12,7 @@ from dialgen.dialfile.faults import complaints, foreign_faults
 from dialgen.dialfile.models import DialFile
 from dialgen.dialfile.readings import Reading
 from dialgen.dialfile.source import Source, read_text, read_toml
-from dialgen.errors import DialFileError, Fault, Key
+from dialgen.errors import DialFileError, Fault, InputError, Key
 
 __all__ = ["DialFile", "Source", "parse", "read"]
 
@@ -26,11 +26,9 @@ def read(path: str | PathLike[str]) -> tuple[DialFile, Source]:
     name = fspath(path)
     file = Path(name)
     try:
-        text = read_text(file, "the dial file")
-    except DialFileError as error:
-        raise DialFileError([replace(fault, file=name) for fault in error.faults]) from None
-    except ValueError as error:
-        raise DialFileError([Fault(file=name, line=1, column=1, key="", message=str(error))]) from None
+        text = read_text(file, name, "the dial file")
+    except InputError as error:
+        raise DialFileError([Fault(file=name, line=1, column=1, key="", message=error.message)]) from None
     return parse(Source(name=name, folder=file.parent, text=text))
 
 

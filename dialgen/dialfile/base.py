@@ -11,7 +11,7 @@ import difflib
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from functools import cache
 from pathlib import Path
-from typing import Annotated, Any, Self, TypeVar
+from typing import Annotated, Any, Self, TypeAlias, TypeVar
 
 from pydantic import (
     BaseModel,
@@ -23,12 +23,12 @@ from pydantic import (
     model_validator,
 )
 
-from dialgen.errors import InputError, Key, Refused
+from dialgen.errors import InputError, Key
 
 _LONGEST_KEY = 40
 _TELLING = 3
 _OTHER_NAMES = {
-    "type": ("kind",), "model": ("kind",), "colour": ("ink",), "color": ("colour", "ink"),
+    "type": ("kind",), "model": ("kind",),
     "center": ("centre",), "width": ("size",), "height": ("size",), "min": ("from",), "max": ("to",),
     "start": ("from",), "end": ("to",), "step": ("every",), "text": ("say",), "label": ("say",),
     "position": ("at",), "zero": ("rest",), "length": ("pointer",), "arc": ("radius",),
@@ -62,6 +62,27 @@ class Flaws(ValueError):
         self.wrong = wrong
         self.crossed = tuple(crossed)
         self.prefix = prefix
+
+    def under(self, *prefix: str | int) -> Flaws:
+        """Return these flaws with every place below ``prefix``."""
+        self.prefix = (*prefix, *self.prefix)
+        return self
+
+
+class Several(ValueError):
+    """Everything wrong with the items of a list, each with its place."""
+
+    def __init__(self, errors: Sequence[Placed]) -> None:
+        super().__init__("\n".join(str(error) for error in errors))
+        self.errors = tuple(errors)
+
+    def under(self, *prefix: str | int) -> Several:
+        """Return these errors with every place below ``prefix``."""
+        return Several([error.under(*prefix) for error in self.errors])
+
+
+Placed: TypeAlias = InputError | Flaws | Several
+"""An error that knows which part of a value is wrong."""
 
 
 def needs(*names: str) -> Callable[[Check], Check]:
@@ -106,38 +127,40 @@ class Table(BaseModel):
 AnyTable = TypeVar("AnyTable", bound=BaseModel)
 
 
-def checked(model: type[AnyTable], given: object, *prefix: str | int) -> AnyTable:
+def checked(model: type[AnyTable], given: object) -> AnyTable:
     """Return ``given`` as a model.
 
     Raises:
-        Flaws: it is not one; the faults' places start with ``prefix``.
+        Flaws: it is not one.
     """
     try:
         return model.model_validate(given)
     except ValidationError as error:
-        raise Flaws(model, error, prefix=prefix) from None
+        raise Flaws(model, error) from None
 
 
-def at_item(index: int, error: ValueError) -> InputError:
-    """Return an error about a single value as one about the list item ``index``."""
-    return error.under(index) if isinstance(error, InputError) else InputError(str(error), (index,))
+def placed(error: ValueError, part: str | int) -> Placed:
+    """Return an error about a value as one about the ``part`` of a larger one."""
+    if isinstance(error, (InputError, Flaws, Several)):
+        return error.under(part)
+    return InputError(str(error), (part,))
 
 
-def each(items: Sequence[object], read: Callable[[int, object], Item]) -> tuple[Item, ...]:
-    """Return every list item as ``read`` gives it, from its index and itself.
+def each(items: Sequence[object], read: Callable[[Any], Item]) -> tuple[Item, ...]:
+    """Return every list item as ``read`` gives it.
 
     Raises:
-        Refused: several items are wrong; one alone raises its own error.
+        Several: with what is wrong of every item that is.
     """
     found: list[Item] = []
-    errors: list[InputError] = []
+    errors: list[Placed] = []
     for i, item in enumerate(items):
         try:
-            found.append(read(i, item))
-        except InputError as error:
-            errors.append(error)
+            found.append(read(item))
+        except ValueError as error:
+            errors.append(placed(error, i))
     if errors:
-        raise errors[0] if len(errors) == 1 else Refused(errors)
+        raise Several(errors)
     return tuple(found)
 
 

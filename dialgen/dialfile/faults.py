@@ -11,8 +11,8 @@ from pydantic import BaseModel, ValidationError
 from pydantic_core import ErrorDetails
 
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.dialfile.base import MOST_GUESSED, Flaws, keys_of, nearest_key, same_key
-from dialgen.errors import DialFileError, Fault, InputError, Key, Refused
+from dialgen.dialfile.base import MOST_GUESSED, Flaws, Several, keys_of, nearest_key, same_key
+from dialgen.errors import DialFileError, Fault, InputError, Key
 from dialgen.quantity import shown
 
 Complaint = tuple[Key, str]
@@ -36,20 +36,15 @@ def complaints(error: ValueError, model: type[BaseModel], root: type[BaseModel])
     for item in items:
         key, kind = tuple(item["loc"]), item["type"]
         cause = item.get("ctx", {}).get("error")
-        if isinstance(cause, Flaws):
-            for inner, message in of_flaws(cause, root):
+        if cause is not None:
+            for inner, message in _of_cause(cause, root):
                 yield (*key, *inner), message
-        elif isinstance(cause, (InputError, Refused)):
-            for each in cause.errors if isinstance(cause, Refused) else [cause]:
-                yield (*key, *(each.keys[0] if each.keys else ())), each.message
-        elif cause is not None and not isinstance(cause, DialFileError):
-            yield key, str(cause)
         elif kind == "extra_forbidden":
             yield key, f"not a key here; {_suggestion(key, meant.get(key), model, root)}"
         elif kind == "missing" and key in meant.values():
             # The misspelt key says it already.
             continue
-        elif cause is None and not (kind == "too_short" and item["input"]):
+        elif not (kind == "too_short" and item["input"]):
             # A list that is too short but not empty only says that no item of it was right.
             yield key, _message(kind, key, item["input"], item.get("ctx", {}), model)
 
@@ -71,7 +66,24 @@ def of_flaws(flaws: Flaws, root: type[BaseModel]) -> Iterator[Complaint]:
         for key, message in complaints(flaws.wrong, flaws.model, root):
             yield (*at, *key), message
     for error in flaws.crossed:
-        yield (*at, *(error.keys[0] if error.keys else ())), error.message
+        for key, message in _of_cause(error, root):
+            yield (*at, *key), message
+
+
+def _of_cause(cause: ValueError, root: type[BaseModel]) -> Iterator[Complaint]:
+    """Yield the key and message of everything that a reader complains of, but for faults in other files."""
+    match cause:
+        case Several():
+            for error in cause.errors:
+                yield from _of_cause(error, root)
+        case Flaws():
+            yield from of_flaws(cause, root)
+        case InputError():
+            yield cause.keys[0] if cause.keys else (), cause.message
+        case DialFileError():
+            return
+        case _:
+            yield (), str(cause)
 
 
 def _meant(items: list[ErrorDetails], model: type[BaseModel], root: type[BaseModel]) -> dict[Key, Key]:

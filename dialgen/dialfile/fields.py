@@ -12,11 +12,7 @@ from typing import Annotated, Any
 
 from pydantic import PlainValidator
 
-from dialgen.circuit.direct import FACE_VALUE
-from dialgen.circuit.shunt import RATED, read_rating
-from dialgen.dialfile.base import at_item, each
-from dialgen.errors import InputError
-from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
+from dialgen.dialfile.base import each
 from dialgen.lettering import measure
 from dialgen.quantity import (
     AMPERE,
@@ -46,13 +42,15 @@ Value = Any
 Reader = Callable[[Any], Value]
 
 
-def number(name: str, least: float = -math.inf, most: float = math.inf) -> Reader:
+def number(name: str, least: float, most: float) -> Reader:
     """Return a reader of bare numbers within bounds."""
 
     def read(given: object) -> float:
         value = read_number(given, name)
         if not least <= value <= most:
-            raise ValueError(f"{name} of {value:g} is out of bounds; {_mend(least, most)}")
+            raise ValueError(
+                f"{name} of {value:g} is out of bounds; write a number from {least:g} to {most:g}"
+            )
         return value
 
     return read
@@ -153,12 +151,12 @@ def formula_text(given: object) -> str:
 def pair(read: Reader, example: str) -> Reader:
     """Return a reader of two values in brackets."""
 
-    def read_pair(given: object) -> tuple[Any, Any]:
+    def read_pair(given: object) -> tuple[Value, ...]:
         if not isinstance(given, list) or len(given) != 2:
             raise ValueError(
                 f"this is a pair of values in brackets, not {shown(given)}; write for example {example}"
             )
-        return _at(0, read, given[0]), _at(1, read, given[1])
+        return each(given, read)
 
     return read_pair
 
@@ -166,27 +164,19 @@ def pair(read: Reader, example: str) -> Reader:
 def points(first: Reader, second: Reader, example: str, least: int = 2) -> Reader:
     """Return a reader of a list of pairs."""
 
-    def read_points(given: object) -> tuple[tuple[Any, Any], ...]:
+    def read_point(given: object) -> tuple[Value, Value]:
+        if not isinstance(given, list) or len(given) != 2:
+            raise ValueError(f"this is a point, not {shown(given)}; write the points as {example}")
+        return first(given[0]), second(given[1])
+
+    def read_points(given: object) -> tuple[tuple[Value, Value], ...]:
         if not isinstance(given, list):
             raise ValueError(f"this is a list of pairs, not {shown(given)}; write for example {example}")
         if not least <= len(given) <= _MOST_POINTS:
             raise ValueError(f"{len(given)} points; give {least} to {_MOST_POINTS}, such as {example}")
-        return each(given, lambda i, point: _point(i, point, first, second, example))
+        return each(given, read_point)
 
     return read_points
-
-
-def _point(index: int, given: object, first: Reader, second: Reader, example: str) -> tuple[Any, Any]:
-    if not isinstance(given, list) or len(given) != 2:
-        raise InputError(f"this is a point, not {shown(given)}; write the points as {example}", (index,))
-    return _at(index, first, given[0]), _at(index, second, given[1])
-
-
-def _at(index: int, read: Reader, given: object) -> Value:
-    try:
-        return read(given)
-    except ValueError as error:
-        raise at_item(index, error) from None
 
 
 def one_of(*words: str) -> Reader:
@@ -222,28 +212,6 @@ def true_or_false(given: object) -> bool:
 def signal(given: object) -> float | Amount:
     """Return a table's signal: a bare number, or text with a unit."""
     return SIGNAL.read(given) if isinstance(given, str) else number("a signal", -1e18, 1e18)(given)
-
-
-NOTES: dict[str, Reader] = {
-    FACE_VALUE: face_value,
-    RATED: read_rating,
-    SIGNAL_POINTS: points(face_value, signal, '[[0, "0 mV"], [100, "12 mV"]]'),
-    FACE_POINTS: points(face_end, number("a position", -MOST, MOST), "[[0, -44], [10, -20.5]]"),
-}
-"""Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
-
-
-def reader_for(note: object) -> Reader:
-    """Return the reader for the note on a law's or circuit's field."""
-    if isinstance(note, Measure):
-        return note.read
-    return NOTES[str(note)]
-
-
-def _mend(least: float, most: float) -> str:
-    return (
-        f"write a number from {least:g} to {most:g}" if math.isfinite(most) else f"write at least {least:g}"
-    )
 
 
 def _quantity(measure: Measure) -> Reader:

@@ -8,10 +8,23 @@ from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
 from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
+from dialgen.circuit.direct import FACE_VALUE
+from dialgen.circuit.shunt import RATED, read_rating
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Flaws, nearest_key
 from dialgen.errors import InputError
-from dialgen.quantity import shown
+from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
+from dialgen.quantity import Measure, shown
+
+_NOTES: dict[object, fields.Reader] = {
+    FACE_VALUE: fields.face_value,
+    RATED: read_rating,
+    SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
+    FACE_POINTS: fields.points(
+        fields.face_end, fields.number("a position", -fields.MOST, fields.MOST), "[[0, -44], [10, -20.5]]"
+    ),
+}
+"""Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
 
 
 def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
@@ -79,10 +92,15 @@ def _field(name: str, hint: object) -> fields.Value:
 
 def _reader(name: str, hint: object) -> fields.Reader:
     if get_origin(hint) is Annotated:
-        return fields.reader_for(get_args(hint)[1])
+        note = get_args(hint)[1]
+        return note.read if isinstance(note, Measure) else _NOTES[note]
     if get_origin(hint) is Literal:
         return fields.one_of(*get_args(hint))
-    return fields.formula_text if hint is str else fields.number(name, -fields.MOST, fields.MOST)
+    if hint is str:
+        return fields.formula_text
+    if hint is float:
+        return fields.number(name, -fields.MOST, fields.MOST)
+    raise TypeError(f"no reader for the field {name} of type {hint}; annotate it with a note that has one")
 
 
 def _default(field: dataclasses.Field[Any]) -> fields.Value:

@@ -8,10 +8,10 @@ from typing import Annotated, Protocol
 from pydantic import BeforeValidator, Field, PlainValidator
 
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table, needs
+from dialgen.dialfile.base import Table, needs, placed
 from dialgen.dialfile.fields import Angle, CurrentA, FaceValue, LengthAbove, ResistanceOhm
 from dialgen.dialfile.readings import MOST_READINGS, Reading, readings_file
-from dialgen.errors import InputError, Refused
+from dialgen.errors import InputError
 from dialgen.geometry import response
 from dialgen.quantity import shown
 from dialgen.stage import Stage
@@ -61,12 +61,8 @@ def _response(given: object) -> Stage:
 def _keyed(key: str, read: fields.Reader, given: object) -> fields.Value:
     try:
         return read(given)
-    except Refused as refused:
-        raise Refused([error.under(key) for error in refused.errors]) from None
-    except InputError as error:
-        raise error.under(key) from None
     except ValueError as error:
-        raise InputError(str(error), (key,)) from None
+        raise placed(error, key) from None
 
 
 class OldScale(Table):
@@ -99,6 +95,7 @@ class Movement(Table):
     """The movement, as measured on the bench."""
 
     kind: Annotated[str, PlainValidator(fields.one_of("moving coil", "moving iron", "other"))] = "moving coil"
+    """Kept for symbols, heat and cautions; nothing is drawn or computed from it yet."""
     current: CurrentA | None = None
     resistance: ResistanceOhm | None = None
     rest: Angle = Field(description="rest = -44.0, the angle of the pointer with no current")
@@ -108,6 +105,7 @@ class Movement(Table):
     ] = None
     response: Annotated[Stage, PlainValidator(_response)] = response.EVEN
     pointer: LengthAbove | None = None
+    """Kept for later checks of the scale line; nothing is drawn or computed from it yet."""
     reading: Annotated[tuple[Reading, ...], BeforeValidator(fields.at_most(MOST_READINGS))] = ()
     readings: Annotated[tuple[Reading, ...], PlainValidator(readings_file(Reading))] = ()
     old: OldScale | None = None

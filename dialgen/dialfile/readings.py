@@ -2,10 +2,9 @@
 
 from __future__ import annotations
 
-import re
 from collections.abc import Callable, Iterator
 from pathlib import Path
-from typing import Annotated, Any
+from typing import Annotated, Any, TypeVar
 
 from pydantic import PlainValidator, PrivateAttr, ValidationInfo
 
@@ -15,12 +14,13 @@ from dialgen.dialfile.faults import of_flaws
 from dialgen.dialfile.fields import Angle, AppliedA, AppliedV, FaceValue
 from dialgen.dialfile.sheets import Cell, Sheet, read_sheet
 from dialgen.errors import DialFileError, Fault, InputError
-from dialgen.quantity import shown
+from dialgen.quantity import bare_number, shown
 
 MOST_READINGS = 500
 _APPLIED = ("current", "voltage", "value")
 _SEEN = ("angle", "old")
-_BARE = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?")
+
+Item = TypeVar("Item")
 
 
 class Reading(Table):
@@ -32,6 +32,7 @@ class Reading(Table):
     angle: Angle | None = None
     old: FaceValue | None = None
     direction: Annotated[str | None, PlainValidator(fields.one_of("up", "down"))] = None
+    """Kept for telling friction from error; up and down are averaged alike so far."""
     _place: tuple[str, int, int] | None = PrivateAttr(default=None)
 
     @property
@@ -72,15 +73,7 @@ def readings_file(model: type[Reading]) -> Callable[[object, ValidationInfo], tu
 
     def read(given: object, info: ValidationInfo) -> tuple[Reading, ...]:
         sheet = read_sheet(folder_of(info) / fields.text(given), (*_APPLIED, *_SEEN, "direction"))
-        found: list[Reading] = []
-        faults: list[Fault] = []
-        for row in sheet.rows:
-            try:
-                found.append(_reading(sheet, row, model))
-            except DialFileError as error:
-                faults += error.faults
-        if faults:
-            raise DialFileError(faults)
+        found = _each_row(sheet, lambda row: _reading(sheet, row, model))
         if not found:
             raise sheet.fault(sheet.heads[0], "", "no readings below the column names; add a row for each")
         return tuple(found)
@@ -97,16 +90,29 @@ def points_from_file(given: object, folder: Path) -> tuple[list[list[Any]], Shee
     """
     columns = ("value", "signal")
     sheet = read_sheet(folder / fields.text(given), columns, needed=columns)
-    values = [_number(sheet, row, "value") for row in sheet.rows]
-    points = [[value, _signal(sheet, row)] for value, row in zip(values, sheet.rows, strict=True)]
+    points = _each_row(sheet, lambda row: _point(sheet, row))
     if len(points) < 2:
         raise sheet.fault(sheet.heads[0], "", f"rows with points: {len(points)}; give at least two")
+    values = [value for value, _ in points]
     for before, here, row in zip(values, values[1:], sheet.rows[1:], strict=False):
         if not here > before:
             raise sheet.fault(
                 row["value"], "value", f"{here:g} follows {before:g}; put the rows in ascending order"
             )
     return points, sheet
+
+
+def _each_row(sheet: Sheet, read: Callable[[dict[str, Cell]], Item]) -> list[Item]:
+    found: list[Item] = []
+    faults: list[Fault] = []
+    for row in sheet.rows:
+        try:
+            found.append(read(row))
+        except DialFileError as error:
+            faults += error.faults
+    if faults:
+        raise DialFileError(faults)
+    return found
 
 
 def _reading(sheet: Sheet, row: dict[str, Cell], model: type[Reading]) -> Reading:
@@ -131,21 +137,22 @@ def _reading(sheet: Sheet, row: dict[str, Cell], model: type[Reading]) -> Readin
 
 def _number(sheet: Sheet, row: dict[str, Cell], name: str) -> float:
     cell = _cell(sheet, row, name)
-    plain = cell.text.replace("\u2212", "-")
-    if not _BARE.fullmatch(plain):
+    number = bare_number(cell.text)
+    if number is None:
         raise sheet.fault(cell, name, f"{shown(cell.text)} is not a bare number; write one, with a point")
-    return float(plain)
+    return number
 
 
-def _signal(sheet: Sheet, row: dict[str, Cell]) -> float | str:
-    cell = _cell(sheet, row, "signal")
-    plain = cell.text.replace("\u2212", "-")
-    given = float(plain) if _BARE.fullmatch(plain) else plain
-    try:
-        fields.signal(given)
-    except ValueError as error:
-        raise sheet.fault(cell, "signal", str(error)) from None
-    return given
+def _point(sheet: Sheet, row: dict[str, Cell]) -> list[Any]:
+    value, cell = _number(sheet, row, "value"), _cell(sheet, row, "signal")
+    number = bare_number(cell.text)
+    signal = cell.text if number is None else number
+    for name, read, given in (("value", fields.face_value, value), ("signal", fields.signal, signal)):
+        try:
+            read(given)
+        except ValueError as error:
+            raise sheet.fault(row[name], name, str(error)) from None
+    return [value, signal]
 
 
 def _cell(sheet: Sheet, row: dict[str, Cell], name: str) -> Cell:

@@ -11,7 +11,7 @@ from pydantic import BeforeValidator, Field, PlainValidator, ValidationInfo
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.circuit.terminals import Circuit
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table, at_item, checked, each, folder_of, needs
+from dialgen.dialfile.base import Table, checked, each, folder_of, needs
 from dialgen.dialfile.fields import FaceEnd, FaceValue, LengthAbove, Lettered, Position, UnitText, YesNo
 from dialgen.dialfile.kinds import read_kind
 from dialgen.dialfile.movement import readings_once
@@ -85,13 +85,8 @@ def _numbered(given: object) -> Every | tuple[Entry, ...] | None:
     return each(given, _entry)
 
 
-def _entry(index: int, given: object) -> Entry:
-    if isinstance(given, dict):
-        return checked(Entry, given, index)
-    try:
-        return Entry(at=fields.face_end(given))
-    except ValueError as error:
-        raise at_item(index, error) from None
+def _entry(given: object) -> Entry:
+    return checked(Entry, given) if isinstance(given, dict) else Entry(at=fields.face_end(given))
 
 
 def _divisions(given: object) -> Every | tuple[Piece, ...] | None:
@@ -104,7 +99,7 @@ def _divisions(given: object) -> Every | tuple[Piece, ...] | None:
         raise ValueError(f"{shown(given)} does not say how to divide; write {choices}")
     if not 1 <= len(given) <= _MOST_PIECES:
         raise ValueError(f"{len(given)} pieces of divisions; give 1 to {_MOST_PIECES}")
-    return tuple(checked(Piece, item, i) for i, item in enumerate(given))
+    return each(given, lambda piece: checked(Piece, piece))
 
 
 class Scale(Table):

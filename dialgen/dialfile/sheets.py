@@ -43,13 +43,15 @@ def read_sheet(path: Path, columns: tuple[str, ...], needed: tuple[str, ...] = (
     Empty lines and lines that begin with # are left out.
 
     Raises:
-        ValueError: it cannot be opened.
+        InputError: it cannot be opened.
         DialFileError: what it holds is wrong, with the place.
     """
     sheet = Sheet(str(path))
     lines = [
         _cells(line, number, sheet)
-        for number, line in enumerate(read_text(path, str(path)).replace("\r", "\n").split("\n"), 1)
+        for number, line in enumerate(
+            read_text(path, sheet.name, sheet.name).replace("\r", "\n").split("\n"), 1
+        )
         if line.strip(", \t") and not line.lstrip().startswith("#")
     ]
     if not lines:

@@ -73,11 +73,16 @@ def shown_key(key: Key) -> str:
     return text if len(text) <= _LONGEST_KEY else text[: _LONGEST_KEY - 3] + "..."
 
 
-def read_text(path: Path, shown: str) -> str:
+def read_text(path: Path, name: str, what: str) -> str:
     """Return the text of a small UTF-8 file, with plain line ends.
 
+    Args:
+        path: where it is.
+        name: the file's name in a fault.
+        what: the file in a sentence.
+
     Raises:
-        ValueError: it cannot be opened.
+        InputError: it cannot be opened.
         DialFileError: it is too large, or not UTF-8.
     """
     try:
@@ -85,16 +90,16 @@ def read_text(path: Path, shown: str) -> str:
             raw = file.read(LARGEST_BYTES + 1)
     except (OSError, ValueError) as error:
         reason = error.strerror if isinstance(error, OSError) and error.strerror else "not a file name"
-        raise ValueError(f"cannot read {shown}: {reason.lower()}; give the name of a file") from None
+        raise InputError(f"cannot read {what}: {reason.lower()}; give the name of a file") from None
     if len(raw) > LARGEST_BYTES:
-        raise _at(shown, 1, 1, f"over {LARGEST_BYTES // 1024} kB; give a smaller file")
+        raise _at(name, 1, 1, f"over {LARGEST_BYTES // 1024} kB; give a smaller file")
     raw = raw.removeprefix(b"\xef\xbb\xbf")
     try:
         return raw.decode().replace("\r\n", "\n")
     except UnicodeDecodeError as error:
         before = raw[: error.start].decode()
         line, column = before.count("\n") + 1, len(before) - before.rfind("\n")
-        raise _at(shown, line, column, "not UTF-8 text; save the file as UTF-8") from None
+        raise _at(name, line, column, "not UTF-8 text; save the file as UTF-8") from None
 
 
 def read_toml(source: Source) -> dict[str, Any]:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
+from enum import StrEnum
 
 import numpy as np
 
@@ -11,7 +12,7 @@ from dialgen.dial import Dial
 from dialgen.dialfile.models import FreeText
 from dialgen.drawing import Arc, Cap, Drawing, Layer, Letters, Line, Point, Primitive, Purpose, Style, polar
 from dialgen.face.divisions import Rank
-from dialgen.face.numerals import mark_ends, numerals, reaches
+from dialgen.face.numerals import mark_lines, numerals
 from dialgen.face.plate import cut_layer, guide_layer, outliner
 from dialgen.face.ruling import RuledScale
 from dialgen.geometry.lines import ArcLine
@@ -22,12 +23,21 @@ _INK = "#000000"
 _UPRIGHT_DEG = 12.0
 
 
+class ScalePart(StrEnum):
+    """What a scale is made of, each on a layer of its own."""
+
+    LINE = "line"
+    MARKS = "marks"
+    NUMERALS = "numerals"
+    UNIT = "unit"
+
+
 def compose(dial: Dial, scales: Sequence[RuledScale]) -> Drawing:
     """Return the face as a drawing whose page is exactly the plate's bounding box."""
     left, bottom, width, height = outliner(dial.file.plate).box
     layers: list[Layer] = []
     for i, scale in enumerate(scales, 1):
-        layers += _scale_layers(scale, f"scale {i}", alone=len(scales) == 1)
+        layers += _scale_layers(scale, i, alone=len(scales) == 1)
     if dial.file.text:
         layers.append(_layer("text", [_free_text(text) for text in dial.file.text]))
     layers += [cut_layer(dial.file.plate), guide_layer(dial.file.plate)]
@@ -41,14 +51,19 @@ def compose(dial: Dial, scales: Sequence[RuledScale]) -> Drawing:
     )
 
 
-def _scale_layers(scale: RuledScale, name: str, *, alone: bool) -> list[Layer]:
-    placed = [letters for _, letters in numerals(scale)]
-    return [
-        _layer(f"{name} line", [_scale_line(scale)]),
-        _layer(f"{name} marks", _mark_lines(scale)),
-        _layer(f"{name} numerals", placed),
-        _layer(f"{name} unit", _unit(scale, alone=alone)),
-    ]
+def scale_layer(number: int, part: ScalePart) -> str:
+    """Return the name of the layer that holds a part of a scale; scales count from 1."""
+    return f"scale {number} {part}"
+
+
+def _scale_layers(scale: RuledScale, number: int, *, alone: bool) -> list[Layer]:
+    parts: dict[ScalePart, Sequence[Primitive]] = {
+        ScalePart.LINE: [_scale_line(scale)],
+        ScalePart.MARKS: _mark_lines(scale),
+        ScalePart.NUMERALS: list(numerals(scale)),
+        ScalePart.UNIT: _unit(scale, alone=alone),
+    }
+    return [_layer(scale_layer(number, part), items) for part, items in parts.items()]
 
 
 def _layer(name: str, items: Sequence[Primitive]) -> Layer:
@@ -75,20 +90,16 @@ def _scale_line(scale: RuledScale) -> Primitive:
 def _mark_lines(scale: RuledScale) -> list[Line]:
     """Return a line for each mark, those of one rank together so that a renderer may join them."""
     look = scale.look
-    reach = reaches(scale.spec.marks, look)
-    lines = []
-    for rank in Rank:
-        style = Style(stroke=look.ink, width_mm=look.width_mm(rank), cap=Cap.BUTT)
-        ranked = [mark for mark in scale.marks if mark.rank is rank]
-        lines += [Line(*mark_ends(mark, reach[rank]), style) for mark in ranked]
-    return lines
+    styles = {rank: Style(stroke=look.ink, width_mm=look.width_mm(rank), cap=Cap.BUTT) for rank in Rank}
+    lines = [(mark.rank, Line(inner, outer, styles[mark.rank])) for mark, inner, outer in mark_lines(scale)]
+    return [line for rank in Rank for of, line in lines if of is rank]
 
 
 def _unit(scale: RuledScale, *, alone: bool) -> list[Letters]:
     text = shown_unit(scale.spec.unit)
     if not text:
         return []
-    height_mm = scale.look.unit_mm if alone else 0.75 * scale.look.unit_mm
+    height_mm = scale.look.unit_mm * (1.0 if alone else 0.75) * (1.0 if len(text) == 1 else 0.85)
     return [letters(text, height_mm, _unit_place(scale, height_mm, alone=alone), Style(fill=scale.look.ink))]
 
 
@@ -103,11 +114,12 @@ def _unit_place(scale: RuledScale, height_mm: float, *, alone: bool) -> Point:
         # A scale that is all but upright has its unit on the plate's own middle line.
         middle_deg = 0.0 if abs(middle_deg) < _UPRIGHT_DEG else middle_deg
         room_mm = scale.line.radius_mm - taken
-        reach_mm = 0.62 * room_mm if alone else room_mm - 0.9 * height_mm - look.space_mm
+        below_mm = 0.38 * look.base_mm if alone else 0.9 * height_mm + look.space_mm
+        reach_mm = max(room_mm - below_mm, 0.3 * room_mm)
         return polar(scale.line.centre, reach_mm, middle_deg)
     xs, ys = scale.line.points(ends_deg)
     ux, uy = (float(u[0]) for u in scale.line.directions(ends_deg.mean(keepdims=True)))
-    drop_mm = taken + height_mm + look.space_mm
+    drop_mm = taken + 0.8 * height_mm + look.space_mm
     return float(xs.mean()) - drop_mm * ux, float(ys.mean()) - drop_mm * uy
 
 

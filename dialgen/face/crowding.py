@@ -16,7 +16,8 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from dialgen.face.ruler import Ruler, decimal_value
+from dialgen.face.divisions import legal_divisions
+from dialgen.face.ruler import Ruler, decimal_value, digits
 from dialgen.stage import Array
 
 Indices = NDArray[np.intp]
@@ -24,8 +25,7 @@ Indices = NDArray[np.intp]
 # What a path pays, in units of about one badly placed numeral.  Tuned by eye over ohms, decibel,
 # square-law, logarithmic and standing-wave scales of 30 to 200 mm.
 _GAP_COST = {1: 0.0, 2: 0.0, 3: 0.05, 4: 0.5, 5: 0.0}
-_PARTS = {1: (10, 5, 2), 2: (10, 4, 2), 3: (6, 3), 4: (8, 4, 2), 5: (10, 5)}
-_DIGIT_COST = (0.0, 0.0, 0.2, 0.8, 0.6, 0.2, 0.8, 1.6, 0.8, 2.0)
+_DIGIT_COST = (0.0, 0.0, 0.1, 0.35, 0.35, 0.1, 0.5, 0.8, 0.5, 0.9)
 _HALF_DIGIT = 1.5
 _MORE_DIGITS = 2.2
 _LONG = 0.8
@@ -113,10 +113,10 @@ def _nodes(ruler: Ruler, values: Array, forced: tuple[float, ...], wanted_mm: fl
 
 def _roundness(value: float) -> float:
     """Return how far from round a numeral is: by its digits, then by which digit it is."""
-    digits = _digits(value)
-    if len(digits) <= 1:
-        return _DIGIT_COST[int(digits or 0)]
-    return (_HALF_DIGIT if digits[-1] == "5" else _MORE_DIGITS) * (len(digits) - 1)
+    shown = digits(value)
+    if len(shown) <= 1:
+        return _DIGIT_COST[int(shown or 0)]
+    return (_HALF_DIGIT if shown[-1] == "5" else _MORE_DIGITS) * (len(shown) - 1)
 
 
 def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
@@ -135,7 +135,7 @@ def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
             there = np.searchsorted(values, targets - 1e-6 * unit)
             found = there < len(values)
             found[found] = np.abs(values[there[found]] - targets[found]) <= 1e-6 * unit
-            yield _roomy(nodes, whole[found], there[found], gap_cost, parts=_PARTS[count], gap=count * unit)
+            yield _roomy(nodes, whole[found], there[found], gap_cost, gap=count * unit)
 
 
 def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
@@ -155,12 +155,7 @@ def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
 
 
 def _is_odd(value: float) -> bool:
-    return not math.isfinite(value) or len(_digits(value)) > 1
-
-
-def _digits(value: float) -> str:
-    """Return the digits of a value, without its power of ten: "15" of 0.15; "" of 0 and infinity."""
-    return f"{abs(value):.11e}".split("e")[0].replace(".", "").rstrip("0") if math.isfinite(value) else ""
+    return not math.isfinite(value) or len(digits(value)) > 1
 
 
 def _any_edges(nodes: _Nodes) -> _Edges:
@@ -168,7 +163,7 @@ def _any_edges(nodes: _Nodes) -> _Edges:
     here, there = np.triu_indices(len(nodes.values), 1)
     near = nodes.places[there] - nodes.places[here] < 4 * nodes.wanted_mm
     here, there = here[near], there[near]
-    decades = np.array([_digits(v) == "1" for v in nodes.values.tolist()])
+    decades = np.array([digits(v) == "1" for v in nodes.values.tolist()])
     return _roomy(nodes, here, there, np.where(decades[here] & decades[there], _DECADE, _NOT_LEGAL))
 
 
@@ -178,7 +173,6 @@ def _roomy(
     there: Indices,
     cost: float | Array,
     *,
-    parts: tuple[int, ...] = (),
     gap: float = 0.0,
 ) -> _Edges:
     """Return the edges that leave room between numerals and jump over no forced value, with costs."""
@@ -192,19 +186,17 @@ def _roomy(
     steep = np.maximum(1.0, (lengths / (_TOO_LONG * nodes.wanted_mm)) ** 1.5)
     costs = np.broadcast_to(cost, fits.shape)[fits] + nodes.costs[there]
     costs = costs + off**2 * np.where(off > 0, _LONG * steep, _SHORT)
-    if parts:
-        costs = costs + _UNDIVIDED * _undivided(nodes, here, there, parts, gap)
+    if gap:
+        costs = costs + _UNDIVIDED * _undivided(nodes, here, there, gap)
     return _Edges(here, there, costs)
 
 
-def _undivided(
-    nodes: _Nodes, here: Indices, there: Indices, parts: tuple[int, ...], gap: float
-) -> NDArray[np.bool_]:
+def _undivided(nodes: _Nodes, here: Indices, there: Indices, gap: float) -> NDArray[np.bool_]:
     """Return whether not even the coarsest division of each gap would leave its marks apart.
 
     Within a gap the scale is taken to stretch evenly from the density at one end to the other's.
     """
-    coarsest = min(parts)
+    coarsest = min(division.parts for division in legal_divisions(gap))
     low, high = nodes.slopes[here], nodes.slopes[there]
     share = (high - low) / (2 * coarsest)
     nearest = np.minimum(low + share, high - share) * gap / coarsest

@@ -82,7 +82,9 @@ def _rank(index: int, division: Division) -> Rank:
 
 def _cut(low: float, high: float, parts: int) -> list[float]:
     step = (high - low) / parts
-    return [float(f"{low + i * step:.12g}") for i in range(1, parts)]
+    values = [low + i * step for i in range(1, parts)]
+    # What is left of a sum that should be zero is rounding, however many digits it has.
+    return [0.0 if abs(v) < 1e-9 * step else float(f"{v:.12g}") for v in values]
 
 
 def _finest_roomy(
@@ -149,6 +151,8 @@ def stepped(
                 f"let the pieces ascend up to {end:g}",
                 (i, "to"),
             )
+        if math.isinf(high):
+            raise InputError("a step never reaches inf; write pieces up to a finite to", (i, "every"))
         if len(marks) + (high - low) / step > MOST_MARKS:
             raise InputError(
                 f"a step of {step:g} gives over {MOST_MARKS} marks; take a larger one", (i, "every")

@@ -5,11 +5,16 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator
 
+import numpy as np
+
 from dialgen.drawing import Letters, Point, Style
 from dialgen.face.divisions import Rank
 from dialgen.face.looks import Look
 from dialgen.face.ruling import Mark, RuledScale
 from dialgen.lettering import letters, measure
+
+_INFINITY = 1.35
+"""How much larger ∞ is set: in the fonts it is no taller than a small letter."""
 
 
 def reaches(side: str, look: Look) -> dict[Rank, tuple[float, float]]:
@@ -18,28 +23,32 @@ def reaches(side: str, look: Look) -> dict[Rank, tuple[float, float]]:
     return {rank: (shares[0] * look.length_mm(rank), shares[1] * look.length_mm(rank)) for rank in Rank}
 
 
-def mark_ends(mark: Mark, reach: tuple[float, float]) -> tuple[Point, Point]:
-    """Return a mark's inner and outer end."""
-    (ux, uy), x, y = mark.direction, mark.x, mark.y
-    inner, outer = reach
-    return (x + inner * ux, y + inner * uy), (x + outer * ux, y + outer * uy)
+def mark_lines(scale: RuledScale) -> Iterator[tuple[Mark, Point, Point]]:
+    """Yield every mark with its inner and its outer end."""
+    ranks = reaches(scale.spec.marks, scale.look)
+    stretches = scale.line.stretch(np.array([mark.angle_deg for mark in scale.marks])).tolist()
+    for mark, stretch in zip(scale.marks, stretches, strict=True):
+        inner, outer = ranks[mark.rank]
+        ux, uy = mark.direction[0] * stretch, mark.direction[1] * stretch
+        yield mark, (mark.x + inner * ux, mark.y + inner * uy), (mark.x + outer * ux, mark.y + outer * uy)
 
 
-def numerals(scale: RuledScale) -> Iterator[tuple[Mark, Letters]]:
-    """Yield every labelled mark with its numeral."""
+def numerals(scale: RuledScale) -> Iterator[Letters]:
+    """Yield the numeral of every labelled mark."""
     spec, look = scale.spec, scale.look
     style = Style(fill=look.ink)
-    ranks = reaches(spec.marks, look)
-    for mark in scale.marks:
+    sign = 1.0 if spec.numerals == "outside" else -1.0
+    for mark, inner, outer in mark_lines(scale):
         if mark.label:
-            inner, outer = mark_ends(mark, ranks[mark.rank])
-            ux, uy = mark.direction
-            start, away = (outer, (ux, uy)) if spec.numerals == "outside" else (inner, (-ux, -uy))
-            box = measure(mark.label, look.numeral_mm)
+            start = outer if spec.numerals == "outside" else inner
+            x, y = scale.line.away(np.array(mark.angle_deg))
+            away = (sign * float(x), sign * float(y))
+            height_mm = look.numeral_mm * (_INFINITY if mark.label == "∞" else 1.0)
+            box = measure(mark.label, height_mm)
             half = ((box.right - box.left) / 2, (box.top - box.bottom) / 2)
             reach = clear_reach(half, away, look.space_mm)
             at = (start[0] + reach * away[0], start[1] + reach * away[1])
-            yield mark, letters(mark.label, look.numeral_mm, at, style)
+            yield letters(mark.label, height_mm, at, style)
 
 
 def clear_reach(half: tuple[float, float], away: tuple[float, float], space_mm: float) -> float:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Iterator
+from dataclasses import dataclass
 from typing import Protocol
 
 import numpy as np
@@ -36,12 +37,12 @@ class Outliner(Protocol):
         ...
 
 
+@dataclass(frozen=True, slots=True)
 class Rectangle:
     """A rectangular plate with rounded corners."""
 
-    def __init__(self, box: tuple[float, float, float, float], corner_mm: float) -> None:
-        self.box = box
-        self.corner_mm = corner_mm
+    box: tuple[float, float, float, float]
+    corner_mm: float
 
     def holds(self, x: ArrayLike, y: ArrayLike) -> NDArray[np.bool_]:
         """Return whether each point is inside, corners rounded off."""
@@ -58,12 +59,12 @@ class Rectangle:
         return rounded_rectangle(self.box, self.corner_mm, style)
 
 
+@dataclass(frozen=True, slots=True)
 class Disc:
     """A round plate."""
 
-    def __init__(self, centre: Point, diameter_mm: float) -> None:
-        self.centre = centre
-        self.radius_mm = diameter_mm / 2
+    centre: Point
+    radius_mm: float
 
     @property
     def box(self) -> tuple[float, float, float, float]:
@@ -87,7 +88,7 @@ def outliner(plate: Plate) -> Outliner:
     if plate.size is not None:
         return Rectangle((-x, -y, *plate.size), plate.corner)
     radius_mm = (plate.diameter or 0.0) / 2
-    return Disc((radius_mm - x, radius_mm - y), 2 * radius_mm)
+    return Disc((radius_mm - x, radius_mm - y), radius_mm)
 
 
 def check_holes(plate: Plate) -> Iterator[InputError]:

@@ -5,26 +5,30 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator, Sequence
 
-from dialgen.drawing import Drawing, Layer, Letters, Line, Placed, Point, Purpose
-from dialgen.errors import Remark
+import numpy as np
+
+from dialgen.drawing import Arc, Drawing, Layer, Letters, Line, Placed, Point, Purpose
+from dialgen.errors import Key, Remark
+from dialgen.face.compose import ScalePart, scale_layer
 from dialgen.face.plate import Outliner
 from dialgen.face.ruling import RuledScale
 
 Box = tuple[float, float, float, float]
 
+_ARC_STEP_DEG = 1.0
+
 
 def review(drawing: Drawing, scales: Sequence[RuledScale], plate: Outliner) -> tuple[Remark, ...]:
     """Return remarks on ink over the plate's edge and on overlapping numerals."""
-    by_name = {layer.name: layer for layer in drawing.layers}
+    keys: dict[str, Key] = {}
+    for number, scale in enumerate(scales, 1):
+        keys |= {scale_layer(number, part): scale.dial.key for part in ScalePart}
     found: list[Remark] = []
-    for i, scale in enumerate(scales):
-        numerals = by_name.get(f"scale {i + 1} numerals")
-        found += _overlaps(numerals, (*scale.dial.key, "numbered")) if numerals else ()
-    keys = {f"scale {i + 1}": scale.dial.key for i, scale in enumerate(scales)}
     for layer in drawing.layers:
-        if layer.purpose is Purpose.PRINT and (over := _over_edge(layer, plate)):
-            key = next((k for name, k in keys.items() if layer.name.startswith(name + " ")), ("text",))
-            found.append(Remark(f"{over} runs over the plate's edge; move it or enlarge the plate", key))
+        if layer.purpose is Purpose.PRINT:
+            found += _over_edge(layer, plate, keys.get(layer.name))
+        if layer.name in keys and layer.name.endswith(ScalePart.NUMERALS):
+            found += _overlaps(layer, (*keys[layer.name], "numbered"))
     return tuple(found)
 
 
@@ -57,8 +61,10 @@ def _overlaps(layer: Layer, key: tuple[str | int, ...]) -> Iterator[Remark]:
             yield Remark(f"the numerals {one} and {other} overlap; number fewer values", key)
 
 
-def _over_edge(layer: Layer, plate: Outliner) -> str | None:
-    for item in layer.items:
+def _over_edge(layer: Layer, plate: Outliner, key: Key | None) -> Iterator[Remark]:
+    """Yield a remark for each item over the edge: at its scale, or at its own place in the texts."""
+    seen: set[str] = set()
+    for i, item in enumerate(layer.items):
         match item:
             case Letters() if item.glyphs:
                 left, bottom, right, top = ink_box(item)
@@ -66,8 +72,16 @@ def _over_edge(layer: Layer, plate: Outliner) -> str | None:
                 what = f"{item.text!r}"
             case Line():
                 points, what = [item.start, item.end], "a mark"
+            case Arc():
+                points, what = _along(item), "the scale line"
             case _:
                 continue
-        if not plate.holds(*zip(*points, strict=True)).all():
-            return what
-    return None
+        if what not in seen and not plate.holds(*zip(*points, strict=True)).all():
+            seen.add(what)
+            message = f"{what} runs over the plate's edge; move it or enlarge the plate"
+            yield Remark(message, ("text", i) if key is None else key)
+
+
+def _along(arc: Arc) -> list[Point]:
+    steps = max(2, math.ceil((arc.end_deg - arc.start_deg) / _ARC_STEP_DEG) + 1)
+    return [arc.point(angle) for angle in np.linspace(arc.start_deg, arc.end_deg, steps).tolist()]

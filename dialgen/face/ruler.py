@@ -72,3 +72,12 @@ def multiples(step: float, low: float, high: float) -> list[float]:
     slack = 1e-9
     first, last = math.ceil(low / step - slack), math.floor(high / step + slack)
     return [float(f"{i * step:.12g}") for i in range(first, last + 1)]
+
+
+def digits(value: float) -> str:
+    """Return the digits of a value, without its power of ten: "" of 0 and infinity.
+
+    >>> digits(0.15), digits(300.0)
+    ('15', '3')
+    """
+    return f"{abs(value):.11e}".split("e")[0].replace(".", "").rstrip("0") if math.isfinite(value) else ""

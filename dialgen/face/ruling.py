@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import itertools
+import math
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from typing import NamedTuple
@@ -117,6 +118,10 @@ def _asked(spec: Scale, key: Key) -> dict[float, str] | None:
     if asked is None:
         return None
     if isinstance(asked, Every):
+        if math.isinf(spec.end):
+            raise InputError(
+                'a step never reaches inf; write a list of values, or "auto"', (*key, "numbered", "every")
+            )
         if not (spec.end - spec.start) / asked.every <= MOST_MARKS:
             raise InputError(
                 f"a step of {asked.every:g} gives over {MOST_MARKS} numerals; take a larger one",
@@ -136,17 +141,17 @@ def _marks(
         marks += [(v, Rank.MIDDLE) for v in ends]
         marks += divide(ruler, sorted([*numbered, *ends]))
         return sorted(marks)
+    alone = isinstance(spec.divisions, Every)
     if isinstance(spec.divisions, Every):
-        pieces, where = [(spec.end, spec.divisions.every)], ()
+        pieces = [(spec.end, spec.divisions.every)]
     else:
-        pieces, where = [(p.to, p.every) for p in spec.divisions], None
+        pieces = [(piece.to, piece.every) for piece in spec.divisions]
     try:
         return sorted([*marks, *stepped(spec.start, spec.end, pieces, numbered)])
     except InputError as error:
         index, name = error.keys[0]
-        raise InputError(
-            error.message, (*key, "divisions", *((index,) if where is None else where), name)
-        ) from None
+        place = (name,) if alone else (index, name)
+        raise InputError(error.message, (*key, "divisions", *place)) from None
 
 
 def spots(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tuple[Spot, ...]:

@@ -50,7 +50,7 @@ def survey(
         across, upward = (np.abs(d) for d in line.directions(chain.angle(values)))
         with np.errstate(divide="ignore"):
             beside = (widths + look.clear_mm) / upward
-            above = (look.numeral_mm + look.clear_mm) / across
+            above = (look.numeral_mm + look.stacked_mm) / across
         return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm
 
     return Ruler(

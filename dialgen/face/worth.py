@@ -7,6 +7,7 @@ import math
 import numpy as np
 
 from dialgen.dial import ScaleDial
+from dialgen.errors import InputError
 from dialgen.face.ruling import Mark, RuledScale, Spot
 
 
@@ -25,11 +26,18 @@ def linear_error(ruled: RuledScale, spot: Spot | Mark) -> float | None:
 
 
 def nominal_ends(scale: ScaleDial) -> tuple[float, float] | None:
-    """Return the angles of the scale's ends by the circuit as designed and an ideal movement."""
+    """Return the angles of the scale's ends by the circuit as designed and an ideal movement.
+
+    None where there is no such circuit: a scale without a finite end, or a range that only the
+    part as built can serve.
+    """
     chain, spec = scale.chain, scale.spec
     if scale.wiring is None:
         return chain.rest_deg, chain.full_deg
-    drives = scale.wiring.designed(np.array([spec.start, spec.end]))
+    try:
+        drives = scale.wiring.designed(np.array([spec.start, spec.end]))
+    except InputError:
+        return None
     if not np.isfinite(drives).all():
         return None
     first, last = (chain.rest_deg + float(d) * (chain.full_deg - chain.rest_deg) for d in drives)

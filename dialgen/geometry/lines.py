@@ -35,6 +35,14 @@ class ScaleLine(Protocol):
         """Return the unit vectors along which marks are drawn, away from the pivot."""
         ...
 
+    def away(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return the unit vectors along which numerals stand off from the ends of their marks."""
+        ...
+
+    def stretch(self, angle_deg: Array) -> Array:
+        """Return how much longer a mark is drawn so that all of a rank end at one height."""
+        ...
+
 
 @dataclass(frozen=True, slots=True)
 class ArcLine:
@@ -78,6 +86,14 @@ class ArcLine:
     def directions(self, angle_deg: Array) -> tuple[Array, Array]:
         """Return the pointer's own direction."""
         return _ray(angle_deg)
+
+    def away(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return the pointer's own direction."""
+        return _ray(angle_deg)
+
+    def stretch(self, angle_deg: Array) -> Array:
+        """Return 1: marks of a rank are equally long."""
+        return np.ones(np.shape(angle_deg))
 
 
 @dataclass(frozen=True, slots=True)
@@ -155,9 +171,18 @@ class StraightLine:
         """Return the pointer's direction, or square to the line and away from the pivot."""
         if not self.square and self.curve_mm is None:
             return _ray(angle_deg)
+        return self.away(angle_deg)
+
+    def away(self, angle_deg: Array) -> tuple[Array, Array]:
+        """Return square to the line, so that numerals stand in one row."""
         ux, uy = self._unit()
         shape = np.shape(angle_deg)
         return np.full(shape, -uy), np.full(shape, ux)
+
+    def stretch(self, angle_deg: Array) -> Array:
+        """Return 1 over the cosine of the mark's lean, so that all of a rank end on one parallel."""
+        (x, y), (nx, ny) = self.directions(angle_deg), self.away(angle_deg)
+        return np.asarray(1.0 / (x * nx + y * ny))
 
 
 def _ray(angle_deg: Array) -> tuple[Array, Array]:

@@ -71,7 +71,9 @@ def from_points(points: Sequence[tuple[float, float]]) -> Stage:
         )
     if drives[0] < 0:
         return curve
-    at_zero = float(curve.forward(np.array(0.0))) if curve.domain[0] <= 0.0 else deflections[0]
+    if curve.domain[0] > 0.0:
+        raise InputError("the first points give no slope to go on by down to drive 0; add the point [0, 0]")
+    at_zero = float(curve.forward(np.array(0.0)))
     reach, top = curve.domain[1], curve.image[1]
     mirrored_top = 2 * at_zero - top if math.isfinite(top) else -math.inf
     return Mirrored(curve, at_zero, (-reach, reach), (mirrored_top, top))

@@ -33,7 +33,7 @@ _options_lock = threading.Lock()
 
 
 def render(drawing: Drawing, options: Options) -> bytes:
-    """Return ``drawing`` as a DXF file of AutoCAD 2010.
+    """Return ``drawing`` as a DXF file of release R2010 (AC1024).
 
     Lines, arcs and circles stay what they are; an outline is one closed polyline with bulges; a
     letter is a block of closed polylines, inserted wherever it stands.  Areas are given by their

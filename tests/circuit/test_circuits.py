@@ -313,7 +313,6 @@ NAN = math.nan
         (Multiplier(range=volt(10.0)), {"coil_ohm": None}, [("movement", "resistance")]),
         (Multiplier(), {"full": -5.0}, [("range",), ("movement", "resistance")]),
         (SeriesOhmmeter(half=ohm(2e3), battery=volt(1.5)), {}, [("half",), ("battery",)]),
-        (ShuntOhmmeter(half=ohm(600.0), battery=volt(1.5)), {}, [("half",), ("movement", "resistance")]),
         (Direct(full=0.0), {}, [("full",), ("rest",)]),
         (Direct(rest=10.0), {}, [("full",), ("rest",)]),
         (Direct(), {"full": math.inf}, [("full",)]),

@@ -1,43 +1,27 @@
-"""Values with units, in and out: the only place where text becomes a number.
-
-Electrical values come as text with a unit ("50 uA", "75 Ω", "4k7"), so that nobody has to guess
-what a bare 50 meant.  Everything is read by hand and to the letter: the libraries probed for it
-take "1,5 V" for 15 V and "4k7" for 4 of unit k7 without complaint.
-"""
+"""Quantities, lengths and bare numbers from what people write."""
 
 from __future__ import annotations
 
-import json
 import math
 import re
 from dataclasses import dataclass
-from decimal import Decimal
 from typing import NamedTuple
 
-PREFIXES = {
-    "p": 1e-12, "n": 1e-9, "u": 1e-6, "µ": 1e-6, "m": 1e-3,
-    "k": 1e3, "M": 1e6, "G": 1e9, "T": 1e12,
-}  # fmt: skip
-"""SI prefixes in use on meters; SI Brochure, table 7."""
+from dialgen.quantity.showing import shown
+from dialgen.quantity.units import PREFIXES, WORDS, plain_text, prefix_and_unit
 
 _POWERS = {"": 0} | {prefix: round(math.log10(factor)) for prefix, factor in PREFIXES.items()}
-
-PREFIXED_UNITS = ("VA", "var", "Hz", "A", "V", "W", "Ω", "F", "S")
-"""The face units before which a prefix is read; every other unit text is taken whole."""
-
 _LONGEST = 64
-_LONGEST_SHOWN = 40
 _SMALLEST, _LARGEST = 1e-18, 1e18
 # IEC 60062: the letter stands where the decimal point would; L is a thousandth (2016 edition).
 _RKM = re.compile(r"([+-]?[0-9]*)([LRkKMGT])([0-9]*)")
 _RKM_EXPONENTS = {"L": -3, "R": 0, "k": 3, "K": 3, "M": 6, "G": 9, "T": 12}
 _OHMS_ALONE = "LR"
 _NUMBER = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?(?![0-9.])")
-_SAME = str.maketrans({"\u2212": "-", "\u03bc": "µ", "\u2126": "Ω", "\u00a0": " ", "\u202f": " "})
 
 
 class Amount(NamedTuple):
-    """A number in an SI unit; ``unit`` is one of A, V, Ω, W or °C."""
+    """A number in an SI unit; ``unit`` is one of A, V, Ω or W."""
 
     value: float
     unit: str
@@ -78,7 +62,7 @@ class Measure:
         return amount
 
     def _parse(self, text: str) -> Amount:
-        plain = text.translate(_SAME).strip()
+        plain = plain_text(text).strip()
         if len(plain) > _LONGEST:
             raise ValueError(f"a {self.name} of {len(plain)} characters; {self._example()}")
         if "," in plain:
@@ -88,13 +72,13 @@ class Measure:
             return Amount(_rkm_value(*coded.groups()), self.units[0])
         if not (number := _NUMBER.match(plain)):
             raise ValueError(f"{shown(text)} is not a {self.name}; {self._example()}")
-        prefix, unit = _split_prefix(plain[number.end() :].strip(), self.units)
+        prefix, unit = prefix_and_unit(plain[number.end() :].strip(), self.units, WORDS)
         if unit not in self.units:
             raise ValueError(f"{shown(text)} {self._wrong_unit(number[0], unit)}")
         value = _scaled(number[0], prefix)
         if abs(value) > _LARGEST or (abs(value) < _SMALLEST and not _is_zero(number[0])):
             raise ValueError(f"{shown(text)} is beyond anything a meter has; {self._example()}")
-        return _in_celsius(value, unit)
+        return Amount(value, unit)
 
     def _takes_rkm(self, letter: str) -> bool:
         # The code has no unit, so the key must leave no choice of one.
@@ -104,7 +88,8 @@ class Measure:
         return f'write for example "{self.example}"'
 
     def _unit_wanted(self, given: object) -> str:
-        if isinstance(given, bool) or not isinstance(given, (int, float)) or abs(given) > _LARGEST:
+        # Not a number is not within the largest either.
+        if isinstance(given, bool) or not isinstance(given, (int, float)) or not abs(given) <= _LARGEST:
             return f"a {self.name} is text with its unit, not {shown(given)}; {self._example()}"
         example = f"{shown(given)} {self.example.split()[1]}"
         return f'a {self.name} needs its unit, {shown(given)} has none; write for example "{example}"'
@@ -115,7 +100,8 @@ class Measure:
         wrong = f"is not in {' or '.join(self.units)}"
         for unit in self.units:
             meant = written[: -len(unit)] + unit
-            if meant.casefold() == written.casefold() and _split_prefix(meant, self.units)[1] == unit:
+            read = prefix_and_unit(meant, self.units, WORDS)[1]
+            if meant.casefold() == written.casefold() and read == unit:
                 return f'{wrong}, capitals count; did you mean "{number} {meant}"?'
         return f"{wrong}; {self._example()}"
 
@@ -128,47 +114,18 @@ OHM_ABOVE = Measure("resistance", ("Ω",), "75 ohm", above=0.0)
 SIGNAL = Measure("signal", ("V", "A", "Ω", "W"), "12.28 mV")
 SIGNAL_ABOVE = Measure("reference", ("V", "A", "Ω", "W"), "0.775 V", above=0.0)
 ANY_CURRENT = Measure("current", ("A",), "0.25 mA")
-TEMPERATURE = Measure("temperature", ("°C", "°F", "K"), "25 degC", least=-273.15)
-"""Read as degrees Celsius, whichever of the three it is written in."""
 
 _MILLIMETRES = {"mm": 1.0, "cm": 10.0, "m": 1000.0, "um": 1e-3, "µm": 1e-3, "in": 25.4}
 
-_SPELLINGS = {
-    "ohm": "Ω", "Ohm": "Ω", "ohms": "Ω", "Ohms": "Ω", "OHM": "Ω",
-    "degC": "°C", "degF": "°F", "℃": "°C", "℉": "°F",
-}  # fmt: skip
-_WORDS = {"amp": "A", "amps": "A", "volt": "V", "volts": "V", "watt": "W", "watts": "W"}
 
+def bare_number(text: str) -> float | None:
+    """Return the number that ``text`` is, or None where it is anything else.
 
-def split_unit(written: str, units: tuple[str, ...] = PREFIXED_UNITS) -> tuple[float, str]:
-    """Return the factor of the prefix in ``written`` and the unit behind it.
-
-    A prefix is read only before one of ``units``; any other text is the unit, whole, with factor 1.
-
-    >>> split_unit("kohm"), split_unit("Pa"), split_unit("mA")
-    ((1000.0, 'Ω'), (1.0, 'Pa'), (0.001, 'A'))
+    >>> bare_number("\u22122.5"), bare_number("2,5"), bare_number("2.5 mA")
+    (-2.5, None, None)
     """
-    plain = written.translate(_SAME)
-    if (whole := _SPELLINGS.get(plain, plain)) in units:
-        return 1.0, whole
-    rest = _SPELLINGS.get(plain[1:], plain[1:])
-    if plain[:1] in PREFIXES and rest in units:
-        return PREFIXES[plain[0]], rest
-    return 1.0, _SPELLINGS.get(plain, plain)
-
-
-def shown_unit(written: str) -> str:
-    """Return a unit as it is printed on a face: signs for names ("kohm" is kΩ, "uA" is µA).
-
-    >>> shown_unit("kohm"), shown_unit("uA"), shown_unit("pH")
-    ('kΩ', 'µA', 'pH')
-    """
-    plain = written.translate(_SAME)
-    _, unit = split_unit(plain)
-    if unit not in PREFIXED_UNITS:
-        return _SPELLINGS.get(plain, plain) if plain.startswith("deg") else plain
-    prefix = plain[0] if plain[:1] in PREFIXES and _SPELLINGS.get(plain, plain) not in PREFIXED_UNITS else ""
-    return ("µ" if prefix == "u" else prefix) + unit
+    plain = plain_text(text).strip()
+    return float(plain) if _NUMBER.fullmatch(plain) else None
 
 
 def read_number(given: object, name: str) -> float:
@@ -201,54 +158,8 @@ def read_length(given: object, name: str, least: float = 0.0) -> float:
     return number
 
 
-def plain_number(value: float) -> str:
-    """Return ``value`` as it is lettered: no exponent, no trailing zeros, a true minus sign, ∞.
-
-    >>> plain_number(-2.50), plain_number(1e6), plain_number(math.inf)
-    ('−2.5', '1000000', '∞')
-    """
-    if math.isinf(value):
-        return "−∞" if value < 0 else "∞"
-    text = f"{Decimal(f'{value:.12g}'):f}"
-    return text.replace("-", "−") if text != "-0" else "0"
-
-
-def shown(given: object) -> str:
-    """Return a value as it stands in a dial file, cut short, for messages.
-
-    >>> shown("1,5 V"), shown(True), shown([1, [2, 3]]), shown({})
-    ('"1,5 V"', 'true', '[1, [...]]', 'a table')
-    """
-    match given:
-        case bool():
-            text = str(given).lower()
-        case str():
-            text = json.dumps(given, ensure_ascii=False)
-        case float():
-            text = f"{given:.12g}"
-        case list() | tuple():
-            text = f"[{', '.join('[...]' if isinstance(g, list) else shown(g) for g in given[:9])}]"
-        case dict():
-            text = "a table"
-        case int() if abs(given) >= 10**15:
-            text = "a number of very many digits"
-        case _:
-            text = str(given)
-    return text if len(text) <= _LONGEST_SHOWN else text[: _LONGEST_SHOWN - 3] + "..."
-
-
 def _rkm_value(whole: str, letter: str, fraction: str) -> float:
     return float(f"{whole}.{fraction or '0'}e{_RKM_EXPONENTS[letter]}")
-
-
-def _split_prefix(written: str, units: tuple[str, ...]) -> tuple[str, str]:
-    words = {**_SPELLINGS, **_WORDS}
-    if (whole := words.get(written, written)) in units:
-        return "", whole
-    unit = words.get(written[1:], written[1:])
-    if written[:1] in (*PREFIXES, "K") and unit in units and unit in PREFIXED_UNITS:
-        return written[0].replace("K", "k"), unit
-    return "", written
 
 
 def _scaled(number: str, prefix: str) -> float:
@@ -261,15 +172,6 @@ def _is_zero(number: str) -> bool:
     return not re.search("[1-9]", re.split("[eE]", number)[0])
 
 
-def _in_celsius(value: float, unit: str) -> Amount:
-    match unit:
-        case "°F":
-            return Amount((value - 32) / 1.8, "°C")
-        case "K":
-            return Amount(value - 273.15, "°C")
-    return Amount(value, unit)
-
-
 def _comma_mend(plain: str) -> str:
     if plain.count(",") > 1 or "." in plain:
         return "leave it out; the decimal sign is a point, and thousands are not parted"
@@ -280,7 +182,7 @@ def _comma_mend(plain: str) -> str:
 
 
 def _written_length(text: str, name: str) -> float:
-    plain = text.translate(_SAME).strip()
+    plain = plain_text(text).strip()
     if "," in plain and len(plain) <= _LONGEST:
         raise ValueError(f"{shown(text)} has a comma; {_comma_mend(plain)}")
     number = _NUMBER.match(plain)

@@ -1,0 +1,45 @@
+"""Numbers and values as they are printed, on a face and in a message."""
+
+from __future__ import annotations
+
+import json
+import math
+from decimal import Decimal
+
+_LONGEST_SHOWN = 40
+
+
+def plain_number(value: float) -> str:
+    """Return ``value`` as it is lettered: no exponent, no trailing zeros, a true minus sign, ∞.
+
+    >>> plain_number(-2.50), plain_number(1e6), plain_number(math.inf)
+    ('−2.5', '1000000', '∞')
+    """
+    if math.isinf(value):
+        return "−∞" if value < 0 else "∞"
+    text = f"{Decimal(f'{value:.12g}'):f}"
+    return text.replace("-", "−") if text != "-0" else "0"
+
+
+def shown(given: object) -> str:
+    """Return a value as it stands in a dial file, cut short, for messages.
+
+    >>> shown("1,5 V"), shown(True), shown([1, [2, 3]]), shown({})
+    ('"1,5 V"', 'true', '[1, [...]]', 'a table')
+    """
+    match given:
+        case bool():
+            text = str(given).lower()
+        case str():
+            text = json.dumps(given, ensure_ascii=False)
+        case float():
+            text = f"{given:.12g}"
+        case list() | tuple():
+            text = f"[{', '.join('[...]' if isinstance(g, list) else shown(g) for g in given[:9])}]"
+        case dict():
+            text = "a table"
+        case int() if abs(given) >= 10**15:
+            text = "a number of very many digits"
+        case _:
+            text = str(given)
+    return text if len(text) <= _LONGEST_SHOWN else text[: _LONGEST_SHOWN - 3] + "..."

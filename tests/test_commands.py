@@ -9,13 +9,20 @@ import signal
 import subprocess
 import sys
 import time
+from collections.abc import Callable, Iterator
+from contextlib import contextmanager
 from pathlib import Path
 
 import numpy as np
 import pytest
 
 import dialgen
+from dialgen.api import DEFAULT_MARGIN_MM
+from dialgen.cli.draw import _stamps
+from dialgen.cli.draw import command as draw_command
+from dialgen.drawing import Purpose
 from dialgen.errors import InputError, NoSuchValue
+from dialgen.renderers import RENDERERS, Options
 
 SAMPLE = """\
 dialgen = 1
@@ -107,6 +114,50 @@ def test_table_at_answers_for_any_value(dial_file: Path) -> None:
     assert scale["marks"][0]["angle"] == pytest.approx(-44 + 88 * 12.5 / 40, abs=1e-9)
 
 
+def test_readable_table_shows_values_and_labels(dial_file: Path) -> None:
+    """The first column is the value, −4 to 20; labels have a column of their own where they differ."""
+    labels = '[{ at = -4, label = "0" }, { at = 8, label = "half way" }, 20]'
+    text = SAMPLE.replace("from = 0\nto = 40", "from = -4\nto = 20").replace(
+        'kind = "shunt"\nrange = "40 A"', 'kind = "direct"'
+    )
+    heads, rows = [], []
+    for numbered in ("[-4, 8, 20]", labels):
+        dial_file.write_text(
+            text.replace(
+                "radius = 44.0", f"radius = 44.0\nnumbered = {numbered}\ndivisions = {{ every = 4 }}"
+            ),
+            encoding="utf-8",
+        )
+        lines = run("table", dial_file).stdout.splitlines()
+        heads.append(lines[1].split()[:2])
+        rows.append([line.split()[:2] for line in lines[3:]])
+    assert heads == [["value", "drive"], ["value", "label"]]
+    values = ["−4", "0", "4", "8", "12", "16", "20"]
+    assert [row[0] for row in rows[0]] == [row[0] for row in rows[1]] == values
+    assert [rows[1][i][1] for i in (0, 3, 6)] == ["0", "half", "20"]
+
+
+def test_spreads_are_of_the_chosen_scales_and_said_once(dial_file: Path) -> None:
+    """Repeats of the movement's readings are said once for all scales; a scale's own only with it."""
+    scale = SAMPLE[SAMPLE.index("[[scale]]") : SAMPLE.index("[plate]")]
+    of_movement = "".join(f'[[movement.reading]]\ncurrent = "0.5 mA"\nangle = {a}\n' for a in (0.2, 0.6))
+    own = "".join(f"[[scale.reading]]\nvalue = 10\nangle = {a}\n" for a in (-22.0, -21.0))
+    text = SAMPLE.replace("[circuit]", of_movement + "[circuit]")
+    third = scale.replace("44.0", "34.0") + own
+    dial_file.write_text(
+        text.replace("[plate]", scale.replace("44.0", "39.0") + third + "[plate]"), encoding="utf-8"
+    )
+    shared = "2 readings at 0 deg nominal, spread 0.4 deg, averaged"
+    of_third = "scale 3: 2 readings at -22 deg nominal, spread 1 deg, averaged"
+    for words, expected in (
+        ([], [shared, of_third]),
+        (["--scale", "1"], [shared]),
+        (["--scale", "3"], [of_third]),
+    ):
+        lines = run("table", dial_file, *words).stdout.splitlines()
+        assert [line for line in lines if "spread" in line] == expected
+
+
 def test_readable_table_shows_the_worth_of_the_correction(tmp_path: Path) -> None:
     """A shunt built 1 % high reads high by 1 % less its share on a linear face: worked by hand at 40 A.
 
@@ -165,9 +216,9 @@ def test_an_output_that_is_a_link_is_written_through(dial_file: Path) -> None:
     assert target.read_bytes().startswith(b"<?xml")
 
 
-def test_watch_draws_again_when_the_file_changes(dial_file: Path) -> None:
-    """``--watch`` draws, survives a mistake, draws again once it is mended, and ends at Ctrl-C."""
-    output = dial_file.with_suffix(".svg")
+@contextmanager
+def watching(dial_file: Path, output: Path) -> Iterator[Callable[[str], None]]:
+    """Draw with ``--watch``; give a function that waits until the program has said some words."""
     words = [sys.executable, "-m", "dialgen", "draw", str(dial_file), "-o", str(output), "--watch"]
     process = subprocess.Popen(
         words, stderr=subprocess.PIPE, text=True, env={**os.environ, "PYTHONUNBUFFERED": "1"}
@@ -181,6 +232,17 @@ def test_watch_draws_again_when_the_file_changes(dial_file: Path) -> None:
         pytest.fail(f"the program ended before it said {words!r}")
 
     try:
+        yield until
+    finally:
+        process.send_signal(signal.SIGINT)
+        process.stderr.close()
+        assert process.wait(timeout=20) == 0
+
+
+def test_watch_draws_again_when_the_file_changes(dial_file: Path) -> None:
+    """``--watch`` draws, survives a mistake, draws again once it is mended, and ends at Ctrl-C."""
+    output = dial_file.with_suffix(".svg")
+    with watching(dial_file, output) as until:
         until("drawn at")
         first = output.read_bytes()
         dial_file.write_text(SAMPLE.replace("radius = 44.0", "radius = -1"), encoding="utf-8")
@@ -190,10 +252,49 @@ def test_watch_draws_again_when_the_file_changes(dial_file: Path) -> None:
         dial_file.write_text(SAMPLE.replace("radius = 44.0", "radius = 40.0"), encoding="utf-8")
         until("drawn at")
         assert output.read_bytes() != first
-    finally:
-        process.send_signal(signal.SIGINT)
-        process.stderr.close()
-        assert process.wait(timeout=20) == 0
+
+
+@pytest.mark.parametrize(
+    ("old", "new", "before", "after"),
+    [
+        (
+            "full = 44.0\n",
+            'full = 44.0\nreadings = "../data/x.csv"\n',
+            "current,angle\n0.5 mA,0.4\n",
+            "current,angle\n0.5 mA,4.0\n",
+        ),
+        (
+            'kind = "shunt"\nrange = "40 A"\n[[scale]]\nunit = "A"\n',
+            "kind = \"direct\"\n[[scale]]\nunit = \"%\"\nlaw = { kind = 'table', file = '../data/x.csv' }\n",
+            "value,signal\n0,0\n20,1\n40,4\n",
+            "value,signal\n0,0\n20,3\n40,4\n",
+        ),
+    ],
+    ids=["readings", "table law"],
+)
+def test_watch_sees_the_csv_wherever_it_lies(
+    tmp_path: Path, old: str, new: str, before: str, after: str
+) -> None:
+    """A CSV in another folder that the dial file names is watched too, also when saved by renaming."""
+    assert old in SAMPLE
+    sheet, path, output = tmp_path / "data" / "x.csv", tmp_path / "meter" / "m.toml", tmp_path / "m.svg"
+    for file, text in ((sheet, before), (path, SAMPLE.replace(old, new))):
+        file.parent.mkdir()
+        file.write_text(text, encoding="utf-8")
+    with watching(path, output) as until:
+        until("drawn at")
+        first = output.read_bytes()
+        sheet.with_name("new").write_text(after + "\n", encoding="utf-8")
+        sheet.with_name("new").replace(sheet)
+        until("drawn at")
+        assert output.read_bytes() != first
+
+
+def test_a_watched_file_may_be_away(dial_file: Path) -> None:
+    """A file that is gone between two looks, as when an editor renames, is no error."""
+    dial_file.write_text('readings = "gone.csv"\nreadings = "a\0b.csv"\n', encoding="utf-8")
+    assert [name for name, _, _ in _stamps(dial_file)] == [str(dial_file)]
+    assert list(_stamps(dial_file.with_name("none.toml"))) == []
 
 
 def test_layers_and_margin_are_the_users(dial_file: Path) -> None:
@@ -231,3 +332,13 @@ def test_every_command_has_help_with_an_example() -> None:
         assert f"  {name} " in listing
         assert f"  dialgen {name} " in run(name, "--help").stdout
     assert "_DIALGEN_COMPLETE" in listing
+
+
+def test_defaults_of_draw_are_those_of_python() -> None:
+    """What ``draw`` writes out, so that its help loads nothing, is what the library takes by default."""
+    options = {option.name: option for option in draw_command.params}
+    assert options["margin"].default == DEFAULT_MARGIN_MM
+    assert options["resolution"].default == Options().resolution_dpi
+    assert options["inline_glyphs"].default == Options().inline_glyphs
+    assert options["layers"].default == ",".join(Purpose)
+    assert all(f" {ending}" in options["outputs"].help for ending in RENDERERS)

@@ -6,6 +6,7 @@ for, so that ``dialgen --help`` waits for nothing heavy.
 
 from __future__ import annotations
 
+import codecs
 import difflib
 import gc
 import os
@@ -77,16 +78,21 @@ def program(ctx: click.Context) -> None:
 
 
 def main() -> None:
-    """Run the program; exit 0 done, 1 the instrument falls short, 2 the input is wrong."""
-    from dialgen.cli.report import guarded
+    """Run the program, and exit with its status.
+
+    0 is done, 2 that the input is wrong, 70 a fault of the program itself, 130 that it was stopped;
+    1 is kept for commands to come that find an instrument short of what was asked.
+    """
+    from dialgen.cli.report import guarded, spell
 
     # A command lives a moment: numpy need not start a pool of threads for matrices we have none of,
     # pydantic not search the machine for plugins, nor the collector walk over what start-up made.
     os.environ.setdefault("OPENBLAS_NUM_THREADS", "1")
     os.environ.setdefault("PYDANTIC_DISABLE_PLUGINS", "1")
     gc.set_threshold(50_000)
+    codecs.register_error("dialgen", spell)
     for stream in (sys.stdout, sys.stderr):
-        # A value such as −5 or Ω must come out on any terminal, if need be as a question mark.
+        # A value such as −5 kΩ must come out on any terminal, if need be spelt out.
         if hasattr(stream, "reconfigure"):
-            stream.reconfigure(errors="replace")
+            stream.reconfigure(errors="dialgen")
     sys.exit(guarded(program))

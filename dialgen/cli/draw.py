@@ -3,13 +3,14 @@
 from __future__ import annotations
 
 import contextlib
+import re
 import time
-from collections.abc import Callable
+from collections.abc import Callable, Iterator
 from pathlib import Path
 
 import click
 
-from dialgen.cli.report import say, say_error, say_warnings
+from dialgen.cli.report import say, say_error, say_if_slow, say_warnings
 from dialgen.errors import DialgenError
 
 _EPILOG = """\b
@@ -21,9 +22,14 @@ Examples:
 """
 
 
+_LAYERS = ("print", "cut", "guide")
+_NAMED = re.compile(r"""\b(?:readings|file)["']?\s*=\s*(?:"([^"\n]+)"|'([^'\n]+)')""")
+"""A key of the dial file that names a CSV file."""
+
+
 def _purposes(ctx: click.Context, param: click.Parameter, text: str) -> tuple[str, ...]:
     names = tuple(part.strip() for part in text.split(",") if part.strip())
-    if not names or not set(names) <= {"print", "cut", "guide"}:
+    if not names or not set(names) <= set(_LAYERS):
         raise click.BadParameter(f"{text!r} is not a list of print, cut and guide, such as print,cut")
     return names
 
@@ -48,7 +54,7 @@ def _purposes(ctx: click.Context, param: click.Parameter, text: str) -> tuple[st
 )
 @click.option(
     "--layers",
-    default="print,cut,guide",
+    default=",".join(_LAYERS),
     show_default=True,
     callback=_purposes,
     help="What to draw: print is ink, cut the outline and holes, guide the pivot cross and the window.",
@@ -66,7 +72,9 @@ def _purposes(ctx: click.Context, param: click.Parameter, text: str) -> tuple[st
     help="SVG: write each letter out where it stands, for programs that cannot follow references.",
 )
 @click.option(
-    "--watch", is_flag=True, help="Draw again whenever the dial file changes, until stopped with Ctrl-C."
+    "--watch",
+    is_flag=True,
+    help="Draw again whenever the dial file or a CSV it names changes, until stopped with Ctrl-C.",
 )
 def command(
     file: str, outputs: tuple[str, ...], margin: float, layers: tuple[str, ...],
@@ -103,26 +111,25 @@ def _draw(
     say_warnings(face.warnings())
     options = Options(resolution_dpi=resolution, inline_glyphs=inline_glyphs)
     purposes = [Purpose(name) for name in layers]
-    api.write_files(
-        [
-            (path, face.render(path.suffix.lower(), margin_mm=margin, layers=purposes, options=options))
-            for path in map(Path, outputs)
-        ]
-    )
+    files = []
+    for path in map(Path, outputs):
+        with say_if_slow(f"drawing {path} ..."):
+            data = face.render(path.suffix.lower(), margin_mm=margin, layers=purposes, options=options)
+        files.append((path, data))
+    api.write_files(files)
 
 
 def _watch(file: str, draw: Callable[[], None]) -> None:
-    """Draw now and at every change of the dial file or a CSV beside it, until Ctrl-C."""
+    """Draw now and at every change of the dial file or a CSV it names, until Ctrl-C."""
     with contextlib.suppress(KeyboardInterrupt):
-        _draw_at_changes(file, draw)
+        _draw_at_changes(Path(file), draw)
 
 
-def _draw_at_changes(file: str, draw: Callable[[], None]) -> None:
-    folder = Path(file).parent
+def _draw_at_changes(file: Path, draw: Callable[[], None]) -> None:
     say(f"watching {file}; Ctrl-C stops")
     seen: object = None
     while True:
-        now = _stamps(folder, Path(file))
+        now = list(_stamps(file))
         if now != seen:
             seen = now
             try:
@@ -133,6 +140,13 @@ def _draw_at_changes(file: str, draw: Callable[[], None]) -> None:
         time.sleep(0.3)
 
 
-def _stamps(folder: Path, file: Path) -> object:
-    beside = sorted(folder.glob("*.csv")) if folder.is_dir() else []
-    return [(str(p), p.stat().st_mtime_ns, p.stat().st_size) for p in (file, *beside) if p.exists()]
+def _stamps(file: Path) -> Iterator[tuple[str, int, int]]:
+    """Return name, time and size of the dial file and of each CSV it names, of those that are there."""
+    text = ""
+    with contextlib.suppress(OSError):
+        text = file.read_text(encoding="utf-8", errors="replace")
+    for path in (file, *(file.parent / (plain or literal) for plain, literal in _NAMED.findall(text))):
+        # A file may be away for a moment, while an editor puts a new one in its place.
+        with contextlib.suppress(OSError, ValueError):
+            stat = path.stat()
+            yield str(path), stat.st_mtime_ns, stat.st_size

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import os.path
 from pathlib import Path
 
 import click
@@ -33,7 +34,7 @@ def command(template: str | None, file: str | None, listed: bool, force: bool) -
             "give a template and a file, or --list to see the templates", click.get_current_context()
         )
     text = templates.text(template)
-    if Path(file).exists() and not force:
+    if os.path.exists(file) and not force:
         raise OutputError(f"{file}: is there already; give another name, or --force to overwrite it")
     api.write_files([(Path(file), text.encode())])
     click.echo(f"{file}: written; fill it in, then: dialgen draw {file} -o {Path(file).with_suffix('.pdf')}")

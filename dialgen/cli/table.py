@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import json
 import math
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from typing import TYPE_CHECKING
 
 import click
@@ -12,7 +12,6 @@ import click
 from dialgen.cli.report import say_warnings
 
 if TYPE_CHECKING:
-    from dialgen.api import Face
     from dialgen.face.ruling import Mark, RuledScale, Spot
 
 _EPILOG = """\b
@@ -22,7 +21,16 @@ Examples:
   dialgen table meter.toml --at 12.5 --at 30
 """
 
-_HEAD = ("value", "drive", "angle", "x", "y", "linear face off by")
+_HEADS = {
+    "value": "",
+    "label": "",
+    "drive": "",
+    "angle": "deg",
+    "x": "mm",
+    "y": "mm",
+    "linear face off by": "",
+}
+"""The columns, and their units."""
 
 
 @click.command("table", epilog=_EPILOG)
@@ -41,23 +49,23 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
 
     Angles are degrees from straight up, clockwise; x and y millimetres from the pivot.  The last
     column is what an evenly divided face would have been wrong by at that mark: the worth of
-    the correction.
+    the correction.  Labels are shown where one is not the plain number.
     """
     from dialgen import api
-    from dialgen.errors import InputError
     from dialgen.face.ruling import spots
 
     face = api.load(file)
     say_warnings(face.warnings())
-    if only is not None and only > len(face.scales):
-        raise InputError(f"there is no scale {only}; the dial has {len(face.scales)}")
-    chosen = [s for i, s in enumerate(face.scales, 1) if only in (None, i)]
-    shown = [(s, spots(s.dial, s.line, values) if values else s.marks) for s in chosen]
+    if only is not None:
+        face.chain(only)  # refuses a scale that is not there
+    chosen = {i: s for i, s in enumerate(face.scales, 1) if only in (None, i)}
+    shown = [(s, spots(s.dial, s.line, values) if values else s.marks) for s in chosen.values()]
     if as_json:
-        click.echo(json.dumps({"scales": [_scale_json(s, marks) for s, marks in shown]}, ensure_ascii=False))
+        # Plain ASCII, so that it is the same whatever the encoding of standard output.
+        click.echo(json.dumps({"scales": [_scale_json(s, marks) for s, marks in shown]}))
         return
     click.echo("\n\n".join(_scale_text(s, marks) for s, marks in shown))
-    for line in _spreads(face):
+    for line in _spreads(chosen):
         click.echo(line)
 
 
@@ -96,7 +104,8 @@ def _scale_text(scale: RuledScale, marks: Sequence[Spot | Mark]) -> str:
         off = linear_error(scale, m)
         rows.append(
             (
-                getattr(m, "label", None) or plain_number(m.value),
+                plain_number(m.value),
+                getattr(m, "label", None) or "",
                 f"{m.drive:.6f}",
                 f"{m.angle_deg:.4f}",
                 f"{m.x:.4f}",
@@ -114,19 +123,22 @@ def _rounded(off: float) -> float:
 
 
 def _columns(rows: list[tuple[str, ...]]) -> list[str]:
-    units = ("", "", "deg", "mm", "mm", "")
-    table = [_HEAD, units, *rows]
-    widths = [max(len(row[i]) for row in table) for i in range(len(_HEAD))]
+    table = [tuple(_HEADS), tuple(_HEADS.values()), *rows]
+    if all(label in ("", value) for value, label, *_ in rows):
+        table = [(value, *rest) for value, _, *rest in table]
+    widths = [max(map(len, column)) for column in zip(*table, strict=True)]
     return ["  ".join(cell.rjust(w) for cell, w in zip(row, widths, strict=True)).rstrip() for row in table]
 
 
-def _spreads(face: Face) -> list[str]:
+def _spreads(scales: Mapping[int, RuledScale]) -> list[str]:
+    """Return a line for each point with several readings; those of the movement serve every scale."""
     lines = []
-    for number, scale in enumerate(face.dial.scales, 1):
-        for point in scale.correction.points:
+    for number, scale in scales.items():
+        whose = f"scale {number}: " if scale.spec.all_readings() else ""
+        for point in scale.dial.correction.points:
             if point.count > 1:
                 lines.append(
-                    f"scale {number}: {point.count} readings at {point.nominal_deg:.4g} deg nominal, "
+                    f"{whose}{point.count} readings at {point.nominal_deg:.4g} deg nominal, "
                     f"spread {point.spread_deg:.3g} deg, averaged"
                 )
     return list(dict.fromkeys(lines))

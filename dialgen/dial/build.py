@@ -129,8 +129,7 @@ def _lowest_drive(wiring: Wiring) -> float:
 def _default_stops(movement: Movement, *, negative: bool) -> Span:
     ends = [movement.rest, movement.full]
     if negative:
-        # Where the pointer stands at full current reversed.
-        ends.append(2 * movement.rest - movement.full)
+        ends.append(-movement.full)
     return min(ends) - _STOP_ROOM_DEG, max(ends) + _STOP_ROOM_DEG
 
 

@@ -47,11 +47,10 @@ def read_sheet(path: Path, columns: tuple[str, ...], needed: tuple[str, ...] = (
         DialFileError: what it holds is wrong, with the place.
     """
     sheet = Sheet(str(path))
+    text = read_text(path, sheet.name, sheet.name).replace("\r", "\n")
     lines = [
         _cells(line, number, sheet)
-        for number, line in enumerate(
-            read_text(path, sheet.name, sheet.name).replace("\r", "\n").split("\n"), 1
-        )
+        for number, line in enumerate(text.split("\n"), 1)
         if line.strip(", \t") and not line.lstrip().startswith("#")
     ]
     if not lines:

@@ -34,10 +34,11 @@ _UNLIKE = 0.5
 _BARE = 1.0
 _TOO_LONG = 3.0
 _UNDIVIDED = 1.5
-_ODD_END = 0.5
+_ODD_END = 2.5
 _NOT_LEGAL = 8.0
 _HAIR_MM = 1e-9
-_DECADE = 1.0
+_WIDE = 3.0
+_DECADE = 2.0
 
 
 def cheapest_numerals(ruler: Ruler, forced: tuple[float, ...], wanted_mm: float) -> tuple[float, ...]:
@@ -159,12 +160,20 @@ def _is_odd(value: float) -> bool:
 
 
 def _any_edges(nodes: _Nodes) -> _Edges:
-    """Return edges between any nodes not too far apart; from decade to decade they cost little."""
+    """Return edges between any nodes not too far apart, dear but for 6 to 9 units of a power of ten."""
     here, there = np.triu_indices(len(nodes.values), 1)
     near = nodes.places[there] - nodes.places[here] < 4 * nodes.wanted_mm
-    here, there = here[near], there[near]
+    here, there = (
+        here[near & np.isfinite(nodes.values[there])],
+        there[near & np.isfinite(nodes.values[there])],
+    )
     decades = np.array([digits(v) == "1" for v in nodes.values.tolist()])
-    return _roomy(nodes, here, there, np.where(decades[here] & decades[there], _DECADE, _NOT_LEGAL))
+    gaps = nodes.values[there] - nodes.values[here]
+    units = 10.0 ** np.floor(np.log10(gaps) + 1e-9)
+    whole = np.abs(gaps / units - np.round(gaps / units)) < 1e-6
+    whole &= np.abs(nodes.values[here] / units - np.round(nodes.values[here] / units)) < 1e-6
+    costs = np.where(decades[here] & decades[there], _DECADE, np.where(whole, _WIDE, _NOT_LEGAL))
+    return _roomy(nodes, here, there, costs)
 
 
 def _roomy(

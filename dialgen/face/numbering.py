@@ -13,6 +13,7 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass, replace
+from enum import IntEnum
 from itertools import pairwise
 
 import numpy as np
@@ -29,7 +30,7 @@ _MISFIT = 2.0
 _HALF_MISFIT = 1.0
 _EXCESS = 0.15
 _DIGITS = 0.7
-_QUARTERS = 0.6
+_MOST_STEPS = 14
 _HAIR_MM = 1e-9
 
 
@@ -51,43 +52,51 @@ def _forced(ruler: Ruler) -> tuple[float, ...]:
     return (ruler.start, *zero, ruler.end)
 
 
+class _Order(IntEnum):
+    """Which steps are asked first: 1-2-5 steps that fit both ends, then 2.5, then those that do not fit."""
+
+    WHOLE = 0
+    QUARTERS = 1
+    ODD = 2
+
+
 @dataclass(frozen=True, slots=True)
 class _Choice:
     """The values that one step numbers, and what it costs that the ends do not fit it."""
 
-    quarter: bool
+    order: _Order
     values: tuple[float, ...]
     misfit: float
 
 
 def _even_steps(ruler: Ruler, forced: tuple[float, ...]) -> tuple[float, ...]:
+    """Return the numerals of the best step that leaves them room; a step that fits both ends first."""
     least, most = wanted_count(ruler.length_mm)
-    best: tuple[float, tuple[float, ...]] = (math.inf, forced)
-    whole_fits = False
-    for choice in _roomy(ruler, list(_choices(ruler)), forced):
-        if choice.quarter and whole_fits:
-            continue
+
+    def cost(choice: _Choice) -> tuple[int, float]:
         count = len(choice.values)
-        excess = max(least - count, count - most, 0)
-        whole_fits = whole_fits or not (choice.misfit or excess)
         pitch_mm = ruler.length_mm / (count - 1)
-        cost = abs(math.log2(pitch_mm / _PITCH_MM)) + excess * _EXCESS + choice.misfit
-        cost += choice.quarter * _QUARTERS + any(len(digits(v)) > 1 for v in choice.values[1:-1]) * _DIGITS
-        best = min(best, (cost, choice.values), key=lambda item: item[0])
-    return best[1]
+        excess = max(least - count, count - most, 0)
+        long_numerals = any(len(digits(v)) > 1 for v in choice.values[1:-1])
+        doublings = abs(math.log2(pitch_mm / _PITCH_MM)) + excess * _EXCESS + long_numerals * _DIGITS
+        return choice.order, doublings + choice.misfit
+
+    roomy = _roomy(ruler, list(_choices(ruler)), forced)
+    return min(roomy, key=cost, default=_Choice(_Order.ODD, forced, 0.0)).values
 
 
 def _choices(ruler: Ruler) -> Iterator[_Choice]:
     """Yield the steps of 1, 2 and 5·10^n that number a bearable count of values, then of 2.5·10^n."""
     span = ruler.end - ruler.start
-    _, most = wanted_count(ruler.length_mm)
     magnitude = math.floor(math.log10(span))
     for mantissa in (10, 20, 50, 25):
         for exponent in range(magnitude - 2, magnitude + 1):
             step = decimal_value(mantissa, exponent - 1)
-            if 1 <= span / step <= 2 * most:
+            if 1 <= span / step <= _MOST_STEPS:
                 values, misfit = _stepped(ruler, step)
-                yield _Choice(mantissa == 25, values, misfit)
+                order = _Order.ODD if misfit else _Order.QUARTERS if mantissa == 25 else _Order.WHOLE
+                if order is not _Order.ODD or mantissa != 25:
+                    yield _Choice(order, values, misfit)
 
 
 def _roomy(ruler: Ruler, choices: Sequence[_Choice], forced: tuple[float, ...]) -> Iterator[_Choice]:

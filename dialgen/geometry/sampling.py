@@ -39,8 +39,8 @@ def check_moves(values: Array, signals: Array) -> None:
         bad = float(values[~np.isfinite(signals)][0])
         raise InputError(f"the law has no signal at {bad:.6g}; it must hold over the whole scale")
     steps = signals[1:] - signals[:-1]
-    rising = signals[-1] > signals[0]
-    turned = np.flatnonzero(steps <= 0 if rising else steps >= 0)
+    # The first step says which way, so that what is named is where the law turns.
+    turned = np.flatnonzero(steps <= 0 if signals[1] > signals[0] else steps >= 0)
     if len(turned):
         at = int(turned[0])
         raise InputError(

@@ -2,13 +2,20 @@
 
 from __future__ import annotations
 
+import codecs
+import json
 import os
 import subprocess
 import sys
+import time
 from pathlib import Path
 
 import dialfile_samples as samples
 import pytest
+from bad_dials import READINGS
+
+from dialgen.cli import report
+from dialgen.cli.report import say_if_slow, spell
 
 _MODULE = [sys.executable, "-m", "dialgen"]
 _SCRIPT = [str(Path(sys.executable).parent / "dialgen")]
@@ -123,18 +130,80 @@ def test_an_output_is_replaced_whole(dial: Path) -> None:
     assert sorted(p.name for p in dial.parent.iterdir()) == ["dial.svg", "dial.toml"]
 
 
-def test_a_fault_of_the_program_itself_is_one_line_too(dial: Path) -> None:
-    """An error that nobody foresaw is said in a line, and raised only where the environment asks for it."""
+@pytest.mark.parametrize("error", ["ZeroDivisionError('by\\nzero')", "OSError(5, 'no\\nanswer')"])
+def test_a_fault_of_the_program_itself_is_one_line_too(dial: Path, error: str) -> None:
+    """An unforeseen error is a line with status 70, and raised only where the environment asks for it."""
     code = (
         "import dialgen.api, dialgen.cli, sys\n"
-        "def load(path): raise ZeroDivisionError('by\\nzero')\n"
+        f"def load(path): raise {error}\n"
         "dialgen.api.load = load\n"
         f"sys.argv = ['dialgen', 'table', {str(dial)!r}]\n"
         "dialgen.cli.main()\n"
     )
     done = _run([sys.executable, "-c", code])
-    assert done.returncode == 2
-    assert done.stderr.startswith("a fault in dialgen itself, ZeroDivisionError: by zero; please report it")
+    assert done.returncode == 70
+    assert done.stderr.startswith(f"a fault in dialgen itself, {error.split('(')[0]}: ")
+    assert "DIALGEN_TRACEBACK=1" in done.stderr
     assert len(done.stderr.splitlines()) == 1
     asked = _run([sys.executable, "-c", code], env={**os.environ, "DIALGEN_TRACEBACK": "1"})
     assert "Traceback" in asked.stderr
+
+
+@pytest.mark.skipif(not Path("/dev/full").exists(), reason="needs a device that is always full")
+def test_errors_that_cannot_be_said_leave_the_status(dial: Path) -> None:
+    """Where standard error takes nothing, the status is still that of the work."""
+    with Path("/dev/full").open("w") as full:
+        for words, status in ((["table", dial], 0), (["table", "none.toml"], 2)):
+            done = subprocess.run(
+                [*_MODULE, *words], stdout=subprocess.PIPE, stderr=full, timeout=60, check=False
+            )
+            assert done.returncode == status
+            assert bool(done.stdout) == (status == 0)
+
+
+@pytest.mark.parametrize("encoding", ["ascii", "cp1252", "latin-1"])
+def test_another_encoding_spells_out_what_it_lacks(dial: Path, encoding: str) -> None:
+    """Without UTF-8 a minus is a hyphen, kΩ kohm and ∞ inf, never a figure that looks like another."""
+    text = samples.SHUNT.replace(READINGS, "").replace("[circuit]", '[circuit]\nkind = "direct"\n#')
+    for old, new in {
+        'kind = "shunt"\nrange = "40 A"\nbuilt = "1.885 mohm"': "",
+        'unit = "A"\nfrom = 0': 'unit = "kohm"\nfrom = -20',
+        "[0, 10, 20, 30, 40]": '[{ at = -20, label = "∞" }, { at = 40, label = "µ°" }]',
+    }.items():
+        text = text.replace(old, new)
+    dial.write_text(text, encoding="utf-8")
+    environment = {**os.environ, "PYTHONIOENCODING": encoding}
+    done = subprocess.run(
+        [*_MODULE, "table", dial], capture_output=True, timeout=60, check=False, env=environment
+    )
+    lines = done.stdout.decode(encoding).splitlines()
+    assert lines[0] == "-20 to 40 kohm", done.stderr
+    assert lines[3].split()[:2] == ["-20", "inf"]
+    assert lines[-1].split()[:2] == ["40", "udeg" if encoding == "ascii" else "µ°"]
+    json_text = subprocess.run(
+        [*_MODULE, "table", dial, "--json"], capture_output=True, timeout=60, check=False, env=environment
+    ).stdout
+    (scale,) = json.loads(json_text)["scales"]
+    assert [m["label"] for m in scale["marks"] if m["label"]] == ["∞", "µ°"]
+
+
+@pytest.mark.parametrize(
+    ("written", "spelt"),
+    [("−20", b"-20"), ("kΩ k\u2126", b"kohm kohm"), ("µA \u03bcA", b"uA uA"), ("∞ °C ☺é", b"inf degC ??")],
+)
+def test_signs_are_spelt_out(written: str, spelt: bytes) -> None:
+    """Each sign that meters use has a spelling in plain letters, and anything else is a question mark."""
+    codecs.register_error("dialgen-test", spell)
+    assert written.encode("ascii", "dialgen-test") == spelt
+
+
+def test_only_what_is_slow_is_said(
+    monkeypatch: pytest.MonkeyPatch, capfd: pytest.CaptureFixture[str]
+) -> None:
+    """A drawing that takes longer than the limit is named on standard error, a quick one is not."""
+    with say_if_slow("drawing quick.png ..."):
+        pass
+    monkeypatch.setattr(report, "SLOW_S", 0.01)
+    with say_if_slow("drawing slow.png ..."):
+        time.sleep(0.5)
+    assert capfd.readouterr().err == "drawing slow.png ...\n"

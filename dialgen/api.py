@@ -17,10 +17,10 @@ import numpy as np
 from numpy.typing import ArrayLike
 
 from dialgen import dialfile
-from dialgen.dial import Chain, Dial, build
+from dialgen.dial import Chain, Dial, attempt
 from dialgen.dialfile import Source
 from dialgen.drawing import Drawing, Purpose
-from dialgen.errors import DialFileError, Fault, InputError, OutputError, Refused
+from dialgen.errors import DialFileError, Fault, InputError, OutputError
 from dialgen.face.compose import compose
 from dialgen.face.plate import check_holes, outliner
 from dialgen.face.review import review
@@ -137,14 +137,10 @@ def load(path: str | PathLike[str]) -> Face:
     """
     file, source = dialfile.read(path)
     shape = outliner(file.plate)
-    errors = list(check_holes(file.plate))
-    try:
-        dial = build(file)
-        scales = rule(dial, shape, numeral_width)
-    except Refused as refused:
-        errors += refused.errors
-    except InputError as error:
-        errors.append(error)
+    # Whatever stage finds an error, the others go on with what is sound, so that all are told at once.
+    dial, errors = attempt(file)
+    scales, more = rule(dial, shape, numeral_width)
+    errors = [*check_holes(file.plate), *errors, *more]
     if errors:
         raise source.refusal(source.fault_of(error) for error in errors)
     return Face(source, dial, scales)

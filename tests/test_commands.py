@@ -118,7 +118,7 @@ def test_readable_table_shows_values_and_labels(dial_file: Path) -> None:
     """The first column is the value, −4 to 20; labels have a column of their own where they differ."""
     labels = '[{ at = -4, label = "0" }, { at = 8, label = "half way" }, 20]'
     text = SAMPLE.replace("from = 0\nto = 40", "from = -4\nto = 20").replace(
-        'kind = "shunt"\nrange = "40 A"', 'kind = "direct"'
+        'kind = "shunt"\nrange = "40 A"', 'kind = "direct"\nrest = -4'
     )
     heads, rows = [], []
     for numbered in ("[-4, 8, 20]", labels):
@@ -339,6 +339,5 @@ def test_defaults_of_draw_are_those_of_python() -> None:
     options = {option.name: option for option in draw_command.params}
     assert options["margin"].default == DEFAULT_MARGIN_MM
     assert options["resolution"].default == Options().resolution_dpi
-    assert options["inline_glyphs"].default == Options().inline_glyphs
     assert options["layers"].default == ",".join(Purpose)
     assert all(f" {ending}" in options["outputs"].help for ending in RENDERERS)

@@ -21,11 +21,19 @@ class Coil:
     resistance: float | None = None
 
     def current_a(self, purpose: str) -> float:
-        """Return the full-deflection current.
+        """Return the full-deflection current, for a purpose that may go on to ask for the resistance.
 
         Raises:
-            InputError: it is not given; the message says what needs it.
+            InputError: it is not given; the message says what needs it, and names both figures
+                where neither is.
         """
+        if self.current is None and self.resistance is None:
+            raise InputError(
+                f"{purpose} needs the full-deflection current and the coil's resistance; "
+                'add current = "1 mA" and resistance = "75 ohm"',
+                CURRENT_KEY,
+                RESISTANCE_KEY,
+            )
         if self.current is None:
             raise InputError(
                 f'{purpose} needs the full-deflection current; add current = "1 mA"', CURRENT_KEY

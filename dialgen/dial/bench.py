@@ -13,16 +13,24 @@ from dialgen.dialfile.readings import Reading
 from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.correction import Correction, from_readings
 from dialgen.geometry.monotone import through
-from dialgen.stage import Array
+from dialgen.stage import Array, Span
 
 Read = TypeVar("Read")
+
+_FAR = 0.1
 
 NominalAngle = Callable[[Array], Array]
 """From drives, or from values of a scale, to the angles where the pointer should stand."""
 
 
 def correction(
-    movement: Movement, readings: Sequence[Reading], key: Key, by_drive: NominalAngle, by_value: NominalAngle
+    movement: Movement,
+    readings: Sequence[Reading],
+    key: Key,
+    *,
+    by_drive: NominalAngle,
+    by_value: NominalAngle,
+    stops_deg: Span,
 ) -> tuple[Correction, tuple[Remark, ...]]:
     """Return the correction through the readings, and the remarks on it.
 
@@ -32,6 +40,7 @@ def correction(
         key: the readings' key: a list of tables, or the name of a CSV file.
         by_drive: the nominal angle at a drive.
         by_value: the nominal angle at a value of the scale the readings belong to.
+        stops_deg: how far the pointer can swing.
 
     Raises:
         InputError: a reading that cannot be placed, or readings that do not move one way.
@@ -48,7 +57,20 @@ def correction(
         made = from_readings(pairs, movement.rest, movement.full)
     except InputError as error:
         raise InputError(error.message, _item(key, int(error.keys[0][0]))) from None
-    return made, tuple(Remark(text, key) for text in made.remarks)
+    low, high = stops_deg
+    far_deg = _FAR * abs(movement.full - movement.rest)
+    pinned = [i for i, at in enumerate(nominal.tolist()) if not low - far_deg <= at <= high + far_deg]
+    return made, (
+        *(Remark(text, key) for text in made.remarks),
+        *(Remark(_pinned(float(nominal[i])), _item(key, i)) for i in pinned),
+    )
+
+
+def _pinned(nominal_deg: float) -> str:
+    return (
+        f"the pointer should stand at {nominal_deg:.4g} degrees here, far beyond its stops; "
+        "look again at what was applied"
+    )
 
 
 def readings_key(owner: Key, table: object) -> Key:

@@ -3,9 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
 from dataclasses import dataclass, replace
-from typing import TypeVar
 
 import numpy as np
 
@@ -24,8 +22,6 @@ from dialgen.stage import Affine, Array, Span, Stage
 _STOP_ROOM_DEG = 5.0
 _LEAST_TRAVEL_DEG = 0.01
 _NO_DRIVE = 1e-12
-
-Made = TypeVar("Made")
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -55,35 +51,43 @@ def build(file: DialFile) -> Dial:
     Raises:
         Refused: with everything that is wrong, as far as one error does not hide another.
     """
+    dial, errors = attempt(file)
+    if errors:
+        raise Refused(errors)
+    return dial
+
+
+def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
+    """Return the dial with the scales that can be made, and what is wrong with the others."""
     errors: list[InputError] = []
     coil = Coil(current=file.movement.current, resistance=file.movement.resistance)
-    wirings = [_tried(errors, _wiring, scale, i, file.circuit, coil) for i, scale in enumerate(file.scale)]
-    if errors:
-        raise Refused(errors)
+    wirings: dict[int, Wiring | None] = {}
+    for i, scale in enumerate(file.scale):
+        try:
+            wirings[i] = _wiring(scale, i, file.circuit, coil)
+        except InputError as error:
+            errors.append(error)
     lowest = [
-        _lowest_drive(wiring) if wiring else _lowest_deflection(file.movement, scale, file.circuit)
-        for wiring, scale in zip(wirings, file.scale, strict=True)
+        _lowest_drive(wiring) if wiring else _lowest_deflection(file.movement, file.scale[i], file.circuit)
+        for i, wiring in wirings.items()
     ]
-    stops = file.movement.stops or _default_stops(file.movement, negative=min(lowest) < -_NO_DRIVE)
-    maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings[0])
-    scales, remarks = [], []
-    for i, (scale, wiring) in enumerate(zip(file.scale, wirings, strict=True)):
-        made = _tried(errors, maker.scale, scale, i, wiring)
-        if made:
-            scales.append(made[0])
-            remarks += made[1]
-    if errors:
-        raise Refused(errors)
-    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks)))
-
-
-def _tried(errors: list[InputError], make: Callable[..., Made], *given: object) -> Made | None:
-    """Return what ``make`` makes of ``given``, or None with its error noted."""
-    try:
-        return make(*given)
-    except InputError as error:
-        errors.append(error)
-        return None
+    negative = min(lowest, default=0.0) < -_NO_DRIVE
+    stops = file.movement.stops or _default_stops(file.movement, negative=negative)
+    maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings.get(0))
+    if 0 not in wirings and any(r.value is not None for r in file.movement.all_readings()):
+        # Readings by value go through the first scale; without it the others are not made either.
+        return Dial(file, (), stops, ()), errors
+    scales: list[ScaleDial] = []
+    remarks: list[Remark] = []
+    for i, wiring in wirings.items():
+        try:
+            made, more = maker.scale(file.scale[i], i, wiring)
+        except InputError as error:
+            errors.append(error)
+        else:
+            scales.append(made)
+            remarks += more
+    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks))), list(dict.fromkeys(errors))
 
 
 def _wiring(scale: Scale, index: int, shared: Circuit | None, coil: Coil) -> Wiring | None:
@@ -155,6 +159,7 @@ class _Maker:
         return made, remarks
 
     def _corrected(self, scale: Scale, key: Key, wiring: Wiring) -> tuple[ScaleDial, tuple[Remark, ...]]:
+        _check_drive(self.movement, scale, key, wiring)
         plain = self._chain(scale, wiring)
         own = scale.all_readings()
         readings, owner, table = (
@@ -162,7 +167,12 @@ class _Maker:
         )
         by_value = self._by_value(plain) if own else self._by_first_value()
         made, remarks = correction(
-            self.movement, readings, readings_key(owner, table), self._by_drive, by_value
+            self.movement,
+            readings,
+            readings_key(owner, table),
+            by_drive=self._by_drive,
+            by_value=by_value,
+            stops_deg=self.stops_deg,
         )
         if readings:
             last, _ = link(made.stage, np.array(self.stops_deg))
@@ -214,6 +224,20 @@ class _Maker:
         # A reading may lie beyond the nominal stops: the departure is what it is there to show.
         free = replace(chain, stops_deg=(-math.inf, math.inf))
         return free.angle
+
+
+def _check_drive(movement: Movement, scale: Scale, key: Key, wiring: Wiring) -> None:
+    """Refuse a scale that drives the movement where its response does not reach."""
+    low, _ = movement.response.domain
+    drives = wiring.drives[np.isfinite(wiring.drives)]
+    if drives.size and low == 0.0 and drives.min() < -_NO_DRIVE:
+        name, value = ("from", scale.start) if drives[0] < 0 else ("to", scale.end)
+        raise NoSuchValue(
+            f"{value:g} {scale.unit} drives the movement backwards, which a power response cannot show; "
+            "end the scale at rest, or give the response by points",
+            (*key, name),
+            ("movement", "response"),
+        )
 
 
 def _no_first_value(values: Array) -> Array:

@@ -33,7 +33,7 @@ class Wiring:
         links: value to drive.
         drives: the drives over the scale, from its first value on.
         terminals: what the circuit was built from.
-        circuit: the circuit itself, and the key of its table.
+        circuit: the circuit itself.
         remarks: what was assumed.
     """
 
@@ -41,7 +41,6 @@ class Wiring:
     drives: Array
     terminals: Terminals
     circuit: Circuit
-    circuit_key: Key
     remarks: tuple[Remark, ...]
 
     def designed(self, values: Array) -> Array:
@@ -86,9 +85,9 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     )
     law_link, signals = link(stage, values * factor)
     _check_law(law, stage, scale, key, span=span, takes=circuit.takes, values=values, signals=signals)
-    circuit_key: Key = (*key, "circuit") if scale.circuit else ("circuit",)
+    circuit_key: Key | None = (*key, "circuit") if scale.circuit else ("circuit",) if shared else None
     signal_unit = law.signal_unit(unit)
-    _check_units(circuit, signal_unit, law, key, circuit_key)
+    _check_units(circuit, signal_unit, law, key)
     zero = law.zero(span)
     terminals = Terminals(
         coil=coil,
@@ -100,15 +99,17 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     try:
         circuit_link, drives = link(circuit.stage(terminals), signals)
     except InputError as error:
-        raise _placed(error, circuit_key) from None
+        raise _placed(error, circuit_key, key) from None
     prefix_link = [link(Affine(factor), values)[0]] if factor != 1.0 else []
     return Wiring(
         links=(*prefix_link, law_link, circuit_link),
         drives=drives,
         terminals=terminals,
         circuit=circuit,
-        circuit_key=circuit_key,
-        remarks=(*_own_current(circuit, terminals, circuit_key), *past_points(law, scale, key)),
+        remarks=(
+            *_own_current(circuit, terminals, _under(circuit_key, key, "full")),
+            *past_points(law, scale, key),
+        ),
     )
 
 
@@ -166,7 +167,7 @@ def _law_mend(at: float, domain: Span) -> str:
     return f"the scale must lie above {low:g}" if at < low else f"the scale must end below {high:g}"
 
 
-def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key, circuit_key: Key) -> None:
+def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key) -> None:
     if circuit.takes is None or unit is None or circuit.takes == unit:
         return
     plain = isinstance(law, Linear) and law.per is None
@@ -177,17 +178,25 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key, circuit
         f"but the scale's signal is {what}; "
         "change the unit, the law or the circuit",
         (*key, "unit" if plain else "law"),
-        (*circuit_key, "kind"),
     )
 
 
-def _placed(error: InputError, circuit_key: Key) -> InputError:
-    """Put a circuit's relative keys under its table; keys of the movement are whole already."""
-    error.keys = tuple(k if k[:1] == ("movement",) else (*circuit_key, *k) for k in error.keys)
+def _placed(error: InputError, circuit_key: Key | None, key: Key) -> InputError:
+    """Put a circuit's relative keys under its table; keys of the movement are whole already.
+
+    Where there is no table the circuit is direct, full and at rest at the scale's own ends.
+    """
+    error.keys = tuple(
+        k if k[:1] == ("movement",) else _under(circuit_key, key, str(k[0])) for k in error.keys
+    )
     return error
 
 
-def _own_current(circuit: Circuit, terminals: Terminals, circuit_key: Key) -> tuple[Remark, ...]:
+def _under(circuit_key: Key | None, key: Key, name: str) -> Key:
+    return (*circuit_key, name) if circuit_key else (*key, {"full": "to", "rest": "from"}.get(name, name))
+
+
+def _own_current(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Remark, ...]:
     if not isinstance(circuit, Direct) or terminals.unit not in ("A", "V"):
         return ()
     coil = terminals.coil
@@ -201,7 +210,7 @@ def _own_current(circuit: Circuit, terminals: Terminals, circuit_key: Key) -> tu
         f"full deflection is at {full:.4g} {terminals.unit} but the movement's own is {own:.4g} "
         f"{terminals.unit}; give a circuit, or full"
     )
-    return (Remark(text, (*circuit_key, "full")),)
+    return (Remark(text, key),)
 
 
 def past_points(law: Law | Observed, scale: Scale, key: Key) -> tuple[Remark, ...]:

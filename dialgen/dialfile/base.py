@@ -8,7 +8,7 @@ sees everything at once, but never on a key that is wrong itself.
 from __future__ import annotations
 
 import difflib
-from collections.abc import Callable, Iterable, Iterator, Sequence
+from collections.abc import Callable, Collection, Iterable, Iterator, Sequence
 from functools import cache
 from pathlib import Path
 from typing import Annotated, Any, Self, TypeAlias, TypeVar
@@ -28,10 +28,9 @@ from dialgen.errors import InputError, Key
 _LONGEST_KEY = 40
 _TELLING = 3
 _OTHER_NAMES = {
-    "type": ("kind",), "model": ("kind",),
-    "center": ("centre",), "width": ("size",), "height": ("size",), "min": ("from",), "max": ("to",),
-    "start": ("from",), "end": ("to",), "step": ("every",), "text": ("say",), "label": ("say",),
-    "position": ("at",), "zero": ("rest",), "length": ("pointer",), "arc": ("radius",),
+    "type": "kind", "model": "kind", "center": "centre", "width": "size", "height": "size", "min": "from",
+    "max": "to", "start": "from", "end": "to", "step": "every", "text": "say", "label": "say",
+    "position": "at", "zero": "rest", "length": "pointer", "arc": "radius",
 }  # fmt: skip
 MOST_GUESSED = 200
 """Of how many unknown keys in one table it is guessed what they were meant to be."""
@@ -183,9 +182,10 @@ def nearest_key(key: str, known: Iterable[str]) -> str | None:
     return close[0] if close else None
 
 
-def same_key(key: str, known: Iterable[str]) -> str | None:
+def same_key(key: str, known: Collection[str]) -> str | None:
     """Return the known key that goes by the name ``key`` elsewhere, or None."""
-    return next((name for name in _OTHER_NAMES.get(key.lower(), ()) if name in known), None)
+    name = _OTHER_NAMES.get(key.lower())
+    return name if name in known else None
 
 
 def _begun(key: str, known: Iterable[str]) -> str | None:

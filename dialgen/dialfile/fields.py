@@ -33,8 +33,6 @@ _LONGEST_TEXT = 200
 _LARGEST_VALUE = 1e15
 _SMALLEST_VALUE = 1e-15
 _LEAST_LENGTH_MM = 0.01
-MOST = 1e6
-"""The largest pure number that a key may hold."""
 
 Value = Any
 """What a reader gives: of the type that its field says."""

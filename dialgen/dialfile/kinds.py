@@ -16,12 +16,13 @@ from dialgen.errors import InputError
 from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
 from dialgen.quantity import Measure, shown
 
+_MOST = 1e6
 _NOTES: dict[object, fields.Reader] = {
     FACE_VALUE: fields.face_value,
     RATED: read_rating,
     SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
     FACE_POINTS: fields.points(
-        fields.face_end, fields.number("a position", -fields.MOST, fields.MOST), "[[0, -44], [10, -20.5]]"
+        fields.face_end, fields.number("a position", -_MOST, _MOST), "[[0, -44], [10, -20.5]]"
     ),
 }
 """Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
@@ -99,7 +100,7 @@ def _reader(name: str, hint: object) -> fields.Reader:
     if hint is str:
         return fields.formula_text
     if hint is float:
-        return fields.number(name, -fields.MOST, fields.MOST)
+        return fields.number(name, -_MOST, _MOST)
     raise TypeError(f"no reader for the field {name} of type {hint}; annotate it with a note that has one")
 
 

@@ -12,7 +12,7 @@ import numpy as np
 
 from dialgen.dial import Dial, ScaleDial
 from dialgen.dialfile.models import Every, Scale
-from dialgen.errors import InputError, Key, Refused
+from dialgen.errors import InputError, Key
 from dialgen.face.checks import check_meets, check_on_plate, check_order
 from dialgen.face.divisions import MOST_MARKS, Rank, divide, stepped
 from dialgen.face.looks import Look, look_for
@@ -72,21 +72,21 @@ class RuledScale:
         return self.dial.spec
 
 
-def rule(dial: Dial, plate: Outliner, numeral_width: NumeralWidth) -> tuple[RuledScale, ...]:
-    """Return every scale of the dial, divided.
+def rule(
+    dial: Dial, plate: Outliner, numeral_width: NumeralWidth
+) -> tuple[tuple[RuledScale, ...], list[InputError]]:
+    """Return the scales of the dial that can be divided, and what is wrong with the others.
 
-    Raises:
-        Refused: values off the scale, pointers that miss the line, marks off the plate.
+    Wrong are values off the scale, pointers that miss the line, marks off the plate.
     """
-    ruled, errors = [], []
+    ruled: list[RuledScale] = []
+    errors: list[InputError] = []
     for scale in dial.scales:
         try:
             ruled.append(_rule_scale(scale, plate, numeral_width))
         except InputError as error:
             errors.append(error)
-    if errors:
-        raise Refused(errors)
-    return tuple(ruled)
+    return tuple(ruled), errors
 
 
 def scale_line(scale: Scale) -> ScaleLine:

@@ -48,7 +48,7 @@ def survey(
         # whichever comes first along the line.
         widths = np.array([numeral_width(plain_number(v), look.numeral_mm) for v in values.tolist()])
         across, upward = (np.abs(d) for d in line.directions(chain.angle(values)))
-        with np.errstate(divide="ignore"):
+        with np.errstate(divide="ignore", over="ignore"):
             beside = (widths + look.clear_mm) / upward
             above = (look.numeral_mm + look.stacked_mm) / across
         return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm

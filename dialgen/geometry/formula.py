@@ -52,7 +52,10 @@ class Formula:
     signal: str
 
     def __post_init__(self) -> None:
-        compile_formula(self.signal)
+        try:
+            compile_formula(self.signal)
+        except FormulaError as error:
+            raise error.under("signal") from None
 
     @property
     def takes_face_values(self) -> bool:
@@ -216,8 +219,17 @@ def compile_formula(text: str) -> Expression:
         return _build(tree.body, 0)
     except _Unread as error:
         # Syntax nodes count in bytes of the stripped text; people count characters of their own.
-        before = plain.strip().encode()[: error.node.col_offset].decode(errors="replace")
+        raw = plain.strip().encode()
+        before = raw[: _offset(error.node, raw)].decode(errors="replace")
         raise FormulaError(error.message, start + len(before) + 1) from None
+
+
+def _offset(node: ast.expr, raw: bytes) -> int:
+    """Return where a node that is not arithmetic begins; of two operands it is their operator."""
+    if not isinstance(node, ast.BinOp) or type(node.op) in _BINARY:
+        return node.col_offset
+    end = node.left.end_col_offset or 0
+    return end + len(raw[end:]) - len(raw[end:].lstrip(b" )"))
 
 
 class _Unread(Exception):

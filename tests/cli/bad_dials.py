@@ -193,6 +193,22 @@ SCHEMA = [
         "scale[1].numbered[2]",
         "50 is outside the scale",
     ),
+    Bad(
+        "rating a truth value",
+        'built = "1.885 mohm"',
+        "rated = true",
+        "31:1",
+        "circuit.rated",
+        "true is not a shunt's rating",
+    ),
+    Bad(
+        "rating very long",
+        'built = "1.885 mohm"',
+        f'rated = "{"x" * 300}"',
+        "31:1",
+        "circuit.rated",
+        f"\"{'x' * 36}... is not a shunt's rating",
+    ),
     Bad("circuit with no kind", 'kind = "shunt"\n', "", "28:2", "circuit.kind", "the circuit has no kind"),
     Bad(
         "single hole",

@@ -195,11 +195,11 @@ def test_readings_beyond_the_stops_still_count():
         (44.0, -44.0, 0, (-49.0, 49.0)),
         (0.0, 40.0, -100, (-45.0, 45.0)),
         (0.0, -40.0, -100, (-45.0, 45.0)),
-        (10.0, 50.0, -50, (-35.0, 55.0)),
+        (10.0, 50.0, -50, (-55.0, 55.0)),
     ],
 )
 def test_default_stops(rest, full, start, stops):
-    """Stops default to 5 degrees outside rest and full, and the mirrored full for negative drive."""
+    """Stops default to 5 degrees outside rest and full, and minus full for negative drive."""
     dial = made(f'unit = "%"\nfrom = {start}\nto = 100', f"rest = {rest}\nfull = {full}\n")
     assert dial.stops_deg == stops
 

@@ -125,6 +125,37 @@ _SEVERAL = [
             "scale[1].divisions[2].to: a piece up to 2",
         ],
     ),
+    (
+        _MOVEMENT
+        + _PLATE
+        + _SCALE
+        + 'numbered = ["a", { at = "b" }, "c", { at = 1, zz = 2 }]\n'
+        + 'divisions = [{ to = "d", every = 0 }, { to = 20, every = 1 }, { every = 1 }]\n',
+        [
+            "scale[1].numbered[1]: a value on the scale is a number",
+            "scale[1].numbered[2].at: a value on the scale is a number",
+            "scale[1].numbered[3]: a value on the scale is a number",
+            "scale[1].numbered[4].zz: not a key here",
+            "scale[1].divisions[1].to: a value on the scale is a number",
+            "scale[1].divisions[1].every: a step of 0",
+            "scale[1].divisions[3].to: missing",
+        ],
+    ),
+    (
+        _MOVEMENT
+        + 'response = { points = [[0, 0], ["a", 1], 3] }\nstops = ["a", "b"]\n'
+        + _PLATE
+        + _SCALE.replace("radius = 44", 'line = [["a", "b"], [1, "c"]]'),
+        [
+            "movement.response.points[2]: a drive is a number",
+            "movement.response.points[3]: this is a point",
+            "movement.stops[1]: an angle",
+            "movement.stops[2]: an angle",
+            'scale[1].line[1][1]: "a" is not a length',
+            'scale[1].line[1][2]: "b" is not a length',
+            'scale[1].line[2][2]: "c" is not a length',
+        ],
+    ),
 ]
 
 
@@ -164,6 +195,8 @@ def test_one_mistake_gives_one_line(text: str, expected: str) -> None:
 
 
 _TABLE_CSV = [
+    ("value,signal\n0,0\n1e20,5\n", "t.csv:3:1: value: ", "is beyond what a face can show"),
+    ("value,signal\n0,0\n1e999,5\n", "t.csv:3:1: value: ", "must be finite"),
     ("value,signal\n0,0\n5,x\n", "t.csv:3:3: signal: ", '"x" is not a signal'),
     ("value,signal\n0,0\n5,2\n3,4\n", "t.csv:4:1: value: ", "3 follows 5; put the rows in ascending order"),
     ("value,signal\n0,0\n", "t.csv:1:1: ", "give at least two"),
@@ -185,6 +218,15 @@ def test_a_law_in_a_csv_is_refused_in_the_csv(sheet: str, place: str, piece: str
     (fault,) = caught.value.faults
     assert str(fault).removeprefix(f"{tmp_path}/").startswith(place)
     assert piece in fault.message
+
+
+def test_every_wrong_row_of_a_law_in_a_csv_is_said(tmp_path: Path) -> None:
+    """Each row of a table law's file that cannot be read has its own line, beside the dial file's faults."""
+    (tmp_path / "t.csv").write_text("value,signal\n1e20,0\nx,1\n5,1 kg\n6,2\n", encoding="utf-8")
+    found = _faults(
+        _MOVEMENT + _PLATE + _SCALE + 'law = { kind = "table", file = "t.csv" }\ngap = "x"\n', tmp_path
+    )
+    assert [fault.partition(":")[0] for fault in found] == ["scale[1].gap", "value", "value", "signal"]
 
 
 @pytest.mark.parametrize(

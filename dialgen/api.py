@@ -43,6 +43,9 @@ class Face:
     dial: Dial
     scales: tuple[RuledScale, ...]
 
+    def __repr__(self) -> str:
+        return f"<dialgen face of {self.source.name}, {len(self.scales)} scales>"
+
     def chain(self, scale: int = 1) -> Chain:
         """Return the chain of a scale.
 

@@ -11,6 +11,7 @@ from dialgen.errors import InputError
 from dialgen.stage import Affine, Stage
 
 FACE_VALUE = "a bare value of the scale"
+FACE_END = "a bare value of the scale, or inf"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -19,7 +20,7 @@ class Direct:
 
     kind: ClassVar[str] = "direct"
     takes: ClassVar[str | None] = None
-    full: Annotated[float | None, FACE_VALUE] = None
+    full: Annotated[float | None, FACE_END] = None
     rest: Annotated[float | None, FACE_VALUE] = None
 
     def stage(self, terminals: Terminals) -> Stage:

@@ -40,9 +40,12 @@ def guarded(program: click.Command) -> int:
     written is told from any other error.  With DIALGEN_TRACEBACK set in the environment, a fault of
     the program itself is raised as it is.
     """
-    with contextlib.redirect_stdout(io.StringIO()) as answer:
+    # Text over bytes, as click writes completions for a shell as bytes.
+    paper = io.TextIOWrapper(io.BytesIO(), encoding="utf-8", errors="surrogatepass", newline="")
+    with contextlib.redirect_stdout(paper):
         status = _run(program)
-    return _write(answer.getvalue()) or status
+    paper.seek(0)
+    return _write(paper.read()) or status
 
 
 def _run(program: click.Command) -> int:

@@ -8,7 +8,7 @@ from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
 from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
-from dialgen.circuit.direct import FACE_VALUE
+from dialgen.circuit.direct import FACE_END, FACE_VALUE
 from dialgen.circuit.shunt import RATED, read_rating
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Flaws, nearest_key
@@ -19,6 +19,7 @@ from dialgen.quantity import Measure, shown
 _MOST = 1e6
 _NOTES: dict[object, fields.Reader] = {
     FACE_VALUE: fields.face_value,
+    FACE_END: fields.face_end,
     RATED: read_rating,
     SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
     FACE_POINTS: fields.points(

@@ -23,12 +23,14 @@ __all__ = [
 ]  # fmt: skip
 
 
-_MOST_SCALES = 20
+_MOST_SCALES = 100
 _MOST_TEXTS = 200
 
 
 def _version(given: object) -> int:
-    if isinstance(given, bool) or not isinstance(given, int) or given != 1:
+    if isinstance(given, bool) or not isinstance(given, int):
+        raise ValueError(f"the version is a whole number, not {shown(given)}; write dialgen = 1")
+    if given != 1:
         raise ValueError(f"version {shown(given)} of the dial file is not known; write dialgen = 1")
     return 1
 

@@ -16,6 +16,7 @@ from dialgen.face.ruling import RuledScale
 Box = tuple[float, float, float, float]
 
 _ARC_STEP_DEG = 1.0
+_PAST_MM = 0.1
 
 
 def review(drawing: Drawing, scales: Sequence[RuledScale], plate: Outliner) -> tuple[Remark, ...]:
@@ -23,13 +24,26 @@ def review(drawing: Drawing, scales: Sequence[RuledScale], plate: Outliner) -> t
     keys: dict[str, Key] = {}
     for number, scale in enumerate(scales, 1):
         keys |= {scale_layer(number, part): scale.dial.key for part in ScalePart}
-    found: list[Remark] = []
+    found: list[Remark] = [remark for scale in scales for remark in _past_line(scale)]
     for layer in drawing.layers:
         if layer.purpose is Purpose.PRINT:
             found += _over_edge(layer, plate, keys.get(layer.name))
         if layer.name in keys and layer.name.endswith(ScalePart.NUMERALS):
             found += _overlaps(layer, (*keys[layer.name], "numbered"))
     return tuple(found)
+
+
+def _past_line(scale: RuledScale) -> Iterator[Remark]:
+    """Yield a remark where marks stand beyond the ends that a straight scale line was given."""
+    if scale.spec.line is None or not scale.marks:
+        return
+    start, end = np.array(scale.spec.line)
+    along = (end - start) / math.dist(start, end)
+    places = (np.array([(mark.x, mark.y) for mark in scale.marks]) - start) @ along
+    past_mm = max(-float(places.min()), float(places.max()) - math.dist(start, end))
+    if past_mm > _PAST_MM:
+        message = f"marks stand up to {past_mm:.2g} mm past the ends given to the line; move the ends"
+        yield Remark(message, (*scale.dial.key, "line"))
 
 
 def ink_box(letters: Letters) -> Box:

@@ -189,4 +189,4 @@ def _placed(
     check_order(values, angles, scale.key)
     check_on_plate(plate, values, (xs, ys), scale.spec, scale.key)
     rows = zip(_rows(values, *columns), marks, strict=True)
-    return tuple(Mark(*row, rank, labels.get(value)) for row, (value, rank) in rows)
+    return tuple(Mark(*row, rank, labels.get(value) or None) for row, (value, rank) in rows)

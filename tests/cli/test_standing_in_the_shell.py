@@ -54,6 +54,20 @@ def test_alone_it_prints_its_help() -> None:
     assert done.stdout == _run(_MODULE, "--help").stdout
 
 
+def test_the_shell_is_given_completions() -> None:
+    """Asked the way a shell asks, the program completes the name of a command."""
+    done = _run(
+        [sys.executable, "-c", "from dialgen.cli import main; main()"],
+        env={
+            **os.environ,
+            "_DIALGEN_COMPLETE": "bash_complete",
+            "COMP_WORDS": "dialgen ta",
+            "COMP_CWORD": "1",
+        },
+    )
+    assert (done.returncode, done.stdout, done.stderr) == (0, "plain,table\n", "")
+
+
 @pytest.mark.parametrize("redirect", ["| true", "| head -n 1", ">&-", "2>&1 | true"])
 def test_a_reader_that_leaves_early_is_no_error(dial: Path, redirect: str) -> None:
     """A closed pipe or closed output ends quietly: no traceback, no complaint of Python's own."""

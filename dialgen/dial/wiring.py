@@ -23,6 +23,11 @@ from dialgen.stage import Affine, Array, Span, Stage
 _SAMPLES = 129
 _FORMULA_SAMPLES = 4097
 _NEAR_OWN = 0.01
+_UNIT_WORDS = {
+    "amp": "A", "amps": "A", "ampere": "A", "amperes": "A", "a": "A", "milliamps": "mA", "ma": "mA",
+    "volt": "V", "volts": "V", "v": "V", "mv": "mV", "ohms": "ohm", "kohms": "kohm", "r": "ohm",
+}  # fmt: skip
+"""What people write for a unit whose letter alone is read."""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -173,10 +178,11 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key) -> None
     plain = isinstance(law, Linear) and law.per is None
     names: dict[str, str] = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
     what = names.get(unit, f"in {unit}") if unit else "a pure number"
+    letter = _UNIT_WORDS.get(unit.lower())
     raise InputError(
         f"the {circuit.kind} takes {names.get(circuit.takes, circuit.takes)}, "
         f"but the scale's signal is {what}; "
-        "change the unit, the law or the circuit",
+        + (f'write unit = "{letter}"' if letter else "change the unit, the law or the circuit"),
         (*key, "unit" if plain else "law"),
     )
 

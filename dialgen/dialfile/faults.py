@@ -13,6 +13,7 @@ from pydantic_core import ErrorDetails
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.dialfile.base import MOST_GUESSED, Flaws, Several, keys_of, nearest_key, same_key
 from dialgen.errors import DialFileError, Fault, InputError, Key
+from dialgen.geometry.kinds import LAWS
 from dialgen.quantity import shown
 
 Complaint = tuple[Key, str]
@@ -116,9 +117,24 @@ def _message(kind: str, key: Key, given: object, context: dict[str, Any], model:
 def _suggestion(key: Key, meant: Key | None, model: type[BaseModel], root: type[BaseModel]) -> str:
     if meant is not None:
         return f"did you mean {meant[-1]}?"
+    if kinds := _kinds_with(key[-1], model):
+        return f"it goes with kind = {' or '.join(kinds)}"
     if homes := _homes(root).get(str(key[-1])):
         return f"it belongs in {' or '.join(homes)}"
     return f"the keys are {', '.join(_known(model, key[:-1]))}"
+
+
+def _kinds_with(name: object, model: type[BaseModel]) -> list[str]:
+    """Return the kinds of circuit or law that have a key, where another kind of the same was given it."""
+    for table in (CIRCUITS, LAWS):
+        # The model of a kind bears the name of its class, see `dialgen.dialfile.kinds`.
+        if model.__name__ in {kind.__name__ for kind in table.values()}:
+            return [f'"{word}"' for word, kind in table.items() if name in _field_names(kind)]
+    return []
+
+
+def _field_names(kind: type) -> set[str]:
+    return {field.name for field in dataclasses.fields(kind)}
 
 
 @cache

@@ -83,8 +83,12 @@ def _no_such_kind(kind: object, table: dict[str, type], noun: str) -> str:
     known = ", ".join(f'"{k}"' for k in table)
     if kind is None:
         return f"the {noun} has no kind; add kind = with one of {known}"
-    near = nearest_key(kind, table) if isinstance(kind, str) else None
-    mend = f'did you mean "{near}"?' if near else f"write one of {known}"
+    near: list[str] = []
+    if isinstance(kind, str):
+        closest = nearest_key(kind, table)
+        near = [name for name in table if kind.lower() in name.split()] or ([closest] if closest else [])
+    names = " or ".join(f'"{name}"' for name in near)
+    mend = f"did you mean {names}?" if near else f"write one of {known}"
     return f"{shown(kind)} is not a kind of {noun}; {mend}"
 
 

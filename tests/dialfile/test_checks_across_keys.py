@@ -182,7 +182,7 @@ _ONE = [
         "scale[1].max: not a key here; did you mean to?",
     ),
     (_MOVEMENT + _PLATE, "scale: missing; add a table [[scale]]"),
-    (_MOVEMENT + _PLATE + "[[scale]]\n" * 21, "scale: 21 of them; give at most 20"),
+    (_MOVEMENT + _PLATE + "[[scale]]\n" * 101, "scale: 101 of them; give at most 100"),
     (_MOVEMENT + _PLATE + _SCALE + "hight = 3\n", "scale[1].hight: not a key here; the keys are unit, from"),
 ]
 

@@ -25,7 +25,7 @@ Indices = NDArray[np.intp]
 # What a path pays, in units of about one badly placed numeral.  Tuned by eye over ohms, decibel,
 # square-law, logarithmic and standing-wave scales of 30 to 200 mm.
 _GAP_COST = {1: 0.0, 2: 0.0, 3: 0.05, 4: 0.5, 5: 0.0}
-_DIGIT_COST = (0.0, 0.0, 0.1, 0.35, 0.35, 0.1, 0.5, 0.8, 0.5, 0.9)
+_DIGIT_COST = (0.0, 0.0, 0.1, 0.35, 0.35, 0.1, 0.5, 1.1, 0.5, 1.1)
 _HALF_DIGIT = 1.5
 _MORE_DIGITS = 2.2
 _LONG = 0.8

@@ -38,11 +38,11 @@ def numerals(scale: RuledScale) -> Iterator[Letters]:
     spec, look = scale.spec, scale.look
     style = Style(fill=look.ink)
     sign = 1.0 if spec.numerals == "outside" else -1.0
-    for mark, inner, outer in mark_lines(scale):
+    xs, ys = scale.line.away(np.array([mark.angle_deg for mark in scale.marks]))
+    aways = zip((sign * xs).tolist(), (sign * ys).tolist(), strict=True)
+    for (mark, inner, outer), away in zip(mark_lines(scale), aways, strict=True):
         if mark.label:
             start = outer if spec.numerals == "outside" else inner
-            x, y = scale.line.away(np.array(mark.angle_deg))
-            away = (sign * float(x), sign * float(y))
             height_mm = look.numeral_mm * (_INFINITY if mark.label == "∞" else 1.0)
             box = measure(mark.label, height_mm)
             half = ((box.right - box.left) / 2, (box.top - box.bottom) / 2)

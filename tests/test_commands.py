@@ -114,6 +114,21 @@ def test_table_at_answers_for_any_value(dial_file: Path) -> None:
     assert scale["marks"][0]["angle"] == pytest.approx(-44 + 88 * 12.5 / 40, abs=1e-9)
 
 
+def test_table_at_answers_for_the_scales_that_can(tmp_path: Path) -> None:
+    """A value beyond one scale's stops is told there and answered on the other; a comma is hinted at."""
+    path = tmp_path / "two.toml"
+    circuit = 'circuit = { kind = "shunt", range = "400 A" }'
+    second = f'[[scale]]\nunit = "A"\nfrom = 0\nto = 400\nradius = 36\n{circuit}\n'
+    path.write_text(SAMPLE.replace("[plate]", second + "[plate]"), encoding="utf-8")
+    done = run("table", path, "--json", "--at", "300")
+    (scale,) = json.loads(done.stdout)["scales"]
+    assert (scale["to"], scale["marks"][0]["drive"]) == (400.0, pytest.approx(0.75))
+    assert "scale 1: 300 A would stand at" in done.stderr
+    assert "beyond the stops" in run("table", path, "--at", "3000", status=2).stderr
+    assert "the decimal sign is a point: 1.5" in run("table", path, "--at", "1,5", status=2).stderr
+    assert run("table", path, "--at", "\u22121").stdout
+
+
 def test_readable_table_shows_values_and_labels(dial_file: Path) -> None:
     """The first column is the value, −4 to 20; labels have a column of their own where they differ."""
     labels = '[{ at = -4, label = "0" }, { at = 8, label = "half way" }, 20]'

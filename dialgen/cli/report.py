@@ -126,10 +126,11 @@ def say_error(error: DialgenError) -> None:
 
 
 def say_warnings(faults: Sequence[Fault]) -> None:
-    """Write warnings, marked as such behind their place."""
-    for fault in faults:
-        key = f"{fault.key}: " if fault.key else ""
-        say(f"{fault.file}:{fault.line}:{fault.column}: warning: {key}{fault.message}")
+    """Write warnings, marked as such behind their place: at most six, then how many more."""
+    say_lines(
+        f"{fault.file}:{fault.line}:{fault.column}: warning: {fault.key and fault.key + ': '}{fault.message}"
+        for fault in faults
+    )
 
 
 def say_lines(lines: Iterable[str]) -> None:

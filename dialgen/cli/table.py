@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING
 
 import click
 
-from dialgen.cli.report import say_warnings
+from dialgen.cli.report import say_lines, say_warnings
 
 if TYPE_CHECKING:
     from dialgen.face.ruling import Mark, RuledScale, Spot
@@ -40,7 +40,7 @@ _HEADS = {
     "--at",
     "values",
     multiple=True,
-    type=float,
+    callback=lambda ctx, param, texts: tuple(_value(text) for text in texts),
     help="Answer for this value instead; may be given several times.",
 )
 @click.option("--scale", "only", type=click.IntRange(1), help="Of this scale alone, counted from 1.")
@@ -52,14 +52,13 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
     the correction.  Labels are shown where one is not the plain number.
     """
     from dialgen import api
-    from dialgen.face.ruling import spots
 
     face = api.load(file)
     say_warnings(face.warnings())
     if only is not None:
         face.chain(only)  # refuses a scale that is not there
     chosen = {i: s for i, s in enumerate(face.scales, 1) if only in (None, i)}
-    shown = [(s, spots(s.dial, s.line, values) if values else s.marks) for s in chosen.values()]
+    shown = _at(chosen, values, file) if values else [(s, s.marks) for s in chosen.values()]
     if as_json:
         # Plain ASCII, so that it is the same whatever the encoding of standard output.
         click.echo(json.dumps({"scales": [_scale_json(s, marks) for s, marks in shown]}))
@@ -67,6 +66,40 @@ def command(file: str, as_json: bool, values: tuple[float, ...], only: int | Non
     click.echo("\n\n".join(_scale_text(s, marks) for s, marks in shown))
     for line in _spreads(chosen):
         click.echo(line)
+
+
+def _value(text: str) -> float:
+    from dialgen.quantity import bare_number
+
+    value = math.inf if text == "inf" else bare_number(text)
+    if value is None:
+        point = f"; the decimal sign is a point: {text.replace(',', '.')}" if "," in text else ""
+        raise click.BadParameter(f"{text!r} is not a number{point}", param_hint="'--at'")
+    return value
+
+
+def _at(
+    scales: dict[int, RuledScale], values: tuple[float, ...], file: str
+) -> list[tuple[RuledScale, Sequence[Spot | Mark]]]:
+    """Return where the values fall on each scale that can show them, and say which cannot.
+
+    Raises:
+        Refused: none can.
+    """
+    from dialgen.errors import NoSuchValue, Refused
+    from dialgen.face.ruling import spots
+
+    found: list[tuple[RuledScale, Sequence[Spot | Mark]]] = []
+    refusals = []
+    for number, scale in scales.items():
+        try:
+            found.append((scale, spots(scale.dial, scale.line, values)))
+        except NoSuchValue as error:
+            refusals.append(NoSuchValue(f"{file}: scale {number}: {error}"))
+    if not found:
+        raise Refused(refusals)
+    say_lines(str(refusal) for refusal in refusals)
+    return found
 
 
 def _scale_json(scale: RuledScale, marks: Sequence[Spot | Mark]) -> dict[str, object]:

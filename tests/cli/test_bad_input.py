@@ -93,7 +93,7 @@ def test_a_wrong_csv_is_refused_at_its_place(
             ["table", "good.toml", "--at", "notanumber"],
             "'notanumber' is not a number; see dialgen table --help",
         ),
-        (["table", "good.toml", "--at", "nan"], "a value that is not a number has no angle"),
+        (["table", "good.toml", "--at", "nan"], "'nan' is not a number"),
         (["table", "good.toml", "--at", "99"], "99 A would stand at 175 degrees, beyond the stops"),
         (["table", "good.toml", "--at", "inf"], "is outside what the law"),
         (["table", "good.toml", "--scale", "9"], "there is no scale 9; the dial has 1"),

@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import errno
 import os
-import secrets
 import shutil
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
@@ -186,7 +185,7 @@ def _written_beside(path: Path, data: bytes) -> Path:
     """Write a new file next to ``path`` and return it."""
     if path.is_dir():
         raise IsADirectoryError(errno.EISDIR, "it is a folder", str(path))
-    neighbour = path.with_name(f".{path.name[:40]}.{os.getpid()}.{secrets.token_hex(4)}.tmp")
+    neighbour = path.with_name(f".{path.name[:40]}.{os.getpid()}.{os.urandom(4).hex()}.tmp")
     try:
         neighbour.write_bytes(data)
         if path.exists():

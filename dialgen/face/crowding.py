@@ -24,21 +24,21 @@ Indices = NDArray[np.intp]
 
 # What a path pays, in units of about one badly placed numeral.  Tuned by eye over ohms, decibel,
 # square-law, logarithmic and standing-wave scales of 30 to 200 mm.
-_GAP_COST = {1: 0.0, 2: 0.0, 3: 0.05, 4: 0.5, 5: 0.0}
-_DIGIT_COST = (0.0, 0.0, 0.1, 0.35, 0.35, 0.1, 0.5, 1.1, 0.5, 1.1)
-_HALF_DIGIT = 1.5
-_MORE_DIGITS = 2.2
-_LONG = 0.8
-_SHORT = 0.7
-_UNLIKE = 0.5
-_BARE = 1.0
-_TOO_LONG = 3.0
-_UNDIVIDED = 1.5
-_ODD_END = 2.5
-_NOT_LEGAL = 8.0
+_GAP_COST = {1: 0.0, 2: 0.0, 3: 0.05, 4: 0.5, 5: 0.0}  # by the units of a gap
+_DIGIT_COST = (0.0, 0.0, 0.1, 0.35, 0.35, 0.1, 0.5, 1.1, 0.5, 1.1)  # of a numeral of one digit, by it
+_HALF_DIGIT = 1.5  # of a second digit that is 5, as 1.5 or 25
+_MORE_DIGITS = 2.2  # of any other further digit
+_LONG = 0.8  # of a doubling of the wanted gap, squared
+_SHORT = 0.7  # of a halving of it, squared
+_TOO_LONG = 3.0  # times the wanted gap: from here on a long gap costs steeply more
+_UNLIKE = 0.5  # of a doubling or halving from one gap to the next
+_UNDIVIDED = 1.5  # of a gap that even its coarsest division would crowd
+_BARE = 1.0  # of a wanted gap's length before infinity, where no marks can stand
+_ODD_END = 2.5  # of any gap to an end that is not round, or is infinite
+_NOT_LEGAL = 8.0  # of any gap to a round end, or where nothing legal has room
+_WIDE = 3.0  # of 6 to 9 units there
+_DECADE = 2.0  # of a whole decade there
 _HAIR_MM = 1e-9
-_WIDE = 3.0
-_DECADE = 2.0
 
 
 def cheapest_numerals(ruler: Ruler, forced: tuple[float, ...], wanted_mm: float) -> tuple[float, ...]:

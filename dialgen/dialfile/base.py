@@ -11,6 +11,7 @@ import difflib
 from collections.abc import Callable, Collection, Iterable, Iterator, Sequence
 from functools import cache
 from pathlib import Path
+from types import FunctionType
 from typing import Annotated, Any, Self, TypeAlias, TypeVar
 
 from pydantic import (
@@ -200,7 +201,8 @@ def keys_of(model: type[BaseModel]) -> dict[str, str]:
 @cache
 def _checks(table: type[Table]) -> tuple[Any, ...]:
     named = {name: value for part in reversed(table.__mro__) for name, value in vars(part).items()}
-    return tuple(value for value in named.values() if hasattr(value, "needs"))
+    # Plain functions alone: asking pydantic's own attributes would build a validator for every table.
+    return tuple(v for v in named.values() if isinstance(v, FunctionType) and hasattr(v, "needs"))
 
 
 def _unsound(table: type[Table], error: ValidationError) -> Iterator[str]:

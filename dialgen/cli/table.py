@@ -128,13 +128,12 @@ def _number(value: float) -> float | str:
 
 
 def _scale_text(scale: RuledScale, marks: Sequence[Spot | Mark]) -> str:
-    from dialgen.face.worth import linear_error
+    from dialgen.face.worth import linear_errors
     from dialgen.quantity import plain_number, shown_unit
 
     unit = shown_unit(scale.spec.unit)
     rows: list[tuple[str, ...]] = []
-    for m in marks:
-        off = linear_error(scale, m)
+    for m, off in zip(marks, linear_errors(scale, marks), strict=True):
         rows.append(
             (
                 plain_number(m.value),

@@ -56,13 +56,13 @@ def correction(
     try:
         made = from_readings(pairs, movement.rest, movement.full)
     except InputError as error:
-        raise InputError(error.message, _item(key, int(error.keys[0][0]))) from None
+        raise InputError(error.message, (*key, int(error.keys[0][0]))) from None
     low, high = stops_deg
     far_deg = _FAR * abs(movement.full - movement.rest)
     pinned = [i for i, at in enumerate(nominal.tolist()) if not low - far_deg <= at <= high + far_deg]
     return made, (
         *(Remark(text, key) for text in made.remarks),
-        *(Remark(_pinned(float(nominal[i])), _item(key, i)) for i in pinned),
+        *(Remark(_pinned(float(nominal[i])), (*key, i)) for i in pinned),
     )
 
 
@@ -78,10 +78,6 @@ def readings_key(owner: Key, table: object) -> Key:
     return (*owner, "reading") if getattr(table, "reading", ()) else (*owner, "readings")
 
 
-def _item(key: Key, index: int) -> Key:
-    return (*key, index)
-
-
 def _each(key: Key, readings: Sequence[Reading], read: Callable[[Reading], Read]) -> list[Read]:
     """Return what ``read`` makes of each reading; an error is placed at the reading it is about."""
     found = []
@@ -89,7 +85,7 @@ def _each(key: Key, readings: Sequence[Reading], read: Callable[[Reading], Read]
         try:
             found.append(read(reading))
         except InputError as error:
-            raise _placed(error, _item(key, i)) from None
+            raise _placed(error, (*key, i)) from None
     return found
 
 
@@ -103,7 +99,7 @@ def _together(key: Key, indices: Sequence[int], amounts: Array, angles: NominalA
             try:
                 angles(np.array([amount]))
             except InputError as error:
-                raise _placed(error, _item(key, i)) from None
+                raise _placed(error, (*key, i)) from None
         raise
 
 

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Mapping
 from dataclasses import dataclass, replace
 
 import numpy as np
@@ -16,7 +17,7 @@ from dialgen.errors import InputError, Key, NoSuchValue, Refused, Remark
 from dialgen.geometry.correction import NO_DEPARTURE, Correction
 from dialgen.geometry.points import Observed
 from dialgen.geometry.response import EVEN
-from dialgen.geometry.sampling import check_one_way, sample_places
+from dialgen.geometry.sampling import SAMPLES, check_one_way, sample_places
 from dialgen.stage import Affine, Array, Span, Stage
 
 _STOP_ROOM_DEG = 5.0
@@ -67,12 +68,7 @@ def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
             wirings[i] = _wiring(scale, i, file.circuit, coil)
         except InputError as error:
             errors.append(error)
-    lowest = [
-        _lowest_drive(wiring) if wiring else _lowest_deflection(file.movement, file.scale[i], file.circuit)
-        for i, wiring in wirings.items()
-    ]
-    negative = min(lowest, default=0.0) < -_NO_DRIVE
-    stops = file.movement.stops or _default_stops(file.movement, negative=negative)
+    stops = file.movement.stops or _default_stops(file, wirings)
     maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings.get(0))
     if 0 not in wirings and any(r.value is not None for r in file.movement.all_readings()):
         # Readings by value go through the first scale; without it the others are not made either.
@@ -87,7 +83,7 @@ def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
         else:
             scales.append(made)
             remarks += more
-    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks))), list(dict.fromkeys(errors))
+    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks))), errors
 
 
 def _wiring(scale: Scale, index: int, shared: Circuit | None, coil: Coil) -> Wiring | None:
@@ -110,7 +106,7 @@ def _observed_curve(movement: Movement, scale: Scale, shared: Circuit | None, ke
                 "the pointer is seen at inf only beside an ohms circuit with half; add one, or end the scale"
             )
         curve = law.curve(tuple(positions), half)
-        check_one_way(curve, (scale.start, scale.end), 129)
+        check_one_way(curve, (scale.start, scale.end), SAMPLES)
     except InputError as error:
         raise error.under(*key, "law") from None
     return curve
@@ -130,9 +126,15 @@ def _lowest_drive(wiring: Wiring) -> float:
     return float(finite.min()) if finite.size else 0.0
 
 
-def _default_stops(movement: Movement, *, negative: bool) -> Span:
+def _default_stops(file: DialFile, wirings: Mapping[int, Wiring | None]) -> Span:
+    """Return stops a little outside rest and full, and outside minus full where a drive is negative."""
+    movement = file.movement
+    lowest = [
+        _lowest_drive(wiring) if wiring else _lowest_deflection(movement, file.scale[i], file.circuit)
+        for i, wiring in wirings.items()
+    ]
     ends = [movement.rest, movement.full]
-    if negative:
+    if min(lowest, default=0.0) < -_NO_DRIVE:
         ends.append(-movement.full)
     return min(ends) - _STOP_ROOM_DEG, max(ends) + _STOP_ROOM_DEG
 
@@ -199,7 +201,7 @@ class _Maker:
                 readings_key(key, scale),
             )
         stage = _observed_curve(self.movement, scale, self.circuit, key)
-        made, _ = link(stage, sample_places((scale.start, scale.end), 33))
+        made, _ = link(stage, sample_places((scale.start, scale.end), SAMPLES))
         movement = self.movement
         chain = Chain((made,), None, movement.rest, movement.full, self.stops_deg, scale.unit)
         return ScaleDial(scale, key, chain, Correction(stage=NO_DEPARTURE), None)

@@ -16,11 +16,10 @@ from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.formula import Formula
 from dialgen.geometry.laws import Law, Linear
 from dialgen.geometry.points import Observed, Table
-from dialgen.geometry.sampling import check_moves, sample_places
+from dialgen.geometry.sampling import SAMPLES, check_moves, sample_places
 from dialgen.quantity import split_unit
 from dialgen.stage import Affine, Array, Span, Stage
 
-_SAMPLES = 129
 _FORMULA_SAMPLES = 4097
 _NEAR_OWN = 0.01
 _UNIT_WORDS = {
@@ -86,7 +85,7 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     stage = law.stage(span)
     circuit = scale.circuit or shared or Direct()
     values = sample_places(
-        (scale.start, scale.end), _FORMULA_SAMPLES if isinstance(law, Formula) else _SAMPLES
+        (scale.start, scale.end), _FORMULA_SAMPLES if isinstance(law, Formula) else SAMPLES
     )
     law_link, signals = link(stage, values * factor)
     _check_law(law, stage, scale, key, span=span, takes=circuit.takes, values=values, signals=signals)

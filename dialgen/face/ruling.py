@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import itertools
 import math
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
@@ -37,10 +36,6 @@ class Spot(NamedTuple):
     x: float
     y: float
     direction: tuple[float, float]
-
-
-_Row = tuple[float, float, float, float, float, tuple[float, float]]
-"""The fields of a spot."""
 
 
 class Mark(NamedTuple):
@@ -160,7 +155,7 @@ def spots(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tuple[S
     Raises:
         NoSuchValue: a value that the scale cannot show, or where the pointer misses the line.
     """
-    return tuple(itertools.starmap(Spot, _rows(values, *_located(scale, line, values))))
+    return tuple(_spots(values, *_located(scale, line, values)))
 
 
 def _located(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tuple[Array, ...]:
@@ -171,9 +166,9 @@ def _located(scale: ScaleDial, line: ScaleLine, values: Sequence[float]) -> tupl
     return drives, angles, *line.points(angles), *line.directions(angles)
 
 
-def _rows(values: Sequence[float], *columns: Array) -> Iterator[_Row]:
+def _spots(values: Sequence[float], *columns: Array) -> Iterator[Spot]:
     for value, drive, angle, x, y, ux, uy in zip(values, *(c.tolist() for c in columns), strict=True):
-        yield value, drive, angle, x, y, (ux, uy)
+        yield Spot(value, drive, angle, x, y, (ux, uy))
 
 
 def _placed(
@@ -188,5 +183,5 @@ def _placed(
     _, angles, xs, ys, *_ = columns
     check_order(values, angles, scale.key)
     check_on_plate(plate, values, (xs, ys), scale.spec, scale.key)
-    rows = zip(_rows(values, *columns), marks, strict=True)
-    return tuple(Mark(*row, rank, labels.get(value) or None) for row, (value, rank) in rows)
+    ranked = zip(_spots(values, *columns), marks, strict=True)
+    return tuple(Mark(*spot, rank, labels.get(value) or None) for spot, (value, rank) in ranked)

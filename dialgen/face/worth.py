@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Sequence
 
 import numpy as np
 
@@ -11,18 +12,22 @@ from dialgen.errors import InputError
 from dialgen.face.ruling import Mark, RuledScale, Spot
 
 
-def linear_error(ruled: RuledScale, spot: Spot | Mark) -> float | None:
-    """Return the error that a linear face would have had at a value, in face units.
+def linear_errors(ruled: RuledScale, spots: Sequence[Spot | Mark]) -> list[float | None]:
+    """Return the errors that a linear face would have had at some values, in face units.
 
     The linear face is divided evenly between the nominal angles of the scale's ends, for the
-    circuit as designed; None where the scale has no finite end.
+    circuit as designed; None where the scale has no finite end, or for infinity itself.
     """
     spec = ruled.spec
     nominal = nominal_ends(ruled.dial)
-    if nominal is None or math.isinf(spot.value) or math.isinf(spec.end):
-        return None
+    if nominal is None or math.isinf(spec.end):
+        return [None] * len(spots)
     first, last = nominal
-    return spec.start + (spot.angle_deg - first) / (last - first) * (spec.end - spec.start) - spot.value
+    per_degree = (spec.end - spec.start) / (last - first)
+    return [
+        None if math.isinf(spot.value) else spec.start + (spot.angle_deg - first) * per_degree - spot.value
+        for spot in spots
+    ]
 
 
 def nominal_ends(scale: ScaleDial) -> tuple[float, float] | None:

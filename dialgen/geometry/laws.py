@@ -20,9 +20,6 @@ from dialgen.errors import InputError
 from dialgen.quantity import OHM_ABOVE, SIGNAL, SIGNAL_ABOVE, Amount
 from dialgen.stage import EVERYWHERE, POSITIVE, Affine, Array, Span, Stage
 
-ANY_UNIT = None
-"""The unit of a signal that is a bare number in whatever SI unit the circuit takes."""
-
 
 class Law(Protocol):
     """A law as the dial file states it."""

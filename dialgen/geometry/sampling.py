@@ -9,6 +9,9 @@ import numpy as np
 from dialgen.errors import InputError
 from dialgen.stage import Array, Span, Stage
 
+SAMPLES = 129
+"""How many places are enough for a law that is smooth by nature."""
+
 
 def sample_places(span: Span, count: int) -> Array:
     """Return ``count`` ascending places over a span; to infinity in equal steps of x/(x + width)."""

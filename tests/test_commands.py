@@ -210,6 +210,14 @@ def test_warnings_go_to_standard_error_with_status_0(tmp_path: Path) -> None:
     assert not done.stdout
 
 
+def test_each_text_over_the_edge_is_warned_of_at_its_own_place(dial_file: Path) -> None:
+    """Two texts of the same words, both off the plate, are two warnings; one on it is none."""
+    text = '[[text]]\nsay = "SAME"\nat = [{x}, 5]\n'
+    dial_file.write_text(SAMPLE + "".join(text.format(x=x) for x in (0, 42, -42)), encoding="utf-8")
+    keys = [fault.key for fault in dialgen.load(dial_file).warnings()]
+    assert keys == ["text[2]", "text[3]"]
+
+
 def test_a_failed_draw_leaves_the_old_file(dial_file: Path) -> None:
     """Where the dial file is wrong, an output already there is left as it was, and nothing beside it."""
     output = dial_file.with_suffix(".svg")

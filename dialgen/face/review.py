@@ -76,8 +76,8 @@ def _overlaps(layer: Layer, key: tuple[str | int, ...]) -> Iterator[Remark]:
 
 
 def _over_edge(layer: Layer, plate: Outliner, key: Key | None) -> Iterator[Remark]:
-    """Yield a remark for each item over the edge: at its scale, or at its own place in the texts."""
-    seen: set[str] = set()
+    """Yield a remark for what is over the edge: once for each thing of a scale, or at each text's place."""
+    seen: set[Remark] = set()
     for i, item in enumerate(layer.items):
         match item:
             case Letters() if item.glyphs:
@@ -90,10 +90,11 @@ def _over_edge(layer: Layer, plate: Outliner, key: Key | None) -> Iterator[Remar
                 points, what = _along(item), "the scale line"
             case _:
                 continue
-        if what not in seen and not plate.holds(*zip(*points, strict=True)).all():
-            seen.add(what)
-            message = f"{what} runs over the plate's edge; move it or enlarge the plate"
-            yield Remark(message, ("text", i) if key is None else key)
+        message = f"{what} runs over the plate's edge; move it or enlarge the plate"
+        remark = Remark(message, ("text", i) if key is None else key)
+        if remark not in seen and not plate.holds(*zip(*points, strict=True)).all():
+            seen.add(remark)
+            yield remark
 
 
 def _along(arc: Arc) -> list[Point]:

@@ -19,12 +19,16 @@ from dialgen import dialfile
 from dialgen.dial import Chain, Dial, attempt
 from dialgen.dialfile import Source
 from dialgen.drawing import Drawing, Purpose
-from dialgen.errors import DialFileError, Fault, InputError, OutputError
+from dialgen.errors import DialFileError, Fault, Finding, InputError, OutputError, Remark
 from dialgen.face.compose import compose
-from dialgen.face.plate import check_holes, outliner
-from dialgen.face.review import review
+from dialgen.face.laid import check_laid
+from dialgen.face.openings import check_openings
+from dialgen.face.plate import outliner
+from dialgen.face.review import Finished, review
 from dialgen.face.ruling import RuledScale, rule
-from dialgen.lettering import numeral_width
+from dialgen.face.signs import check_signs
+from dialgen.lettering import Hand, hand
+from dialgen.looks import Lettering, Look
 from dialgen.renderers import Options, render
 from dialgen.stage import Array
 
@@ -84,10 +88,27 @@ class Face:
         """The face as a display list, on a page that is exactly the plate."""
         return compose(self.dial, self.scales)
 
+    @cached_property
+    def _findings(self) -> tuple[Finding, ...]:
+        found: dict[Fault, Finding] = {}
+        finished = Finished(self.dial.file, self.scales, outliner(self.dial.file.plate), self.drawing)
+        for remark in review(finished):
+            fault = self.source.fault(remark.key, remark.message)
+            found.setdefault(fault, _finding(fault, remark))
+        return tuple(found.values())
+
+    def review(self) -> tuple[Finding, ...]:
+        """Return what would be hard to read on the face, and where: nothing of a good one."""
+        return self._findings
+
     def warnings(self) -> tuple[Fault, ...]:
-        """Return what should be known of the dial and its face, each at its place in the file."""
-        remarks = (*self.dial.remarks, *review(self.drawing, self.scales, outliner(self.dial.file.plate)))
-        return tuple(dict.fromkeys(self.source.fault(r.key, r.message) for r in remarks))
+        """Return what should be known of the dial, and what the review of its face finds."""
+        return (*self.dial_warnings(), *self.review())
+
+    def dial_warnings(self) -> tuple[Fault, ...]:
+        """Return what should be known of the dial whatever its face looks like, such as an assumed diode."""
+        remarks = self.dial.remarks
+        return tuple(dict.fromkeys(self.source.fault(remark.key, remark.message) for remark in remarks))
 
     def render(
         self,
@@ -141,11 +162,19 @@ def load(path: str | PathLike[str]) -> Face:
     shape = outliner(file.plate)
     # Whatever stage finds an error, the others go on with what is sound, so that all are told at once.
     dial, errors = attempt(file)
-    scales, more = rule(dial, shape, numeral_width)
-    errors = [*check_holes(file.plate), *errors, *more]
+    scales, more = rule(dial, shape, _hand_for)
+    errors = [*check_openings(file.plate), *check_signs(file), *errors, *more]
+    errors = errors or list(check_laid(file, scales, shape))
     if errors:
         raise source.refusal(source.fault_of(error) for error in errors)
     return Face(source, dial, scales)
+
+
+def _hand_for(look: Look) -> Hand:
+    try:
+        return hand(look.font, strokes=look.lettering is Lettering.STROKE)
+    except InputError as error:
+        raise error.under("look", "font") from None
 
 
 def write_files(files: Sequence[tuple[Path, bytes]]) -> None:
@@ -194,6 +223,18 @@ def _written_beside(path: Path, data: bytes) -> Path:
         neighbour.unlink(missing_ok=True)
         raise
     return neighbour
+
+
+def _finding(fault: Fault, remark: Remark) -> Finding:
+    return Finding(
+        file=fault.file,
+        line=fault.line,
+        column=fault.column,
+        key=fault.key,
+        message=fault.message,
+        check=remark.check,
+        place=remark.place,
+    )
 
 
 def _like(given: ArrayLike, made: Array) -> float | Array:

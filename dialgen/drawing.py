@@ -116,15 +116,18 @@ class Outline:
 
 @dataclass(frozen=True, slots=True)
 class Glyph:
-    """A letter's filled outline in ems (1 em = the size it is placed at), non-zero winding.
+    """A letter in ems (1 em = the size it is placed at): a filled outline, or single strokes.
 
-    ``name`` tells glyphs apart and is the same for the same letter of the same font; ``box`` is
-    the ink's (left, bottom, right, top) in ems.
+    ``name`` tells glyphs apart and is the same for the same letter of the same font.  ``path`` is
+    an outline to be filled, non-zero winding, or with ``stroked`` the centre lines of strokes, left
+    open.  ``box`` is the ink's (left, bottom, right, top) in ems; that of strokes includes half the
+    width in which lettering draws them.
     """
 
     name: str
     path: tuple[PathStep, ...]
     box: tuple[float, float, float, float]
+    stroked: bool = False
 
     def __hash__(self) -> int:
         """Hash the name alone, so that a renderer can keep what it made of a letter."""
@@ -144,7 +147,11 @@ class Placed:
 
 @dataclass(frozen=True, slots=True)
 class Letters:
-    """A string as placed glyphs; ``text`` is kept for readers that cannot see outlines."""
+    """A string as placed glyphs; ``text`` is kept for readers that cannot see outlines.
+
+    The glyphs of one string are either all outlines, filled in the style's ``fill``, or all
+    stroked, in its ``stroke`` and ``width_mm`` and with round corners.
+    """
 
     text: str
     glyphs: tuple[Placed, ...]

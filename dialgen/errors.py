@@ -78,10 +78,19 @@ class Refused(DialgenError, ValueError):
 
 @dataclass(frozen=True, slots=True)
 class Remark:
-    """Something worth knowing that is not wrong: printed as a warning, with the keys it concerns."""
+    """Something worth knowing that is not wrong: printed as a warning.
+
+    Args:
+        message: what is so, and what would mend it.
+        key: the key it concerns.
+        place: where it is on the plate, in millimetres from the pivot, if it is in one place.
+        check: the check of the finished face that found it, if one did.
+    """
 
     message: str
     key: Key = ()
+    place: tuple[float, float] | None = None
+    check: str = ""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -97,6 +106,14 @@ class Fault:
     def __str__(self) -> str:
         where = f"{self.file}:{self.line}:{self.column}: "
         return where + (f"{self.key}: {self.message}" if self.key else self.message)
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Finding(Fault):
+    """What a check of the finished face found: its name, and the place on the plate as in `Remark`."""
+
+    check: str
+    place: tuple[float, float] | None = None
 
 
 class DialFileError(DialgenError, ValueError):

@@ -14,6 +14,7 @@ PACKAGE = Path(__file__).parents[1] / "dialgen"
 FLOORS = (
     ("errors", "quantity", "drawing", "stage"),
     ("lettering", "geometry", "circuit", "renderers", "templates"),
+    ("ink", "looks", "symbols"),
     ("dialfile",),
     ("dial",),
     ("face",),

@@ -113,6 +113,7 @@ def _scale_json(scale: RuledScale, marks: Sequence[Spot | Mark]) -> dict[str, ob
                 "value": _number(m.value),
                 "rank": getattr(m, "rank", None),
                 "label": getattr(m, "label", None),
+                **({"also": list(getattr(m, "further", ()))} if spec.also else {}),
                 "drive": m.drive,
                 "angle": m.angle_deg,
                 "x": m.x,

@@ -11,6 +11,7 @@ import numpy as np
 from dialgen.circuit.terminals import Circuit, Coil
 from dialgen.dial.bench import NominalAngle, correction, old_angle, readings_key
 from dialgen.dial.chain import Chain
+from dialgen.dial.rows import row_remarks
 from dialgen.dial.wiring import Wiring, half_value, link, past_points, wire
 from dialgen.dialfile.models import DialFile, Movement, Scale
 from dialgen.errors import InputError, Key, NoSuchValue, Refused, Remark
@@ -69,7 +70,7 @@ def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
         except InputError as error:
             errors.append(error)
     stops = file.movement.stops or _default_stops(file, wirings)
-    maker = _Maker(file.movement, stops, file.circuit, file.scale[0], wirings.get(0))
+    maker = _Maker(file.movement, stops, file.circuit, coil, file.scale[0], wirings.get(0))
     if 0 not in wirings and any(r.value is not None for r in file.movement.all_readings()):
         # Readings by value go through the first scale; without it the others are not made either.
         return Dial(file, (), stops, ()), errors
@@ -146,6 +147,7 @@ class _Maker:
     movement: Movement
     stops_deg: Span
     circuit: Circuit | None
+    coil: Coil
     first_scale: Scale
     first_wiring: Wiring | None
 
@@ -156,7 +158,8 @@ class _Maker:
             remarks = list(past_points(scale.law, scale, key))
         else:
             made, more = self._corrected(scale, key, wiring)
-            remarks = [*wiring.remarks, *more]
+            rows = row_remarks(scale, key, wiring, self.circuit, self.coil)
+            remarks = [*wiring.remarks, *more, *rows]
         _check_ends(made)
         return made, remarks
 

@@ -31,7 +31,7 @@ _TELLING = 3
 _OTHER_NAMES = {
     "type": "kind", "model": "kind", "center": "centre", "width": "size", "height": "size", "min": "from",
     "max": "to", "start": "from", "end": "to", "step": "every", "text": "say", "label": "say",
-    "position": "at", "zero": "rest", "length": "pointer", "arc": "radius",
+    "position": "at", "zero": "rest", "length": "pointer", "arc": "radius", "color": "colour",
 }  # fmt: skip
 MOST_GUESSED = 200
 """Of how many unknown keys in one table it is guessed what they were meant to be."""
@@ -127,14 +127,14 @@ class Table(BaseModel):
 AnyTable = TypeVar("AnyTable", bound=BaseModel)
 
 
-def checked(model: type[AnyTable], given: object) -> AnyTable:
-    """Return ``given`` as a model.
+def checked(model: type[AnyTable], given: object, context: object = None) -> AnyTable:
+    """Return ``given`` as a model; ``context`` is for its readers.
 
     Raises:
         Flaws: it is not one.
     """
     try:
-        return model.model_validate(given)
+        return model.model_validate(given, context=context)
     except ValidationError as error:
         raise Flaws(model, error) from None
 

@@ -200,6 +200,13 @@ def at_most(most: int) -> Reader:
     return check
 
 
+def scale_number(given: object) -> int:
+    """Return the number of a scale, counted from 1."""
+    if isinstance(given, bool) or not isinstance(given, int) or given < 1:
+        raise ValueError(f"a scale goes by its number from 1 up, not {shown(given)}; write scale = 1")
+    return given
+
+
 def true_or_false(given: object) -> bool:
     """Return a truth value."""
     if not isinstance(given, bool):
@@ -225,6 +232,7 @@ FaceEnd = Annotated[float, PlainValidator(face_end)]
 Text = Annotated[str, PlainValidator(text)]
 Lettered = Annotated[str, PlainValidator(lettered)]
 UnitText = Annotated[str, PlainValidator(unit_text)]
+ScaleNumber = Annotated[int, PlainValidator(scale_number)]
 YesNo = Annotated[bool, PlainValidator(true_or_false)]
 CurrentA = Annotated[float, PlainValidator(_quantity(AMPERE))]
 AppliedA = Annotated[float, PlainValidator(_quantity(ANY_CURRENT))]

@@ -9,7 +9,7 @@ from pydantic import BeforeValidator, Field, PlainValidator
 
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Table, needs
-from dialgen.dialfile.fields import Length, LengthAbove, Lettered, Position
+from dialgen.dialfile.fields import Angle, Length, LengthAbove, Lettered, Position
 from dialgen.errors import InputError
 
 _MOST_HOLES = 200
@@ -36,6 +36,55 @@ class Window(Table):
         yield from _corner_too_large(self.corner, self.size, "window")
 
 
+class Slot(Table):
+    """A slot through the plate, round at both ends: along an arc about the pivot, or straight.
+
+    ``from`` and ``to``, or the ends of ``line``, are the middles of its round ends.
+    """
+
+    width: LengthAbove = Field(description="width = 3")
+    radius: LengthAbove | None = None
+    start: Angle | None = Field(default=None, alias="from")
+    end: Angle | None = Field(default=None, alias="to")
+    line: Annotated[
+        tuple[tuple[float, float], tuple[float, float]] | None,
+        PlainValidator(fields.pair(fields.pair(fields.coordinate, "[-30, 40]"), "[[-30, 40], [30, 40]]")),
+    ] = None
+
+    @needs("radius", "start", "end", "line")
+    def _one_course(self) -> Iterator[InputError]:
+        arc = (self.radius, self.start, self.end)
+        if self.line is None and None in arc:
+            yield InputError(
+                "the slot has no course; give radius, from and to for an arc, or line = [[x, y], [x, y]]"
+            )
+        elif self.line is not None and arc != (None, None, None):
+            yield InputError(
+                "a slot is an arc or straight, not both; keep line, or radius, from and to", ("line",)
+            )
+        elif self.start is not None and self.end is not None:
+            yield from _ascending(self.start, self.end, "slot")
+
+
+class Mirror(Table):
+    """The window for an anti-parallax mirror: a slot along the first scale, below its marks."""
+
+    width: LengthAbove = 4.0
+    radius: LengthAbove | None = None
+    """Of its middle; None leaves ``land`` of plate between it and what is printed of the scale."""
+    start: Angle | None = Field(default=None, alias="from")
+    end: Angle | None = Field(default=None, alias="to")
+    """The pointer's angles at its ends, which are the middles of round ones.  None is at the scale's
+    end for round ends, which thus pass beyond it, and as far beyond it for square ones."""
+    land: Length = 1.5
+    ends: Annotated[str, PlainValidator(fields.one_of("round", "square"))] = "round"
+
+    @needs("start", "end")
+    def _ascends(self) -> Iterator[InputError]:
+        if self.start is not None and self.end is not None:
+            yield from _ascending(self.start, self.end, "mirror")
+
+
 class Plate(Table):
     """The plate's outline, and where the pivot stands in it."""
 
@@ -47,6 +96,8 @@ class Plate(Table):
     corner: Length = 0.0
     hole: Annotated[tuple[Hole, ...], BeforeValidator(fields.at_most(_MOST_HOLES))] = ()
     window: Window | None = None
+    slot: Annotated[tuple[Slot, ...], BeforeValidator(fields.at_most(_MOST_HOLES))] = ()
+    mirror: Mirror | None = None
 
     @needs("size", "diameter")
     def _one_outline(self) -> Iterator[InputError]:
@@ -70,11 +121,21 @@ class Plate(Table):
 
 
 class FreeText(Table):
-    """A line of lettering anywhere on the plate, about its middle."""
+    """A line of lettering about its middle; without a place it is set where the plate is free."""
 
     say: Lettered = Field(description='say = "50 mV shunt"')
-    at: Position = Field(description="at = [0, 8]")
+    at: Position | None = None
     height: LengthAbove = 2.2
+    angle: Angle = 0.0
+
+
+def _ascending(start_deg: float, end_deg: float, what: str) -> Iterator[InputError]:
+    if end_deg <= start_deg:
+        yield InputError(
+            f"a {what} from {start_deg:g} to {end_deg:g} degrees covers nothing; give the lower angle first",
+            ("to",),
+            ("from",),
+        )
 
 
 def _corner_too_large(corner_mm: float, size_mm: tuple[float, float], what: str) -> Iterator[InputError]:

@@ -8,44 +8,23 @@ from typing import Annotated, Any
 
 from pydantic import BeforeValidator, Field, PlainValidator, ValidationInfo
 
-from dialgen.circuit.kinds import CIRCUITS
-from dialgen.circuit.terminals import Circuit
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table, checked, each, folder_of, needs
-from dialgen.dialfile.fields import FaceEnd, FaceValue, LengthAbove, Lettered, Position, UnitText, YesNo
+from dialgen.dialfile.base import Table, folder_of, needs
+from dialgen.dialfile.dividing import Entry, Every, Piece, read_divisions, read_numbered
+from dialgen.dialfile.fields import FaceEnd, FaceValue, LengthAbove, Position, UnitText, YesNo
 from dialgen.dialfile.kinds import read_kind
+from dialgen.dialfile.looks import Dress, read_dress
 from dialgen.dialfile.movement import readings_once
 from dialgen.dialfile.readings import MOST_READINGS, Reading, ScaleReading, points_from_file, readings_file
+from dialgen.dialfile.rows import CircuitTable, Fiducial, Row, Stretch, read_fiducial
+from dialgen.dialfile.zones import Colour
 from dialgen.errors import DialFileError, InputError
 from dialgen.geometry.kinds import LAWS
 from dialgen.geometry.laws import Law
 from dialgen.geometry.points import Observed
-from dialgen.quantity import shown
 
-_MOST_NUMBERED = 500
-_MOST_PIECES = 100
 _LEAST_SPAN = 1e-9
-
-CircuitTable = Annotated[Circuit, PlainValidator(lambda given: read_kind(given, CIRCUITS, "circuit"))]
-
-
-class Every(Table):
-    """Numbered values or divisions at every multiple of a step."""
-
-    every: Annotated[float, PlainValidator(fields.positive("a step"))] = Field(description="every = 10")
-
-
-class Piece(Every):
-    """A step that holds up to a value."""
-
-    to: FaceValue = Field(description="to = 10")
-
-
-class Entry(Table):
-    """A numbered value with a label of its own."""
-
-    at: FaceEnd = Field(description="at = 20")
-    label: Lettered | None = None
+_MOST_ROWS = 6
 
 
 def _law(given: object, info: ValidationInfo) -> fields.Value:
@@ -72,36 +51,6 @@ def _law_from_file(given: dict[str, Any], info: ValidationInfo) -> fields.Value:
         raise sheet.fault(sheet.heads[0], "", error.message) from None
 
 
-def _numbered(given: object) -> Every | tuple[Entry, ...] | None:
-    if given == "auto":
-        return None
-    if isinstance(given, dict):
-        return checked(Every, given)
-    if not isinstance(given, list):
-        choices = '"auto", { every = 10 } or [0, 10, 20]'
-        raise ValueError(f"{shown(given)} does not say what to number; write {choices}")
-    if len(given) > _MOST_NUMBERED:
-        raise ValueError(f"{len(given)} values to number; give at most {_MOST_NUMBERED}")
-    return each(given, _entry)
-
-
-def _entry(given: object) -> Entry:
-    return checked(Entry, given) if isinstance(given, dict) else Entry(at=fields.face_end(given))
-
-
-def _divisions(given: object) -> Every | tuple[Piece, ...] | None:
-    if given == "auto":
-        return None
-    if isinstance(given, dict):
-        return checked(Every, given)
-    if not isinstance(given, list):
-        choices = '"auto", { every = 2 } or [{ to = 10, every = 1 }]'
-        raise ValueError(f"{shown(given)} does not say how to divide; write {choices}")
-    if not 1 <= len(given) <= _MOST_PIECES:
-        raise ValueError(f"{len(given)} pieces of divisions; give 1 to {_MOST_PIECES}")
-    return each(given, lambda piece: checked(Piece, piece))
-
-
 class Scale(Table):
     """One scale: what its numerals mean, and where its line lies."""
 
@@ -118,11 +67,24 @@ class Scale(Table):
     ] = None
     square: YesNo = False
     curve: LengthAbove | None = None
-    numbered: Annotated[Every | tuple[Entry, ...] | None, PlainValidator(_numbered)] = None
-    divisions: Annotated[Every | tuple[Piece, ...] | None, PlainValidator(_divisions)] = None
+    numbered: Annotated[Every | tuple[Entry, ...] | None, PlainValidator(read_numbered)] = None
+    divisions: Annotated[Every | tuple[Piece, ...] | None, PlainValidator(read_divisions)] = None
     marks: Annotated[str, PlainValidator(fields.one_of("outward", "inward", "across"))] = "outward"
     numerals: Annotated[str, PlainValidator(fields.one_of("outside", "inside"))] = "outside"
     gap: LengthAbove = 0.8
+    accuracy_class: Annotated[float | None, PlainValidator(fields.number("a class", 0.005, 20.0))] = Field(
+        default=None, alias="class"
+    )
+    fiducial: Annotated[Fiducial | None, PlainValidator(read_fiducial)] = None
+    """What the class is a percentage of; None is the limit, or the length of a scale that has none."""
+    effective: Stretch | None = None
+    heavy: Stretch | None = None
+    """The part along which the scale line is heavier."""
+    also: Annotated[tuple[Row, ...], BeforeValidator(fields.at_most(_MOST_ROWS))] = ()
+    sign: Annotated[str, PlainValidator(fields.one_of("minus", "always"))] = "minus"
+    ink: Colour | None = None
+    look: Annotated[Dress, PlainValidator(read_dress)] = Dress()
+    unit_at: Position | None = None
     reading: Annotated[tuple[ScaleReading, ...], BeforeValidator(fields.at_most(MOST_READINGS))] = ()
     readings: Annotated[tuple[Reading, ...], PlainValidator(readings_file(ScaleReading))] = ()
 
@@ -190,6 +152,24 @@ class Scale(Table):
                     ("divisions", i, "to"),
                 )
             before = piece.to
+
+    @needs("start", "end", "effective", "heavy")
+    def _stretches_within(self) -> Iterator[InputError]:
+        for name in ("effective", "heavy"):
+            low, high = getattr(self, name) or (self.start, self.end)
+            if self.start < self.end and not self.start <= low < high <= self.end:
+                yield InputError(
+                    f"{low:g} to {high:g} is no part of the scale, {self.start:g} to {self.end:g}; "
+                    "give two values of it, the lower first",
+                    (name,),
+                )
+
+    @needs("fiducial", "accuracy_class")
+    def _fiducial_of_a_class(self) -> Iterator[InputError]:
+        if self.fiducial is not None and self.accuracy_class is None:
+            yield InputError(
+                "fiducial says what a class counts from; give class, or leave it out", ("fiducial",)
+            )
 
     @needs("reading", "readings")
     def _readings_once(self) -> Iterator[InputError]:

@@ -2,7 +2,7 @@
 
 Between two numerals the division is 1, 2 or 5·10^n and constant: the finest with at most nine marks
 (MIL-HDBK-759B) of which none stand nearer than the least gap.  So a crowding scale coarsens from
-numeral to numeral, never between.
+numeral to numeral, never between.  Nor is a division finer than the instrument's class justifies.
 """
 
 from __future__ import annotations
@@ -104,9 +104,11 @@ def _finest_roomy(
     starts = np.cumsum([0, *(len(cut) for cut in cuts[:-1])])
     nearest = iter([steps[at : at + len(cut) - 1].min() for at, cut in zip(starts, cuts, strict=True)])
     chosen: list[Division | None] = []
-    for legal in choices:
+    for (low, high), legal in zip(gaps, choices, strict=True):
+        least = ruler.least_step(low, high) * (1 - 1e-9)
         # The list is used up whole, so that every gap reads its own distances.
-        fitting = [d for d in legal if next(nearest) >= ruler.gap_mm * (1 - 1e-9)]
+        roomy = [d for d in legal if next(nearest) >= ruler.gap_mm * (1 - 1e-9)]
+        fitting = [d for d in roomy if (high - low) / d.parts >= least]
         chosen.append(fitting[0] if fitting else None)
     return chosen
 

@@ -1,31 +1,57 @@
-"""Where numerals stand: upright, and everywhere equally clear of the ends of their marks."""
+"""Where numerals stand: everywhere equally clear of the ends of their marks, whatever they say.
+
+The clear space is that between the ink itself of the numeral, not a box around it, and the end of its
+mark.  A further row stands clear of the one before.
+"""
 
 from __future__ import annotations
 
 import math
 from collections.abc import Iterator
+from typing import NamedTuple
 
 import numpy as np
 
-from dialgen.drawing import Letters, Point, Style
+from dialgen.drawing import Letters, Placed, Point, Style
+from dialgen.face.clearance import Row, clear_of_ends, clear_of_ink, clear_of_others, slides
 from dialgen.face.divisions import Rank
-from dialgen.face.looks import Look
+from dialgen.face.plate import Outliner
 from dialgen.face.ruling import Mark, RuledScale
-from dialgen.lettering import letters, measure
+from dialgen.face.sizes import Sizes
+from dialgen.geometry.lines import StraightLine
+from dialgen.lettering import Fit, ink_points, letters, measure
+from dialgen.looks import Turn
+from dialgen.stage import Array
 
-_INFINITY = 1.35
-"""How much larger ∞ is set: in the fonts it is no taller than a small letter."""
+_OTHERS = 0.6
+ROW_SPACE = 0.8
+"""The clear space between rows of numerals, as a share of that between a mark and its numeral."""
 
 
-def reaches(side: str, look: Look) -> dict[Rank, tuple[float, float]]:
+class Numeral(NamedTuple):
+    """A numeral as it stands: the mark it is for, the row it belongs to, its letters."""
+
+    mark: Mark
+    row: int
+    letters: Letters
+
+
+class _Stem(NamedTuple):
+    """The end of a mark, and the unit vector that a numeral stands off along."""
+
+    end: Point
+    away: Point
+
+
+def reaches(side: str, sizes: Sizes) -> dict[Rank, tuple[float, float]]:
     """Return how far marks of each rank reach from their point on the line, inwards (minus) and out."""
     shares = {"outward": (0.0, 1.0), "inward": (-1.0, 0.0), "across": (-0.5, 0.5)}[side]
-    return {rank: (shares[0] * look.length_mm(rank), shares[1] * look.length_mm(rank)) for rank in Rank}
+    return {rank: (shares[0] * sizes.length_mm(rank), shares[1] * sizes.length_mm(rank)) for rank in Rank}
 
 
 def mark_lines(scale: RuledScale) -> Iterator[tuple[Mark, Point, Point]]:
     """Yield every mark with its inner and its outer end."""
-    ranks = reaches(scale.spec.marks, scale.look)
+    ranks = reaches(scale.spec.marks, scale.sizes)
     stretches = scale.line.stretch(np.array([mark.angle_deg for mark in scale.marks])).tolist()
     for mark, stretch in zip(scale.marks, stretches, strict=True):
         inner, outer = ranks[mark.rank]
@@ -33,40 +59,138 @@ def mark_lines(scale: RuledScale) -> Iterator[tuple[Mark, Point, Point]]:
         yield mark, (mark.x + inner * ux, mark.y + inner * uy), (mark.x + outer * ux, mark.y + outer * uy)
 
 
-def numerals(scale: RuledScale) -> Iterator[Letters]:
-    """Yield the numeral of every labelled mark."""
-    spec, look = scale.spec, scale.look
-    style = Style(fill=look.ink)
-    sign = 1.0 if spec.numerals == "outside" else -1.0
-    xs, ys = scale.line.away(np.array([mark.angle_deg for mark in scale.marks]))
-    aways = zip((sign * xs).tolist(), (sign * ys).tolist(), strict=True)
-    for (mark, inner, outer), away in zip(mark_lines(scale), aways, strict=True):
-        if mark.label:
-            start = outer if spec.numerals == "outside" else inner
-            height_mm = look.numeral_mm * (_INFINITY if mark.label == "∞" else 1.0)
-            box = measure(mark.label, height_mm)
-            half = ((box.right - box.left) / 2, (box.top - box.bottom) / 2)
-            reach = clear_reach(half, away, look.space_mm)
-            at = (start[0] + reach * away[0], start[1] + reach * away[1])
-            yield letters(mark.label, height_mm, at, style)
+def numerals(scale: RuledScale, plate: Outliner) -> tuple[Numeral, ...]:
+    """Return the numerals of all rows, those of the scale itself first."""
+    return tuple(
+        numeral
+        for side, rows in sides(scale).items()
+        for numeral in _beside(scale, side == "outside", rows, plate)
+    )
 
 
-def clear_reach(half: tuple[float, float], away: tuple[float, float], space_mm: float) -> float:
-    """Return how far along ``away`` a box's middle must lie to be just ``space_mm`` clear of the start.
+def sides(scale: RuledScale) -> dict[str, list[int]]:
+    """Return which rows stand on each side of the line, from the line outwards."""
+    found: dict[str, list[int]] = {}
+    side = scale.spec.numerals
+    for row, said in enumerate([side, *(further.numerals for further in scale.spec.also)]):
+        side = said or side
+        found.setdefault(side, []).append(row)
+    return found
+
+
+def _beside(scale: RuledScale, outside: bool, rows: list[int], plate: Outliner) -> Iterator[Numeral]:
+    """Yield the numerals on one side, row by row."""
+    stems, tips = _stems(scale, outside)
+    before: dict[Mark, Array] = {}
+    for number in rows:
+        said = [(mark, stem, text) for mark, stem in stems if (text := text_in_row(mark, number))]
+        if not said:
+            continue
+        marks = [mark for mark, _, _ in said]
+        words = [_set(scale, mark, text) for mark, _, text in said]
+        row = _row([ink_points(word) for word in words], [stem for _, stem, _ in said])
+        reaches_mm = _reaches(scale, words[0], row, tips, [before.get(mark) for mark in marks])
+        shifts = row.ends + reaches_mm[:, None] * row.aways
+        shifts = shifts + slides(plate, row, shifts)
+        before.update(zip(marks, row.ink(shifts), strict=True))
+        for mark, word, (dx, dy) in zip(marks, words, shifts.tolist(), strict=True):
+            yield Numeral(mark, number, moved(word, dx, dy))
+
+
+def _row(edges: list[Array], stems: list[_Stem]) -> Row:
+    starts = np.cumsum([0, *map(len, edges[:-1])])
+    return Row(
+        np.concatenate(edges),
+        starts,
+        np.array([stem.end for stem in stems]),
+        np.array([stem.away for stem in stems]),
+    )
+
+
+def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: list[Array | None]) -> Array:
+    """Return how far from its mark's end the middle of each numeral lies.
 
     Args:
-        half: half the box's width and height.
-        away: the unit vector from the start towards the box.
-        space_mm: the distance wanted between the start and the nearest point of the box.
-
-    >>> clear_reach((3.0, 1.0), (0.0, 1.0), 0.5)
-    1.5
+        scale: the scale.
+        word: any of the numerals, for the width of its strokes.
+        row: the numerals.
+        tips: the ends of all marks, (n, 2), mm.
+        before: the ink of the row before at each mark, None where there is none.
     """
-    (a, b), ux, uy = half, abs(away[0]), abs(away[1])
-    if ux > 0 and (side := (a + space_mm) / ux) * uy <= b:
-        return side
-    if uy > 0 and (side := (b + space_mm) / uy) * ux <= a:
-        return side
-    # Nearest is a corner: |reach·u - corner| = space, the farther root.
-    along = ux * a + uy * b
-    return along + math.sqrt(max(along**2 - (a * a + b * b) + space_mm**2, 0.0))
+    sizes = scale.sizes
+    pen_mm = word.style.width_mm / 2 if word.style.stroke else 0.0
+    reaches_mm = clear_of_ends(row, sizes.numbered_width_mm / 2, sizes.space_mm + pen_mm)
+    reaches_mm = clear_of_others(row, reaches_mm, tips, _OTHERS * sizes.space_mm + pen_mm)
+    space_mm = ROW_SPACE * sizes.space_mm + 2 * pen_mm
+    for i, ink in enumerate(before):
+        if ink is not None:
+            points = row.points[row.owners == i]
+            away = (float(row.aways[i, 0]), float(row.aways[i, 1]))
+            reaches_mm[i] = clear_of_ink(points, ink - row.ends[i], away, space_mm)
+    if isinstance(scale.line, StraightLine) or scale.look.turn is Turn.ACROSS:
+        # Numerals in a row share a baseline.
+        reaches_mm[:] = reaches_mm.max()
+    return reaches_mm
+
+
+def text_in_row(mark: Mark, row: int) -> str | None:
+    """Return what a mark says in a row of numerals; row 0 is the scale's own."""
+    if row == 0:
+        return mark.label
+    return mark.further[row - 1] if mark.further else None
+
+
+def _stems(scale: RuledScale, outside: bool) -> tuple[list[tuple[Mark, _Stem]], Array]:
+    """Return the numbered marks, each with its end on one side of the line, and the ends of all, (n, 2)."""
+    sign = 1.0 if outside else -1.0
+    xs, ys = scale.line.away(np.array([mark.angle_deg for mark in scale.marks]))
+    aways = zip((sign * xs).tolist(), (sign * ys).tolist(), strict=True)
+    ends = [(mark, outer if outside else inner) for mark, inner, outer in mark_lines(scale)]
+    stems = [
+        (mark, _Stem(end, away))
+        for (mark, end), away in zip(ends, aways, strict=True)
+        if mark.label or mark.further
+    ]
+    return stems, np.array([end for _, end in ends])
+
+
+def _set(scale: RuledScale, mark: Mark, text: str) -> Letters:
+    """Return a numeral about the origin, turned as the look says, its sign hung beside the digits."""
+    height_mm, hand = scale.sizes.numeral_mm, scale.hand
+    turn_deg = _turn_deg(scale.look.turn, mark.direction)
+    middle = 0.5
+    if scale.look.turn is not Turn.ALONG and text[0] in "−+" and len(text) > 1:
+        box = measure(text, height_mm, hand=hand)
+        sign_mm = measure(text[0], height_mm, hand=hand).width_mm
+        middle = ((sign_mm + box.right) / 2 - box.left) / (box.right - box.left)
+    return letters(
+        text,
+        height_mm,
+        (0.0, 0.0),
+        Style(fill=scale.ink),
+        anchor=(middle, 0.5),
+        angle_deg=turn_deg,
+        fit=Fit.LINE,
+        hand=hand,
+    )
+
+
+def _turn_deg(turn: Turn, direction: Point) -> float:
+    """Return how far a numeral is turned clockwise, so that it is never read upside down."""
+    pointer_deg = math.degrees(math.atan2(direction[0], direction[1]))
+    match turn:
+        case Turn.UPRIGHT:
+            return 0.0
+        case Turn.ACROSS:
+            return pointer_deg if abs(pointer_deg) <= 100 else pointer_deg - math.copysign(180, pointer_deg)
+        case Turn.ALONG:
+            return pointer_deg - 90 if pointer_deg >= 0 else pointer_deg + 90
+
+
+def moved(word: Letters, dx: float, dy: float) -> Letters:
+    """Return letters moved by (dx, dy) millimetres."""
+    return Letters(
+        word.text,
+        tuple([Placed(p.glyph, p.x + dx, p.y + dy, p.size_mm, p.angle_deg) for p in word.glyphs]),
+        word.style,
+    )

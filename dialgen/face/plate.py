@@ -1,4 +1,4 @@
-"""The plate itself: its outline, what lies on it, holes, window and pivot."""
+"""The plate's outline, and what lies on it."""
 
 from __future__ import annotations
 
@@ -11,12 +11,8 @@ import numpy as np
 from numpy.typing import ArrayLike, NDArray
 
 from dialgen.dialfile.models import Plate
-from dialgen.drawing import Circle, Layer, Line, Outline, Point, Purpose, Style, Vertex
-from dialgen.errors import InputError
+from dialgen.drawing import Circle, Outline, Point, Style, Vertex
 
-CUT = Style(stroke="#d00000", width_mm=0.1)
-GUIDE = Style(stroke="#2060c0", width_mm=0.1)
-_CROSS_MM = 2.0
 _SLACK_MM = 1e-9
 
 
@@ -89,41 +85,6 @@ def outliner(plate: Plate) -> Outliner:
         return Rectangle((-x, -y, *plate.size), plate.corner)
     radius_mm = (plate.diameter or 0.0) / 2
     return Disc((radius_mm - x, radius_mm - y), radius_mm)
-
-
-def check_holes(plate: Plate) -> Iterator[InputError]:
-    """Yield an error for every hole whose middle is off the plate."""
-    shape = outliner(plate)
-    for i, hole in enumerate(plate.hole):
-        if not shape.holds(*hole.at):
-            yield InputError(
-                f"the hole at {hole.at[0]:g}, {hole.at[1]:g} is off the plate; "
-                "coordinates count from the pivot",
-                ("plate", "hole", i, "at"),
-                ("plate", "pivot"),
-            )
-
-
-def cut_layer(plate: Plate) -> Layer:
-    """Return what is cut: outline and holes."""
-    holes = [Circle(hole.at, hole.diameter / 2, CUT) for hole in plate.hole]
-    return Layer(name="outline", purpose=Purpose.CUT, items=(outliner(plate).outline(CUT), *holes))
-
-
-def guide_layer(plate: Plate) -> Layer:
-    """Return what helps to fit the plate: a cross at the pivot, and the window of the case."""
-    items: list[Line | Outline] = []
-    if outliner(plate).holds(0.0, 0.0):
-        items = [
-            Line((-_CROSS_MM, 0.0), (_CROSS_MM, 0.0), GUIDE),
-            Line((0.0, -_CROSS_MM), (0.0, _CROSS_MM), GUIDE),
-        ]
-    if plate.window:
-        (x, y), (width, height) = plate.window.at, plate.window.size
-        items.append(
-            rounded_rectangle((x - width / 2, y - height / 2, width, height), plate.window.corner, GUIDE)
-        )
-    return Layer(name="fitting", purpose=Purpose.GUIDE, items=tuple(items))
 
 
 def rounded_rectangle(box: tuple[float, float, float, float], corner_mm: float, style: Style) -> Outline:

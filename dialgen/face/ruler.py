@@ -30,6 +30,7 @@ class Ruler:
         digit_mm: the room that a numeral of one digit takes, where it takes least.
         gap_mm: the least distance between marks.
         clear_mm: the least clear space between numerals.
+        least_step: the least step of value that is justified between two values.
     """
 
     start: float
@@ -40,6 +41,7 @@ class Ruler:
     digit_mm: float
     gap_mm: float
     clear_mm: float
+    least_step: Callable[[float, float], float] = lambda low, high: 0.0
 
     @property
     def length_mm(self) -> float:

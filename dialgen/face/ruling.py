@@ -3,25 +3,33 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterator, Sequence
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
+from functools import partial
 from typing import NamedTuple
 
 import numpy as np
 
 from dialgen.dial import Dial, ScaleDial
-from dialgen.dialfile.models import Every, Scale
+from dialgen.dialfile.looks import look_of
+from dialgen.dialfile.models import DialFile, Every, Scale
 from dialgen.errors import InputError, Key
+from dialgen.face.captions import Caption, captions
 from dialgen.face.checks import check_meets, check_on_plate, check_order
 from dialgen.face.divisions import MOST_MARKS, Rank, divide, stepped
-from dialgen.face.looks import Look, look_for
 from dialgen.face.numbering import auto_numbered
 from dialgen.face.plate import Outliner
+from dialgen.face.precision import blank_from_zero
 from dialgen.face.ruler import Ruler, multiples
-from dialgen.face.survey import NumeralWidth, survey
+from dialgen.face.sizes import Sizes, sizes_for
+from dialgen.face.survey import survey
 from dialgen.geometry.lines import ArcLine, ScaleLine, StraightLine
-from dialgen.quantity import plain_number
+from dialgen.lettering import Hand, numeral_width
+from dialgen.looks import Look
 from dialgen.stage import Array
+
+HandFor = Callable[[Look], Hand]
+"""The hand that letters a look."""
 
 
 class Spot(NamedTuple):
@@ -49,6 +57,8 @@ class Mark(NamedTuple):
     direction: tuple[float, float]
     rank: Rank
     label: str | None
+    further: tuple[str, ...] = ()
+    """The texts of the further rows of numerals, none where the label is of the maker's own wording."""
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -60,6 +70,14 @@ class RuledScale:
     ends_deg: Array
     marks: tuple[Mark, ...]
     look: Look
+    sizes: Sizes
+    rows: tuple[Caption, ...]
+    hand: Hand
+
+    @property
+    def ink(self) -> str:
+        """The colour of the scale."""
+        return self.spec.ink or self.look.ink
 
     @property
     def spec(self) -> Scale:
@@ -67,18 +85,21 @@ class RuledScale:
         return self.dial.spec
 
 
-def rule(
-    dial: Dial, plate: Outliner, numeral_width: NumeralWidth
-) -> tuple[tuple[RuledScale, ...], list[InputError]]:
+def rule(dial: Dial, plate: Outliner, hand_for: HandFor) -> tuple[tuple[RuledScale, ...], list[InputError]]:
     """Return the scales of the dial that can be divided, and what is wrong with the others.
 
     Wrong are values off the scale, pointers that miss the line, marks off the plate.
+
+    Args:
+        dial: the scales with their chains.
+        plate: the plate's outline.
+        hand_for: the hand that letters a look.
     """
     ruled: list[RuledScale] = []
     errors: list[InputError] = []
     for scale in dial.scales:
         try:
-            ruled.append(_rule_scale(scale, plate, numeral_width))
+            ruled.append(_rule_scale(scale, dial.file, plate, hand_for))
         except InputError as error:
             errors.append(error)
     return tuple(ruled), errors
@@ -91,7 +112,7 @@ def scale_line(scale: Scale) -> ScaleLine:
     return ArcLine(scale.radius or 0.0, scale.centre or (0.0, 0.0))
 
 
-def _rule_scale(scale: ScaleDial, plate: Outliner, numeral_width: NumeralWidth) -> RuledScale:
+def _rule_scale(scale: ScaleDial, file: DialFile, plate: Outliner, hand_for: HandFor) -> RuledScale:
     spec, key = scale.spec, scale.key
     try:
         line = scale_line(spec)
@@ -99,16 +120,42 @@ def _rule_scale(scale: ScaleDial, plate: Outliner, numeral_width: NumeralWidth) 
         raise error.under(*key) from None
     ends = scale.chain.angle(np.array([spec.start, spec.end]))
     check_meets(line, ends, [spec.start, spec.end], spec, key)
-    look = look_for(spec, abs(float(np.diff(line.along(ends))[0])))
+    look = look_of(file.look, spec.look)
+    sizes = sizes_for(spec, look, abs(float(np.diff(line.along(ends))[0])))
+    rows, hand = captions(spec, look, _middle(scale, ends)), hand_for(look)
+    ruler = survey(scale, line, ends, look, sizes, rows, partial(numeral_width, hand=hand))
     asked = _asked(spec, key)
-    ruler = survey(scale, line, ends, look, numeral_width)
-    labels = {v: plain_number(v) for v in auto_numbered(ruler)} if asked is None else asked
-    marks = _marks(spec, key, ruler, sorted(labels), automatic=asked is None)
-    return RuledScale(scale, line, ends, _placed(scale, line, plate, marks, labels), look)
+    bare = blank_from_zero(scale, file.movement)
+    own = _own_words(spec)
+    numbered = [v for v in auto_numbered(ruler) if not bare(v)] if asked is None else asked
+    marks = _marks(spec, key, ruler, numbered, automatic=asked is None)
+    if spec.divisions is None:
+        marks = [(v, rank) for v, rank in marks if rank is Rank.NUMBERED or not bare(v)]
+    labels = {v: own[v] if v in own else rows[0].text(v) for v in numbered}
+    further = {v: _further(rows, v) for v in numbered if v not in own}
+    placed = _placed(scale, line, plate, marks, labels, further)
+    return RuledScale(scale, line, ends, placed, look, sizes, rows, hand)
 
 
-def _asked(spec: Scale, key: Key) -> dict[float, str] | None:
-    """Return the values that the file asks to number with their labels; None where it leaves them open."""
+def _further(rows: Sequence[Caption], value: float) -> tuple[str, ...]:
+    """Return what the further rows say at a value; where all say the same, as at zero, once is enough."""
+    first, *texts = (row.text(value) for row in rows)
+    return () if all(text == first for text in texts) else tuple(texts)
+
+
+def _middle(scale: ScaleDial, ends_deg: Array) -> float:
+    """Return the value at the middle of the pointer's way over the scale."""
+    return float(scale.chain.value(ends_deg.mean(keepdims=True))[0])
+
+
+def _own_words(spec: Scale) -> dict[float, str]:
+    """Return the labels that the file words itself; an empty one leaves a mark without a numeral."""
+    entries = spec.numbered if isinstance(spec.numbered, tuple) else ()
+    return {entry.at: entry.label for entry in entries if entry.label is not None}
+
+
+def _asked(spec: Scale, key: Key) -> list[float] | None:
+    """Return the values that the file asks to number; None where it leaves them open."""
     asked = spec.numbered
     if asked is None:
         return None
@@ -122,8 +169,8 @@ def _asked(spec: Scale, key: Key) -> dict[float, str] | None:
                 f"a step of {asked.every:g} gives over {MOST_MARKS} numerals; take a larger one",
                 (*key, "numbered", "every"),
             )
-        return {value: plain_number(value) for value in multiples(asked.every, spec.start, spec.end)}
-    return {e.at: plain_number(e.at) if e.label is None else e.label for e in asked}
+        return multiples(asked.every, spec.start, spec.end)
+    return sorted(entry.at for entry in asked)
 
 
 def _marks(
@@ -176,7 +223,8 @@ def _placed(
     line: ScaleLine,
     plate: Outliner,
     marks: Sequence[tuple[float, Rank]],
-    labels: dict[float, str],
+    labels: Mapping[float, str],
+    further: Mapping[float, tuple[str, ...]],
 ) -> tuple[Mark, ...]:
     values = [value for value, _ in marks]
     columns = _located(scale, line, values)
@@ -184,4 +232,6 @@ def _placed(
     check_order(values, angles, scale.key)
     check_on_plate(plate, values, (xs, ys), scale.spec, scale.key)
     ranked = zip(_spots(values, *columns), marks, strict=True)
-    return tuple(Mark(*spot, rank, labels.get(value) or None) for spot, (value, rank) in ranked)
+    return tuple(
+        Mark(*spot, rank, labels.get(value) or None, further.get(value, ())) for spot, (value, rank) in ranked
+    )

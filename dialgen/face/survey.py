@@ -3,17 +3,19 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 
 import numpy as np
 
 from dialgen.dial import ScaleDial
 from dialgen.dialfile.models import Scale
 from dialgen.errors import InputError
-from dialgen.face.looks import Look
+from dialgen.face.captions import Caption
+from dialgen.face.precision import least_gap_mm, least_step
 from dialgen.face.ruler import UNEVEN, Ruler
+from dialgen.face.sizes import Sizes
 from dialgen.geometry.lines import ScaleLine
-from dialgen.quantity import plain_number
+from dialgen.looks import Look, Turn
 from dialgen.stage import Array
 
 _STEPS = 96
@@ -25,7 +27,13 @@ NumeralWidth = Callable[[str, float], float]
 
 
 def survey(
-    scale: ScaleDial, line: ScaleLine, ends_deg: Array, look: Look, numeral_width: NumeralWidth
+    scale: ScaleDial,
+    line: ScaleLine,
+    ends_deg: Array,
+    look: Look,
+    sizes: Sizes,
+    rows: Sequence[Caption],
+    numeral_width: NumeralWidth,
 ) -> Ruler:
     """Return the ruler of a scale on its line.
 
@@ -33,7 +41,9 @@ def survey(
         scale: the scale and its chain.
         line: the line its marks stand on.
         ends_deg: the pointer's angles at its first and last value.
-        look: the sizes of its numerals.
+        look: how its numerals stand.
+        sizes: the sizes of its numerals.
+        rows: how each row of numerals is written.
         numeral_width: what a numeral's text takes.
     """
     spec, chain = scale.spec, scale.chain
@@ -43,15 +53,24 @@ def survey(
     def place_mm(values: Array) -> Array:
         return sign * (line.along(chain.angle(values)) - first)
 
+    crowding = _crowding(spec, sizes)
+
+    def widest(value: float) -> float:
+        return max([numeral_width(row.text(value), sizes.numeral_mm) for row in rows])
+
     def width_mm(values: Array) -> Array:
+        if look.turn is Turn.ALONG:
+            return np.full(len(values), sizes.numeral_mm * crowding)
         # Two upright boxes are clear of each other as soon as they are beside or above each other,
         # whichever comes first along the line.
-        widths = np.array([numeral_width(plain_number(v), look.numeral_mm) for v in values.tolist()])
+        widths = np.array([widest(v) for v in values.tolist()])
+        if look.turn is Turn.ACROSS:
+            return (widths + sizes.clear_mm) * crowding - sizes.clear_mm
         across, upward = (np.abs(d) for d in line.directions(chain.angle(values)))
         with np.errstate(divide="ignore", over="ignore"):
-            beside = (widths + look.clear_mm) / upward
-            above = (look.numeral_mm + look.stacked_mm) / across
-        return np.minimum(beside, above) * _crowding(spec, look) - look.clear_mm
+            beside = (widths + sizes.clear_mm) / upward
+            above = (sizes.numeral_mm + sizes.stacked_mm) / across
+        return np.minimum(beside, above) * crowding - sizes.clear_mm
 
     return Ruler(
         start=spec.start,
@@ -59,9 +78,10 @@ def survey(
         place_mm=place_mm,
         along=_along(scale, line, ends_deg, place_mm),
         width_mm=width_mm,
-        digit_mm=min(numeral_width("0", look.numeral_mm), look.numeral_mm) * _crowding(spec, look),
-        gap_mm=spec.gap,
-        clear_mm=look.clear_mm,
+        digit_mm=min(numeral_width("0", sizes.numeral_mm), sizes.numeral_mm) * crowding,
+        gap_mm=least_gap_mm(spec, abs(last - first), sizes.gap_mm),
+        clear_mm=sizes.clear_mm,
+        least_step=least_step(spec),
     )
 
 
@@ -88,10 +108,10 @@ def _along(scale: ScaleDial, line: ScaleLine, ends_deg: Array, place_mm: Callabl
     return along
 
 
-def _crowding(spec: Scale, look: Look) -> float:
+def _crowding(spec: Scale, sizes: Sizes) -> float:
     """Return how much farther apart places on the line are than at the numerals' distance."""
     if spec.radius is None:
         return 1.0
-    reach = look.numbered_mm + look.space_mm + look.numeral_mm / 2
+    reach = sizes.numbered_mm + sizes.space_mm + sizes.numeral_mm / 2
     numerals = spec.radius + (reach if spec.numerals == "outside" else -reach)
     return spec.radius / max(numerals, 0.1 * spec.radius)

@@ -7,13 +7,15 @@ lie along the ray, not along the radius of the arc, so an arc off the pivot stil
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Protocol
 
 import numpy as np
 
 from dialgen.errors import InputError
 from dialgen.stage import Array
+
+_LONGEST = 4.0
 
 
 class ScaleLine(Protocol):
@@ -41,6 +43,14 @@ class ScaleLine(Protocol):
 
     def stretch(self, angle_deg: Array) -> Array:
         """Return how much longer a mark is drawn so that all of a rank end at one height."""
+        ...
+
+    def offset(self, outward_mm: float) -> ScaleLine:
+        """Return the line that runs beside this one, farther from the pivot by ``outward_mm``."""
+        ...
+
+    def beside(self, angle_deg: Array, outward_mm: float) -> tuple[Array, Array]:
+        """Return x and y of where marks at each angle cross the line that runs beside this one."""
         ...
 
 
@@ -92,8 +102,25 @@ class ArcLine:
         return _ray(angle_deg)
 
     def stretch(self, angle_deg: Array) -> Array:
-        """Return 1: marks of a rank are equally long."""
-        return np.ones(np.shape(angle_deg))
+        """Return 1 over the cosine of the mark's lean, so that all of a rank end on one circle.
+
+        That circle is about the arc's own centre; a mark of length L that leans by a misses it by
+        (L·tan a)²/2R, a few micrometres.  Where the pointer all but grazes the arc a mark grows to
+        four times its length and no longer: it would run along the line.
+        """
+        if self.centre == (0.0, 0.0):
+            return np.ones(np.shape(angle_deg))
+        (x, y), (ux, uy) = self.points(angle_deg), _ray(angle_deg)
+        cosine = (ux * (x - self.centre[0]) + uy * (y - self.centre[1])) / self.radius_mm
+        return np.asarray(1.0 / np.maximum(cosine, 1.0 / _LONGEST))
+
+    def offset(self, outward_mm: float) -> ArcLine:
+        """Return the circle about the same centre, larger by ``outward_mm``."""
+        return ArcLine(self.radius_mm + outward_mm, self.centre)
+
+    def beside(self, angle_deg: Array, outward_mm: float) -> tuple[Array, Array]:
+        """Return x and y of the pointer's farther crossing with that circle."""
+        return self.offset(outward_mm).points(angle_deg)
 
 
 @dataclass(frozen=True, slots=True)
@@ -183,6 +210,22 @@ class StraightLine:
         """Return 1 over the cosine of the mark's lean, so that all of a rank end on one parallel."""
         (x, y), (nx, ny) = self.directions(angle_deg), self.away(angle_deg)
         return np.asarray(1.0 / (x * nx + y * ny))
+
+    def offset(self, outward_mm: float) -> StraightLine:
+        """Return the parallel, away from the pivot by ``outward_mm``."""
+        ux, uy = self._unit()
+        dx, dy = -uy * outward_mm, ux * outward_mm
+        return replace(
+            self,
+            start=(self.start[0] + dx, self.start[1] + dy),
+            end=(self.end[0] + dx, self.end[1] + dy),
+        )
+
+    def beside(self, angle_deg: Array, outward_mm: float) -> tuple[Array, Array]:
+        """Return x and y of where marks, along the pointer or square to the line, cross the parallel."""
+        (x, y), (dx, dy) = self.points(angle_deg), self.directions(angle_deg)
+        reach = outward_mm * self.stretch(angle_deg)
+        return x + dx * reach, y + dy * reach
 
 
 def _ray(angle_deg: Array) -> tuple[Array, Array]:

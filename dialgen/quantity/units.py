@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 
 PREFIXES = {
@@ -12,6 +13,10 @@ PREFIXES = {
 
 PREFIXED_UNITS = ("VA", "var", "Hz", "A", "V", "W", "Ω", "F", "S")
 """The face units before which a prefix is read; every other unit text is taken whole."""
+
+_LONG, _SHORTEST = 1e4, 0.01
+_POWER_OF = {"": 0} | {prefix: round(math.log10(factor)) for prefix, factor in PREFIXES.items()}
+_FOLDED = {-9: "n", -6: "µ", -3: "m", 0: "", 3: "k", 6: "M", 9: "G"}
 
 _SAME = str.maketrans({"\u2212": "-", "\u03bc": "µ", "\u2126": "Ω", "\u00a0": " ", "\u202f": " "})
 _SIGNS = {"ohm": "Ω", "degC": "°C", "degF": "°F", "℃": "°C", "℉": "°F"}
@@ -72,3 +77,23 @@ def shown_unit(written: str) -> str:
     """
     prefix, unit = prefix_and_unit(written)
     return prefix.replace("u", "µ") + unit
+
+
+def folded_unit(written: str, largest: float) -> tuple[float, str]:
+    """Return what values are multiplied by, and the unit as printed, so that numerals stay short.
+
+    Only where the largest value has five digits or more, or is below a hundredth, and the unit takes
+    an SI prefix; else the factor is 1.
+
+    >>> folded_unit("Ω", 50_000.0), folded_unit("mA", 0.005), folded_unit("rpm", 30_000.0)
+    ((0.001, 'kΩ'), (1000.0, 'µA'), (1.0, 'rpm'))
+    """
+    prefix, unit = prefix_and_unit(written)
+    if unit not in PREFIXED_UNITS or _SHORTEST <= largest < _LONG or not largest:
+        return 1.0, shown_unit(written)
+    # Whole powers, so that factors come out exact.
+    own = _POWER_OF[prefix]
+    power = 3 * ((math.floor(math.log10(largest) + 1e-9) + own) // 3)
+    power = min(max(power, min(_FOLDED)), max(_FOLDED))
+    shift = own - power
+    return (10.0**shift if shift >= 0 else 1 / 10.0**-shift), _FOLDED[power] + unit

@@ -88,6 +88,18 @@ def flattened(path: Iterable[PathStep], sagitta: float) -> list[list[Point]]:
         path: a glyph's outline; an open contour counts as closed, as it does when filled.
         sagitta: the greatest distance of a chord from its curve, in the path's own unit.
     """
+    contours = chorded(path, sagitta)
+    for contour in contours:
+        if is_closed(contour):
+            contour.pop()
+    return [contour for contour in contours if len(contour) > 1]
+
+
+def chorded(path: Iterable[PathStep], sagitta: float) -> list[list[Point]]:
+    """Return the contours of ``path`` as they run, as points no further than ``sagitta`` from it.
+
+    One that closes ends on the point where it starts; a lone move is nothing.
+    """
     contours: list[list[Point]] = []
     for code, values in cubic(path):
         if code == "M":
@@ -96,10 +108,14 @@ def flattened(path: Iterable[PathStep], sagitta: float) -> list[list[Point]]:
             contours[-1].append((values[0], values[1]))
         elif code == "C":
             contours[-1].extend(_chords(contours[-1][-1], values, sagitta))
-    for contour in contours:
-        if len(contour) > 1 and math.dist(contour[0], contour[-1]) < 1e-9:
-            contour.pop()
+        elif not is_closed(contours[-1]):
+            contours[-1].append(contours[-1][0])
     return [contour for contour in contours if len(contour) > 1]
+
+
+def is_closed(contour: list[Point]) -> bool:
+    """Return whether a contour ends on the point where it starts."""
+    return len(contour) > 1 and math.dist(contour[0], contour[-1]) < 1e-9
 
 
 def _outline(outline: Outline) -> Iterator[PathStep]:

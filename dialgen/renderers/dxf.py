@@ -16,11 +16,11 @@ from ezdxf.colors import rgb2int
 from ezdxf.document import Drawing as Document
 from ezdxf.filemanagement import new
 from ezdxf.layouts.base import BaseLayout
-from ezdxf.lldxf.const import VALID_DXF_LINEWEIGHTS
+from ezdxf.lldxf.const import LINEWEIGHT_BYBLOCK, VALID_DXF_LINEWEIGHTS
 
 from dialgen.drawing import Arc, Circle, Drawing, Letters, Line, Outline, Primitive, Purpose, Style
 from dialgen.renderers import Options
-from dialgen.renderers.curves import flattened
+from dialgen.renderers.curves import chorded, flattened, is_closed
 from dialgen.renderers.runs import inked_glyphs, layer_names, rgb
 
 SAGITTA_MM = 0.002
@@ -36,8 +36,8 @@ def render(drawing: Drawing, options: Options) -> bytes:
     """Return ``drawing`` as a DXF file of release R2010 (AC1024).
 
     Lines, arcs and circles stay what they are; an outline is one closed polyline with bulges; a
-    letter is a block of closed polylines, inserted wherever it stands.  Areas are given by their
-    edge, not filled: a cutter follows edges.
+    letter is a block of closed polylines, or of one polyline for each single stroke, inserted
+    wherever it stands.  Areas are given by their edge, not filled: a cutter follows edges.
     """
     with _fixed_metadata():
         document = new("R2010", units=units.MM)
@@ -100,8 +100,15 @@ def _define_glyphs(document: Document, drawing: Drawing) -> dict[str, str]:
     blocks: dict[str, str] = {}
     for block_name, glyph in inked_glyphs(drawing).items():
         block = document.blocks.new(block_name)
-        for contour in flattened(glyph.path, SAGITTA_MM / largest_mm[glyph.name]):
-            block.add_lwpolyline(contour, "xy", close=True, dxfattribs={"color": _BY_BLOCK})
+        sagitta = SAGITTA_MM / largest_mm[glyph.name]
+        if glyph.stroked:
+            look = {"color": _BY_BLOCK, "lineweight": LINEWEIGHT_BYBLOCK}
+            for stroke in chorded(glyph.path, sagitta):
+                closed = is_closed(stroke)
+                block.add_lwpolyline(stroke[:-1] if closed else stroke, "xy", close=closed, dxfattribs=look)
+        else:
+            for contour in flattened(glyph.path, sagitta):
+                block.add_lwpolyline(contour, "xy", close=True, dxfattribs={"color": _BY_BLOCK})
         blocks[glyph.name] = block_name
     return blocks
 

@@ -18,13 +18,11 @@ from dialgen.renderers.curves import cubic, steps
 from dialgen.renderers.runs import Lines, Run, fill_of, inked_glyphs, rgb, runs, stroke_of
 
 POINTS_PER_MM = 72 / 25.4
+_MITRE_JOIN, _ROUND_JOIN = 0, 1
 
 
 def render(drawing: Drawing, options: Options) -> bytes:
-    """Return ``drawing`` as a PDF of one page.
-
-    Letters are filled outlines; their stroke is not looked at.
-    """
+    """Return ``drawing`` as a PDF of one page."""
     scale = POINTS_PER_MM
     canvas = Canvas(
         io.BytesIO(),
@@ -66,9 +64,13 @@ def _draw(canvas: Canvas, run: Run, forms: Mapping[str, str]) -> None:
             path = _path(steps(run))
             canvas.drawPath(path, stroke=bool(stroke), fill=bool(fill), fillMode=FILL_NON_ZERO)
         case Letters():
+            if stroke:
+                canvas.setLineJoin(_ROUND_JOIN)
             for placed in run.glyphs:
                 if placed.glyph.path:
-                    _place(canvas, placed, forms[placed.glyph.name])
+                    _place(canvas, placed, forms[placed.glyph.name], run.style.width_mm if stroke else 0.0)
+            if stroke:
+                canvas.setLineJoin(_MITRE_JOIN)
         case _:
             assert_never(run)
 
@@ -99,19 +101,24 @@ class _Form(PDFObject):  # type: ignore[misc]  # reportlab has no types
 @lru_cache(maxsize=4096)
 def _glyph_form(glyph: Glyph) -> bytes:
     """Return a letter's form; it belongs to the font, and every face that uses it shares it."""
-    # Curves stay inside the box of their control points, so nothing is cut off.
+    # Curves stay inside the box of their control points, and strokes of any sense within half an em
+    # of them, so nothing is cut off.
+    clear = 0.5 if glyph.stroked else 0.01
     xs = [x for _, values in glyph.path for x in values[::2]]
     ys = [y for _, values in glyph.path for y in values[1::2]]
-    box = f"{min(xs) - 0.01:.4f} {min(ys) - 0.01:.4f} {max(xs) + 0.01:.4f} {max(ys) + 0.01:.4f}"
-    stream = f"{_path(cubic(glyph.path)).getCode()} f"
+    box = f"{min(xs) - clear:.4f} {min(ys) - clear:.4f} {max(xs) + clear:.4f} {max(ys) + clear:.4f}"
+    stream = f"{_path(cubic(glyph.path)).getCode()} {'S' if glyph.stroked else 'f'}"
     head = f"<< /Type /XObject /Subtype /Form /BBox [ {box} ] /Resources << >> /Length {len(stream)} >>"
     return f"{head}\nstream\n{stream}\nendstream".encode("ascii")
 
 
-def _place(canvas: Canvas, placed: Placed, form: str) -> None:
+def _place(canvas: Canvas, placed: Placed, form: str, width_mm: float) -> None:
     turn = math.radians(placed.angle_deg)
     along, across = placed.size_mm * math.cos(turn), placed.size_mm * math.sin(turn)
     canvas.saveState()
     canvas.transform(along, -across, across, along, placed.x, placed.y)
+    if width_mm:
+        # In ems, as everything under the matrix is.
+        canvas.setLineWidth(width_mm / placed.size_mm)
     canvas.doForm(form)
     canvas.restoreState()

@@ -14,7 +14,7 @@ from dialgen.drawing import Arc, Cap, Circle, Drawing, Letters, Outline, PathSte
 from dialgen.errors import InputError, MissingExtra
 from dialgen.renderers import Options
 from dialgen.renderers.curves import cubic, placed_steps, steps
-from dialgen.renderers.runs import Lines, Run, fill_of, rgb, runs, stroke_of
+from dialgen.renderers.runs import Lines, Run, fill_of, is_stroked, rgb, runs, stroke_of
 
 if TYPE_CHECKING:
     from cairo import Context
@@ -31,7 +31,7 @@ def render(drawing: Drawing, options: Options) -> bytes:
     """Return ``drawing`` as a PNG on white, ``resolution_dpi`` to the inch.
 
     The page's upper left corner is the picture's.  A page that is no whole number of pixels is
-    given the next larger picture; it is never stretched.  Letters are filled outlines.
+    given the next larger picture; it is never stretched.
 
     Raises:
         InputError: when the resolution is not above 0, or the picture would be absurdly large.
@@ -100,6 +100,8 @@ def _draw(cairo: ModuleType, context: Context[Any], run: Run) -> None:
         context.set_source_rgb(*(part / 255 for part in rgb(stroke)))
         context.set_line_width(run.style.width_mm)
         context.set_line_cap(cairo.LINE_CAP_ROUND if run.style.cap is Cap.ROUND else cairo.LINE_CAP_BUTT)
+        lettered = isinstance(run, Letters) and is_stroked(run)
+        context.set_line_join(cairo.LINE_JOIN_ROUND if lettered else cairo.LINE_JOIN_MITER)
         context.stroke_preserve()
     context.new_path()
 

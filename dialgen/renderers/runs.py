@@ -31,13 +31,20 @@ def runs(items: Iterable[Primitive]) -> Iterator[Run]:
 
 
 def stroke_of(run: Run) -> str | None:
-    """Return the colour the run is stroked in; without a width, and on letters, there is no stroke."""
-    return None if isinstance(run, Letters) or run.style.width_mm <= 0 else run.style.stroke
+    """Return the colour the run is stroked in; without a width, and on outlined letters, there is none."""
+    drawn = run.style.width_mm > 0 and (not isinstance(run, Letters) or is_stroked(run))
+    return run.style.stroke if drawn else None
 
 
 def fill_of(run: Run) -> str | None:
-    """Return the colour the run is filled with; lines and arcs enclose nothing."""
-    return None if isinstance(run, Lines | Arc) else run.style.fill
+    """Return the colour the run is filled with; lines, arcs and stroked letters enclose nothing."""
+    enclosed = not isinstance(run, Lines | Arc) and not (isinstance(run, Letters) and is_stroked(run))
+    return run.style.fill if enclosed else None
+
+
+def is_stroked(letters: Letters) -> bool:
+    """Return whether letters are single strokes, which one glyph of a string tells for all."""
+    return bool(letters.glyphs) and letters.glyphs[0].glyph.stroked
 
 
 def rgb(colour: str) -> tuple[int, int, int]:

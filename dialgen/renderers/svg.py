@@ -30,8 +30,6 @@ _NOT_XML = re.compile("[^\t\n\r -\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
 def render(drawing: Drawing, options: Options) -> bytes:
     """Return ``drawing`` as an SVG file in UTF-8.
 
-    Letters are filled outlines; their stroke is not looked at.
-
     Args:
         drawing: what to write.
         options: ``inline_glyphs`` writes every letter in place instead of by reference.
@@ -105,8 +103,14 @@ class _Word:
         self._xml = ElementTree.Element(
             "g", {"aria-label": _xml_text(letters.text), "fill": fill, "role": "img"}
         )
+        stroke = stroke_of(letters)
+        if stroke:
+            self._xml.attrib |= {"stroke": stroke, "stroke-linejoin": "round"}
+            self._xml.attrib |= {"stroke-linecap": "round"} if letters.style.cap is Cap.ROUND else {}
         inked = [placed for placed in letters.glyphs if placed.glyph.path]
         if not ids:
+            if stroke:
+                self._xml.set("stroke-width", number(letters.style.width_mm))
             for placed in inked:
                 ElementTree.SubElement(self._xml, "path", {"d": _data(placed_steps(placed))})
             return
@@ -115,6 +119,9 @@ class _Word:
         for group in sets:
             home = self._xml if len(sets) == 1 else ElementTree.SubElement(self._xml, "g")
             home.set("transform", _matrix(group[0]))
+            if stroke:
+                # In ems, as everything under the matrix is.
+                home.set("stroke-width", number(letters.style.width_mm / group[0].size_mm))
             _use(home, group, ids)
 
     def get_xml(self) -> ElementTree.Element:

@@ -19,7 +19,7 @@ def draw(face: dict, suffix: str) -> bytes:
     from matplotlib.collections import LineCollection
     from matplotlib.figure import Figure
     from matplotlib.font_manager import FontProperties
-    from matplotlib.patches import Arc, Circle, FancyBboxPatch, PathPatch
+    from matplotlib.patches import Arc, Circle, FancyBboxPatch, PathPatch, Polygon
     from matplotlib.path import Path
     from matplotlib.textpath import TextPath
     from matplotlib.transforms import Affine2D
@@ -63,6 +63,15 @@ def draw(face: dict, suffix: str) -> bytes:
                 linewidth=0.1 * points,
             )
         )
+    for shape in face["shapes"]:
+        axes.add_patch(
+            Polygon(
+                shape["corners"],
+                facecolor=shape["fill"] or "none",
+                edgecolor=shape["stroke"] or "none",
+                linewidth=shape["width"] * points,
+            )
+        )
     font = FontProperties(family="DejaVu Sans")
     outlines = []
     for label in face["labels"]:
@@ -89,6 +98,19 @@ def draw(face: dict, suffix: str) -> bytes:
     return out.getvalue()
 
 
+def corners(outline: object) -> list[list[float]]:
+    """Return an outline's corners, with points every three degrees along its arcs."""
+    found = []
+    for here, _, arc in outline.edges():
+        found.append([here.x, here.y])
+        if arc is not None:
+            steps = max(1, round((arc.end_deg - arc.start_deg) / 3))
+            spread = [arc.start_deg + (arc.end_deg - arc.start_deg) * i / steps for i in range(1, steps)]
+            between = [list(arc.point(angle)) for angle in spread]
+            found += between if here.turn_deg > 0 else between[::-1]
+    return found
+
+
 def describe(drawing: object) -> dict:
     """Return a drawing of ours as the plain numbers that `draw` takes."""
     from dialgen.drawing import Arc, Circle, Letters, Line, Outline
@@ -99,6 +121,7 @@ def describe(drawing: object) -> dict:
         "arcs": [],
         "circles": [],
         "boxes": [],
+        "shapes": [],
         "labels": [],
     }
     groups: dict = {}
@@ -120,6 +143,15 @@ def describe(drawing: object) -> dict:
                     )
                 case Circle():
                     face["circles"].append([*item.centre, item.radius_mm])
+                case Outline() if item.style.fill:
+                    face["shapes"].append(
+                        {
+                            "corners": corners(item),
+                            "fill": item.style.fill,
+                            "stroke": item.style.stroke,
+                            "width": item.style.width_mm,
+                        }
+                    )
                 case Outline():
                     xs, ys = [v.x for v in item.vertices], [v.y for v in item.vertices]
                     face["boxes"].append([min(xs), min(ys), max(xs) - min(xs), max(ys) - min(ys)])

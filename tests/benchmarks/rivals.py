@@ -1,7 +1,7 @@
 """How fast dialgen draws, beside matplotlib in the same run: ``python tests/benchmarks/rivals.py``.
 
 Warm: load a dial file that has just changed, and draw it, against matplotlib drawing the same face
-from finished marks.  Two faces: a full one (121 marks, 25 numerals, ten lines of text on a round
+from finished marks.  Three faces: a full one (121 marks, 25 numerals, ten lines of text on a round
 plate) and a plain panel meter whose file is long (eleven readings) and whose face is short (41
 marks, five numerals).  Cold: a whole process each, the panel meter.  Chain: values through the
 longest chain against one square root of the same array.  Contenders take turns, so that a busy
@@ -85,6 +85,59 @@ diameter = 110
 pivot = [55, 55]
 hole = [{{ at = [-32, -34], diameter = 3.2 }}, {{ at = [32, -34], diameter = 3.2 }}]
 """ + "".join(f'[[text]]\nsay = "line {i} of text"\nat = [0, {20 - 4 * i}]\n' for i in range(10))
+
+
+SCALES = """
+dialgen = 1
+[dial]
+title = "BENCH {turn}"
+[movement]
+current = "100 uA"
+resistance = "850 ohm"
+rest = -45
+full = 45
+[[scale]]
+unit = "V"
+from = 0
+to = 10
+circuit = {{ kind = "multiplier", range = "10 V" }}
+also = [{{ times = 5 }}]
+radius = 72
+[[scale]]
+unit = "dB"
+from = -20
+to = 2
+law = {{ kind = "decibel", reference = "7.746 V" }}
+circuit = {{ kind = "multiplier", range = "10 V" }}
+radius = 58
+ink = "red"
+[[scale]]
+unit = "mA"
+from = 0
+to = 30
+circuit = {{ kind = "shunt", range = "30 mA" }}
+radius = 44
+[[zone]]
+from = 6
+to = 8
+colour = "green"
+[[zone]]
+from = 8
+to = 10
+colour = "amber"
+[[limit]]
+at = 9
+[symbols]
+show = ["auto", "horizontal", "attention"]
+[plate]
+size = [132, 100]
+pivot = [66, 14]
+"""
+
+
+def scales_text(turn: int) -> str:
+    """Return the dial file of three scales with zones and symbols, different at every turn."""
+    return SCALES.format(turn=turn)
 
 
 def full_text(turn: int) -> str:
@@ -189,6 +242,7 @@ def main() -> None:
         folder = Path(name)
         warm(folder, "full face", full_text)
         warm(folder, "panel meter", dial_text)
+        warm(folder, "three scales", scales_text)
         cold(folder)
         chain(folder)
 

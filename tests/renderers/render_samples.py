@@ -57,6 +57,36 @@ HOOK = Glyph(
 )
 """Both kinds of curve, two contours, the second left open."""
 
+PEN = Style(stroke="#112233", width_mm=0.31, cap=Cap.ROUND)
+
+STAFF = Glyph(
+    "staff",
+    (
+        ("M", (0.1, 0.1)),
+        ("L", (0.1, 0.6)),
+        ("L", (0.4, 0.1)),
+        ("M", (0.5, 0.1)),
+        ("C", (0.9, 0.1, 0.9, 0.6, 0.5, 0.6)),
+    ),
+    (0.05, 0.05, 0.85, 0.65),
+    stroked=True,
+)
+"""Two single strokes: one with a sharp corner, one bent."""
+
+RING = Glyph(
+    "ring",
+    (
+        ("M", (0.3, 0.6)),
+        ("Q", (0.6, 0.6, 0.6, 0.35)),
+        ("Q", (0.6, 0.1, 0.3, 0.1)),
+        ("Q", (0.0, 0.1, 0.0, 0.35)),
+        ("Q", (0.0, 0.6, 0.3, 0.6)),
+    ),
+    (-0.05, 0.05, 0.65, 0.65),
+    stroked=True,
+)
+"""A single stroke that comes back to where it starts."""
+
 SPACE = Glyph("space", (), (0.0, 0.0, 0.0, 0.0))
 """A glyph without ink."""
 

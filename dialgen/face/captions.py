@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import math
 from dataclasses import dataclass
 
 from dialgen.dialfile.models import Scale
@@ -41,22 +40,21 @@ class Caption:
         return sign + whole + ("," if point and self.decimal is Decimal.COMMA else point) + rest
 
 
-def captions(scale: Scale, look: Look, middle: float) -> tuple[Caption, ...]:
+def captions(scale: Scale, look: Look, largest: float) -> tuple[Caption, ...]:
     """Return how the scale's own numerals are written, and then those of each further row.
 
     Args:
         scale: the scale.
         look: how numbers are written.
-        middle: a finite value from the middle of the scale, which says how large its values are.
+        largest: how large the values of the scale are.
     """
     rows = [(1.0, scale.unit), *((row.times, row.unit or scale.unit) for row in scale.also)]
-    return tuple(_caption(scale, look, times, unit, middle) for times, unit in rows)
+    return tuple(_caption(scale, look, times, unit, largest) for times, unit in rows)
 
 
-def _caption(scale: Scale, look: Look, times: float, unit: str, middle: float) -> Caption:
+def _caption(scale: Scale, look: Look, times: float, unit: str, largest: float) -> Caption:
     folded, printed = 1.0, shown_unit(unit)
     if look.fold:
-        largest = abs(middle) if math.isinf(scale.end) else max(abs(scale.start), abs(scale.end))
         folded, printed = folded_unit(unit, largest * times)
     return Caption(
         times=times * folded,

@@ -13,7 +13,6 @@ from itertools import pairwise
 from typing import assert_never
 
 import numpy as np
-from numpy.typing import NDArray
 
 from dialgen.drawing import (
     Arc,
@@ -35,7 +34,7 @@ Box = tuple[float, float, float, float]
 """Left, bottom, right and top in millimetres."""
 
 _CHORD_MM = 1.5
-_BROAD_MM = 1.0
+_BROAD_MM, _MOST_BANDS = 1.0, 64
 _CREEP_MM = 1e-9
 _LEAST_CHORD_DEG, _MOST_CHORD_DEG = 0.5, 30.0
 _MITRE = 2.0
@@ -65,7 +64,16 @@ class Cover:
         left, bottom, right, top = self.boxes.T
         over = (left < box[2]) & (right > box[0]) & (bottom < box[3]) & (top > box[1])
         middle = (box[0] + box[2]) / 2, (box[1] + box[3]) / 2
-        return bool(over.any() or _cross(self.strokes, box).any() or _lies_in(middle, self.edges))
+        enters, leaves = _passage(self.strokes, box)
+        return bool(over.any() or (enters < leaves).any() or _lies_in(middle, self.edges))
+
+    def strokes_within(self, box: Box) -> Array:
+        """Return the parts of the strokes within a box."""
+        enters, leaves = _passage(self.strokes, box)
+        met = enters <= leaves
+        x1, y1, x2, y2, half = self.strokes[met].T
+        cuts = [(x1 + t * (x2 - x1), y1 + t * (y2 - y1)) for t in (enters[met], leaves[met])]
+        return np.column_stack([*cuts[0], *cuts[1], half])
 
 
 def cover(layers: Iterable[Layer], plate: Outliner, more: Iterable[Box] = ()) -> Cover:
@@ -101,21 +109,23 @@ def letters_box(letters: Letters) -> Box | None:
     return min(lefts), min(bottoms), max(rights), max(tops)
 
 
-def _cross(strokes: Array, box: Box) -> NDArray[np.bool_]:
-    """Return whether each stroke runs through a box (Liang and Barsky), its ends and sides square."""
+def _passage(strokes: Array, box: Box) -> tuple[Array, Array]:
+    """Return where each stroke enters a box and where it leaves it, as shares of its length.
+
+    Liang and Barsky's way, with the box grown by half the stroke's width: ends and sides count as
+    square.  A stroke that leaves before it enters does not meet the box.
+    """
     x1, y1, x2, y2, half = strokes.T
     enters, leaves = np.zeros(len(strokes)), np.ones(len(strokes))
-    for start, end, low, high in (
-        (x1, x2, box[0] - half, box[2] + half),
-        (y1, y2, box[1] - half, box[3] + half),
-    ):
+    sides = ((x1, x2, box[0] - half, box[2] + half), (y1, y2, box[1] - half, box[3] + half))
+    for start, end, low, high in sides:
         # What runs along an axis all but exactly is as if it crept.
         way = end - start
         way = np.where(np.abs(way) < _CREEP_MM, _CREEP_MM, way)
         first, second = (low - start) / way, (high - start) / way
         enters = np.maximum(enters, np.minimum(first, second))
         leaves = np.minimum(leaves, np.maximum(first, second))
-    return np.asarray(enters < leaves)
+    return enters, leaves
 
 
 def _lies_in(place: Point, edges: Array) -> bool:
@@ -194,7 +204,7 @@ def _bands(width_mm: float) -> list[tuple[float, float]]:
 
     Each is how far it runs from the middle, and half its width.
     """
-    count = max(1, math.ceil(width_mm / _BROAD_MM))
+    count = min(max(1, math.ceil(width_mm / _BROAD_MM)), _MOST_BANDS)
     half_mm = width_mm / count / 2
     return [((2 * i + 1 - count) * half_mm, half_mm) for i in range(count)]
 

@@ -52,7 +52,7 @@ def cheapest_numerals(ruler: Ruler, forced: tuple[float, ...], wanted_mm: float)
     Where no path of legal gaps leaves room for all its numerals, as over many decades on a short
     logarithmic scale, any gap between round numerals is let in, at a price.
     """
-    values = np.array(sorted({*round_values(ruler), *forced}))
+    values = np.array(sorted({*round_values(ruler, wanted_mm), *forced}))
     nodes = _nodes(ruler, values, forced, wanted_mm)
     edges = [*_legal_edges(nodes), *_end_edges(nodes)]
     cost, path = _cheapest_path(nodes, edges)
@@ -61,13 +61,17 @@ def cheapest_numerals(ruler: Ruler, forced: tuple[float, ...], wanted_mm: float)
     return tuple(values[path].tolist()) if cost < math.inf else forced
 
 
-def round_values(ruler: Ruler) -> list[float]:
-    """Return round values inside the scale, as fine as a numeral's room allows where they lie."""
+def round_values(ruler: Ruler, wanted_mm: float = 0.0) -> list[float]:
+    """Return round values inside the scale, as fine as a numeral's room allows where they lie.
+
+    On a scale far longer than its numerals ask for, no finer than half the distance wanted.
+    """
+    room_mm = max(ruler.digit_mm + ruler.clear_mm, wanted_mm / 2)
     finite = ruler.along[np.isfinite(ruler.along)]
     cell_mm = ruler.length_mm / (len(ruler.along) - 1)
     found: set[float] = set()
     # Five units must take at least a numeral's room, or no legal gap ends on such a value.
-    units = np.diff(finite) / cell_mm * (ruler.digit_mm + ruler.clear_mm) / 5
+    units = np.diff(finite) / cell_mm * room_mm / 5
     powers = np.ceil(np.log10(units) - 1e-9).astype(int).tolist()
     for low, high, power in zip(finite.tolist(), finite[1:].tolist(), powers, strict=False):
         unit = decimal_value(1, power)

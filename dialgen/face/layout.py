@@ -80,9 +80,9 @@ class _Board:
             units = tuple(lone_unit(self.room, scale) for _, scale in free)
         else:
             units = several_units(self.room, [scale for _, scale in free], self.scales)
-        for slot in self.placed:
-            if slot[0] != TEXT and slot[0] != SYMBOLS:
-                self.stack = self.stack.joined(self.placed[slot].box)
+        for (name, _), given in self.placed.items():
+            if name not in (TEXT, SYMBOLS):
+                self.stack = self.stack.joined(given.box)
         for (slot, _), unit in zip(free, units, strict=True):
             self._put(slot, unit)
         for n, scale in enumerate(self.scales, 1):
@@ -93,17 +93,14 @@ class _Board:
     def place_legends(self) -> None:
         """Place title, texts, symbols and maker's line, in this order."""
         page, file = self.page, self.page.file
-        for name, said, make in (
-            (TITLE, file.dial.title, legends.title),
-            (TEXT, file.text, None),
-            (SYMBOLS, signs(file), legends.symbols),
-            (MAKER, file.dial.maker, legends.maker),
-        ):
-            if make is None:
-                for i, text in enumerate(file.text):
-                    self._settle((TEXT, i), legends.text(page, self.stack, text))
-            elif said:
-                self._settle((name, 0), make(page, self.stack))
+        if file.dial.title:
+            self._settle((TITLE, 0), legends.title(page, self.stack))
+        for i, text in enumerate(file.text):
+            self._settle((TEXT, i), legends.text(page, self.stack, text))
+        if signs(file):
+            self._settle((SYMBOLS, 0), legends.symbols(page, self.stack))
+        if file.dial.maker:
+            self._settle((MAKER, 0), legends.maker(page, self.stack))
 
     def _settle(self, slot: Slot, thing: Thing) -> None:
         if slot not in self.placed:

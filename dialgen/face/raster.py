@@ -102,7 +102,7 @@ def rasterised(fields: Sequence[Field], cover: Cover, margin_mm: float) -> Raste
         math.ceil(height / cell_mm) + 2,
         math.ceil(width / cell_mm) + 2,
     )
-    taken = grid.boxed(cover.boxes, cover.strokes) | grid.filled(cover.edges)
+    taken = grid.boxed(cover.boxes, cover.strokes_within(grid.box)) | grid.filled(cover.edges)
     for field in fields:
         taken |= ~grid.within(field, math.ceil(margin_mm / cell_mm - _HAIR))
     return Raster(grid.left, grid.bottom, cell_mm, taken, _summed(taken))
@@ -117,6 +117,12 @@ class _Grid:
     cell_mm: float
     rows: int
     columns: int
+
+    @property
+    def box(self) -> Box:
+        """Left, bottom, right and top of all cells."""
+        right, top = self.left + self.columns * self.cell_mm, self.bottom + self.rows * self.cell_mm
+        return self.left, self.bottom, right, top
 
     def boxed(self, boxes: Array, strokes: Array) -> NDArray[np.bool_]:
         """Return which cells boxes and strokes touch."""

@@ -122,7 +122,7 @@ def _rule_scale(scale: ScaleDial, file: DialFile, plate: Outliner, hand_for: Han
     check_meets(line, ends, [spec.start, spec.end], spec, key)
     look = look_of(file.look, spec.look)
     sizes = sizes_for(spec, look, abs(float(np.diff(line.along(ends))[0])))
-    rows, hand = captions(spec, look, _middle(scale, ends)), hand_for(look)
+    rows, hand = captions(spec, look, _largest(scale, ends)), hand_for(look)
     ruler = survey(scale, line, ends, look, sizes, rows, partial(numeral_width, hand=hand))
     asked = _asked(spec, key)
     bare = blank_from_zero(scale, file.movement)
@@ -143,15 +143,17 @@ def _further(rows: Sequence[Caption], value: float) -> tuple[str, ...]:
     return () if all(text == first for text in texts) else tuple(texts)
 
 
-def _middle(scale: ScaleDial, ends_deg: Array) -> float:
-    """Return the value at the middle of the pointer's way over the scale."""
+def _largest(scale: ScaleDial, ends_deg: Array) -> float:
+    """Return how large values get; of a scale to infinity, the one in the middle of the pointer's way."""
+    if math.isfinite(scale.spec.end):
+        return max(abs(scale.spec.start), abs(scale.spec.end))
     return float(scale.chain.value(ends_deg.mean(keepdims=True))[0])
 
 
 def _own_words(spec: Scale) -> dict[float, str]:
-    """Return the labels that the file words itself; an empty one leaves a mark without a numeral."""
+    """Return the labels that the file words itself; a blank one leaves a mark without a numeral."""
     entries = spec.numbered if isinstance(spec.numbered, tuple) else ()
-    return {entry.at: entry.label for entry in entries if entry.label is not None}
+    return {entry.at: entry.label.strip() for entry in entries if entry.label is not None}
 
 
 def _asked(spec: Scale, key: Key) -> list[float] | None:

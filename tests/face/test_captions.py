@@ -22,9 +22,9 @@ def scale(**keys: object) -> Scale:
     return Scale.model_validate({"unit": "A", "from": 0, "to": 40, "radius": 44} | keys)
 
 
-def only(made: Scale, look: Look = Look(), middle: float = 20.0) -> Caption:  # noqa: B008  (frozen)
+def only(made: Scale, look: Look = Look(), largest: float = 40.0) -> Caption:  # noqa: B008  (frozen)
     """Return how the scale's own numerals are written."""
-    return captions(made, look, middle)[0]
+    return captions(made, look, largest)[0]
 
 
 def test_signs_always_gives_plus_to_what_is_above_zero_alone() -> None:
@@ -79,19 +79,19 @@ def test_a_numeral_says_its_value(value: float) -> None:
 )
 def test_prefix_is_folded_where_the_range_asks_for_it(unit: str, end: float, printed: str, last: str) -> None:
     """Five digits or hundredths fold an SI prefix into a unit that takes one, and no other."""
-    made = only(scale(unit=unit, to=end), middle=end / 2)
+    made = only(scale(unit=unit, to=end), largest=end)
     assert (made.unit, made.text(float(end))) == (printed, last)
 
 
 def test_folding_can_be_left() -> None:
     """``fold = false`` keeps the unit as the file has it."""
-    made = only(scale(unit="Ω", to=50_000), Look(fold=False, thousands=False))
+    made = only(scale(unit="Ω", to=50_000), Look(fold=False, thousands=False), largest=50_000.0)
     assert (made.unit, made.text(50_000.0)) == ("Ω", "50000")
 
 
 def test_a_scale_without_end_folds_by_its_middle() -> None:
-    """A scale to infinity has no largest value; its middle says how large its values are."""
-    made = only(scale(unit="Ω", to=math.inf), middle=15_000.0)
+    """A scale to infinity folds by the value it is given for it, and keeps its ∞."""
+    made = only(scale(unit="Ω", to=math.inf), largest=15_000.0)
     assert (made.unit, made.text(15_000.0), made.text(math.inf)) == ("kΩ", "15", "∞")
 
 
@@ -107,12 +107,12 @@ def test_folding_keeps_the_quantity(unit: str, largest: float) -> None:
 
 def test_further_rows_say_the_value_times_their_factor() -> None:
     """A row times 5 in mA stands for five times the value, folded and signed by itself."""
-    rows = captions(scale(also=[{"times": 5}, {"times": 0.1, "unit": "kV"}]), Look(), 20.0)
+    rows = captions(scale(also=[{"times": 5}, {"times": 0.1, "unit": "kV"}]), Look(), 40.0)
     assert [row.text(40.0) for row in rows] == ["40", "200", "4"]
     assert [row.unit for row in rows] == ["A", "A", "kV"]
 
 
 def test_tenths_come_out_exact() -> None:
     """3 times 0.1 is lettered 0.3."""
-    (_, row) = captions(scale(also=[{"times": 0.1}]), Look(), 20.0)
+    (_, row) = captions(scale(also=[{"times": 0.1}]), Look(), 40.0)
     assert row.text(3.0) == "0.3"

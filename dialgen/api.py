@@ -21,12 +21,12 @@ from dialgen.dialfile import Source
 from dialgen.drawing import Drawing, Purpose
 from dialgen.errors import DialFileError, Fault, Finding, InputError, OutputError, Remark
 from dialgen.face.compose import compose
+from dialgen.face.fitted.openings import check_openings
 from dialgen.face.laid import check_laid
-from dialgen.face.openings import check_openings
+from dialgen.face.lettered.signs import check_signs
 from dialgen.face.plate import outliner
 from dialgen.face.review import Finished, review
-from dialgen.face.ruling import RuledScale, rule
-from dialgen.face.signs import check_signs
+from dialgen.face.ruled.ruling import RuledScale, rule
 from dialgen.lettering import Hand, hand
 from dialgen.looks import Lettering, Look
 from dialgen.renderers import Options, render

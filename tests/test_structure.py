@@ -22,6 +22,17 @@ FLOORS = (
     ("cli",),
     ("__init__", "__main__"),
 )
+STATIONS = (
+    ("parts", "plate"),
+    ("ruled",),
+    ("inked",),
+    ("fitted",),
+    ("laid",),
+    ("lettered",),
+    ("compose",),
+    ("review",),
+)
+"""The floors within ``face``, in the order in which a plate is made."""
 FLOOR_OF = {room: floor for floor, rooms in enumerate(FLOORS) for room in rooms}
 
 
@@ -68,6 +79,17 @@ def test_imports_run_downwards_only(module: str, path: Path) -> None:
         # The package itself is known to the command line for its version.
         targets -= {"dialgen.__version__"}
     assert climbing(module, targets) == set()
+
+
+@pytest.mark.parametrize(
+    ("module", "path"), [(name, path) for name, path in modules() if name.startswith("dialgen.face.")]
+)
+def test_a_face_is_made_station_by_station(module: str, path: Path) -> None:
+    """Within ``face`` no module imports from a later station, nor from another of the same floor."""
+    station_of = {station: floor for floor, stations in enumerate(STATIONS) for station in stations}
+    here = module.split(".")[2]
+    inner = {target.split(".")[2] for target in imported(path) if target.startswith("dialgen.face.")}
+    assert {there for there in inner - {here} if station_of[there] >= station_of[here]} == set()
 
 
 def test_the_check_of_imports_can_fail() -> None:

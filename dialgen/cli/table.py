@@ -12,7 +12,7 @@ import click
 from dialgen.cli.report import say_lines, say_warnings
 
 if TYPE_CHECKING:
-    from dialgen.face.ruling import Mark, RuledScale, Spot
+    from dialgen.face.ruled.ruling import Mark, RuledScale, Spot
 
 _EPILOG = """\b
 Examples:
@@ -87,7 +87,7 @@ def _at(
         Refused: none can.
     """
     from dialgen.errors import NoSuchValue, Refused
-    from dialgen.face.ruling import spots
+    from dialgen.face.ruled.ruling import spots
 
     found: list[tuple[RuledScale, Sequence[Spot | Mark]]] = []
     refusals = []
@@ -129,7 +129,7 @@ def _number(value: float) -> float | str:
 
 
 def _scale_text(scale: RuledScale, marks: Sequence[Spot | Mark]) -> str:
-    from dialgen.face.worth import linear_errors
+    from dialgen.face.ruled.worth import linear_errors
     from dialgen.quantity import plain_number, shown_unit
 
     unit = shown_unit(scale.spec.unit)

@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Iterator
 
 import numpy as np
 
 from dialgen.circuit.terminals import Circuit, Coil
 from dialgen.dial.chain import quietly
-from dialgen.dial.wiring import Wiring, wire
+from dialgen.dial.wiring import Wiring, half_value, wire
 from dialgen.dialfile.models import Row, Scale
 from dialgen.errors import InputError, Key, Remark
 from dialgen.geometry.laws import Law
@@ -26,6 +27,9 @@ def row_remarks(scale: Scale, key: Key, own: Wiring, shared: Circuit | None, coi
         InputError: a row's circuit does not go with its law and range.
     """
     values = sample_places((scale.start, scale.end), SAMPLES)
+    if math.isinf(scale.end) and (half := half_value(scale, shared)):
+        # By the pointer's way, whatever the unit.
+        values = scale.start + half * (values - scale.start)
     drives = _drives(own, values)
     for i, row in enumerate(scale.also):
         if row.circuit is None or isinstance(scale.law, Observed):

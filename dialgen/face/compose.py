@@ -7,13 +7,13 @@ from collections.abc import Iterator, Sequence
 from dialgen.dial import Dial
 from dialgen.dialfile.looks import Dress, look_of
 from dialgen.drawing import Drawing, Layer, Purpose, Style
-from dialgen.face.fitting import guide_layer
+from dialgen.face.fitted.fitting import guide_layer
+from dialgen.face.fitted.openings import cut_layer
 from dialgen.face.laid import mirror, scale_layers
-from dialgen.face.layout import arrange
-from dialgen.face.openings import cut_layer
+from dialgen.face.lettered.layout import arrange
 from dialgen.face.parts import GROUND
 from dialgen.face.plate import Outliner, outliner
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.looks import Look
 
 _PAPER = "#ffffff"

@@ -7,16 +7,16 @@ from collections.abc import Iterator, Sequence
 from dialgen.dialfile.models import DialFile
 from dialgen.drawing import Layer, Outline, Primitive, Purpose
 from dialgen.errors import InputError
-from dialgen.face.dots import dot_items
-from dialgen.face.limits import limit_items
-from dialgen.face.lines import line_items
-from dialgen.face.marks import mark_items
-from dialgen.face.numerals import numerals
-from dialgen.face.openings import mirror_window
+from dialgen.face.fitted.openings import mirror_window
+from dialgen.face.inked.dots import dot_items
+from dialgen.face.inked.limits import limit_items
+from dialgen.face.inked.lines import line_items
+from dialgen.face.inked.marks import mark_items
+from dialgen.face.inked.numerals import numerals
+from dialgen.face.inked.zones import zone_items
 from dialgen.face.parts import Part, layer_name
 from dialgen.face.plate import Outliner
-from dialgen.face.ruling import RuledScale
-from dialgen.face.zones import zone_items
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.looks import LineForm
 
 

@@ -37,7 +37,7 @@ class LineForm(StrEnum):
 
 
 class MarkShape(StrEnum):
-    """The outline of a mark: of one width, or narrowing towards the pivot."""
+    """The outline of a mark: of one width, or narrowing towards the scale line."""
 
     BAR = "bar"
     TAPER = "taper"

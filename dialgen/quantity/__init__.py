@@ -25,6 +25,6 @@ from dialgen.quantity.units import folded_unit, shown_unit, split_unit
 
 __all__ = [
     "AMPERE", "ANY_CURRENT", "OHM", "OHM_ABOVE", "SIGNAL", "SIGNAL_ABOVE", "VOLT", "VOLT_ABOVE", "Amount",
-    "Measure", "bare_number", "folded_unit", "plain_number", "read_length", "read_number", "shown", "shown_unit",
-    "split_unit",
+    "Measure", "bare_number", "folded_unit", "plain_number", "read_length", "read_number", "shown",
+    "shown_unit", "split_unit",
 ]  # fmt: skip

@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, field
+from importlib.util import find_spec
+from pathlib import Path
 
 import dialfile_samples as samples
 
@@ -473,3 +475,331 @@ CSV = [
     ),
     Bad("value off the law", "", "value,old\n10,24\n20,1e16\n", "3:4", "old", "beyond what a face can show"),
 ]
+
+DRESSED = """\
+dialgen = 1
+[dial]
+title = "BATTERY"
+maker = "Alder Lane Works"
+tested = 2026-05-01
+[movement]
+current = "1 mA"
+resistance = "75 ohm"
+rest = -44
+full = 44
+[look]
+style = "bench"
+ink = "black"
+distance = "0.5 m"
+[[scale]]
+unit = "V"
+from = 0
+to = 10
+circuit = "multiplier"
+radius = 60
+class = 1.5
+fiducial = "limit"
+effective = [2, 10]
+also = [{ times = 5, unit = "V" }]
+sign = "always"
+look = { letter_scale = 1.1 }
+[plate]
+size = [120, 100]
+pivot = [60, 20]
+mirror = { width = 4 }
+[[plate.slot]]
+width = 3
+radius = 20
+from = -30
+to = 30
+[plate.window]
+at = [0, 33]
+size = [114, 84]
+[[zone]]
+from = 2
+to = 4
+colour = "green"
+[[limit]]
+at = 8
+[symbols]
+show = ["auto", "test 2 kV", "class"]
+"""
+"""A good dial file with every table that says how a face is dressed."""
+
+_ZONE = '[[zone]]\nfrom = 2\nto = 4\ncolour = "green"\n'
+_FONT = Path(find_spec("matplotlib").submodule_search_locations[0]) / "mpl-data/fonts/ttf/DejaVuSans.ttf"
+_DC = '"dc", '
+_FOLDER = {"f.ttf": "no font"}
+
+_FACE = (
+    ("style of no such name", 'style = "bench"', 'style = "bensh"', "12:1", "look.style",
+     '"bensh" is not known here; write "plain" or "bench"'),
+    ("several looks", "[look]", "[[look]]", "11:3", "look", "this is a table of keys, not [a table]"),
+    ("style a number", 'style = "bench"', "style = 3", "12:1", "look.style", "3 is not known here"),
+    ("look of a scale by a wrong name", "look = { letter_scale = 1.1 }", 'look = "hal"', "26:1",
+     "scale[1].look.style", '"hal" is not known here'),
+    ("look of a scale a number", "look = { letter_scale = 1.1 }", "look = 3", "26:1", "scale[1].look",
+     "this is a table of keys, not 3"),
+    ("key of a look misspelt", 'ink = "black"', "wieght_scale = 1.2", "13:1", "look.wieght_scale",
+     "did you mean weight_scale?"),
+    ("key of a look like no other", 'ink = "black"', "zzz = 1", "13:1", "look.zzz", "the keys are style"),
+    ("key of a look of a scale", "{ letter_scale = 1.1 }", "{ leter_scale = 1.1 }", "26:10",
+     "scale[1].look.leter_scale", "did you mean letter_scale?"),
+    ("colour a number", 'ink = "black"', "ink = 3", "13:1", "look.ink",
+     'a colour is text, not 3; write "red" or "#c8201e"'),
+    ("colour of no such name", 'ink = "black"', 'ink = "blak"', "13:1", "look.ink",
+     '"blak" is no colour; write #rrggbb or one of black'),
+    ("colour of three digits", 'ink = "black"', 'ground = "#fff"', "13:1", "look.ground",
+     '"#fff" is no colour'),
+    ("colour of letters", 'ink = "black"', 'accent = "#gg0000"', "13:1", "look.accent",
+     '"#gg0000" is no colour'),
+    ("distance too near", '"0.5 m"', '"20 mm"', "14:1", "look.distance",
+     'a reading distance of 20 mm is too near to read; write for example "0.7 m"'),
+    ("distance with comma", '"0.5 m"', '"0,7 m"', "14:1", "look.distance", 'write "0.7 m"'),
+    ("distance in yards", '"0.5 m"', '"1 yd"', "14:1", "look.distance", "is not a length"),
+    ("distance across the road", '"0.5 m"', '"20 m"', "14:1", "look.distance", "not from 0 to 2000 mm"),
+    ("scale line of three", 'ink = "black"', 'line = "triple"', "13:1", "look.line",
+     'write "single" or "double" or "none"'),
+    ("blocks in quotes", 'ink = "black"', 'blocks = "yes"', "13:1", "look.blocks",
+     'true or false, not "yes"; write it without quotes'),
+    ("shape of marks", 'ink = "black"', 'mark_shape = "wedge"', "13:1", "look.mark_shape",
+     'write "bar" or "taper"'),
+    ("ends of marks", 'ink = "black"', 'mark_ends = "pointed"', "13:1", "look.mark_ends",
+     'write "square" or "round"'),
+    ("outside the effective range", 'ink = "black"', 'outside = "dotted"', "13:1", "look.outside",
+     'write "plain" or "broken" or "none"'),
+    ("turn of numerals", 'ink = "black"', 'turn = "radial"', "13:1", "look.turn",
+     'write "upright" or "along" or "across"'),
+    ("lettering", 'ink = "black"', 'lettering = "engraved"', "13:1", "look.lettering",
+     'write "outline" or "single stroke"'),
+    ("decimal sign itself", 'ink = "black"', 'decimal = ","', "13:1", "look.decimal",
+     'write "point" or "comma"'),
+    ("thousands in quotes", 'ink = "black"', 'thousands = "no"', "13:1", "look.thousands", "true or false"),
+    ("fold a number", 'ink = "black"', "fold = 1", "13:1", "look.fold", "true or false, not 1"),
+    ("factor in per cent", 'ink = "black"', "letter_scale = 120", "13:1", "look.letter_scale",
+     "a factor of 120 is out of bounds; write a number from 0.2 to 5"),
+    ("factor in quotes", 'ink = "black"', 'weight_scale = "1.2"', "13:1", "look.weight_scale",
+     "without quotes"),
+    ("factor of nothing", 'ink = "black"', "length_scale = 0", "13:1", "look.length_scale", "out of bounds"),
+    ("numeral of nothing", 'ink = "black"', "numeral = 0", "13:1", "look.numeral", "write 0.01 mm or more"),
+    ("mark too long", 'ink = "black"', 'numbered = "3 m"', "13:1", "look.numbered", "not from 0 to 2000 mm"),
+    ("width in points", 'ink = "black"', 'line_width = "1 pt"', "13:1", "look.line_width",
+     '"1 pt" is not a length'),
+    ("font not there", 'ink = "black"', 'font = "none.ttf"', "13:1", "look.font", "none.ttf"),
+    ("font that is none", 'ink = "black"', 'font = "f.ttf"', "13:1", "look.font",
+     "is not a font; give a TrueType or OpenType file"),
+    ("font a number", 'ink = "black"', "font = 3", "13:1", "look.font", "this is text, not 3"),
+    ("font of a scale not there", "{ letter_scale = 1.1 }", '{ font = "none.ttf" }', "26:10",
+     "scale[1].look.font", "none.ttf"),
+    ("font in single strokes", 'ink = "black"', f'font = "{_FONT}"\nlettering = "single stroke"', "13:1",
+     "look.font", "outlines, not single strokes"),
+    # a scale's class, stretches and rows
+    ("class of nothing", "class = 1.5", "class = 0", "21:1", "scale[1].class",
+     "a class of 0 is out of bounds; write a number from 0.005 to 20"),
+    ("class too coarse", "class = 1.5", "class = 25", "21:1", "scale[1].class",
+     "a class of 25 is out of bounds"),
+    ("class in quotes", "class = 1.5", 'class = "1.5"', "21:1", "scale[1].class", "without quotes"),
+    ("fiducial of no such name", '"limit"', '"end"', "22:1", "scale[1].fiducial",
+     'write "limit" or "length" or "value"'),
+    ("fiducial without class", "class = 1.5\nfiducial", "fiducial", "21:1", "scale[1].fiducial",
+     "give class, or leave it out"),
+    ("effective off the scale", "[2, 10]", "[2, 12]", "23:1", "scale[1].effective",
+     "2 to 12 is no part of the scale, 0 to 10; give two values of it, the lower first"),
+    ("effective below the scale", "[2, 10]", "[-1, 10]", "23:1", "scale[1].effective",
+     "-1 to 10 is no part of the scale"),
+    ("effective reversed", "[2, 10]", "[10, 2]", "23:1", "scale[1].effective", "the lower first"),
+    ("effective of one value", "effective = [2, 10]", "effective = 2", "23:1", "scale[1].effective",
+     "write for example [10, 40]"),
+    ("effective in words", "[2, 10]", '[2, "end"]', "23:17", "scale[1].effective[2]", 'a number, not "end"'),
+    ("heavy off the scale", "effective = [2, 10]", "heavy = [5, 15]", "23:1", "scale[1].heavy",
+     "5 to 15 is no part of the scale"),
+    ("heavy of nothing", "effective = [2, 10]", "heavy = [5, 5]", "23:1", "scale[1].heavy",
+     "is no part of the scale"),
+    ("sign of no such name", '"always"', '"plus"', "25:1", "scale[1].sign", 'write "minus" or "always"'),
+    ("ink of a scale", 'sign = "always"', 'ink = "scarlet"', "25:1", "scale[1].ink",
+     '"scarlet" is no colour'),
+    ("unit at a word", 'sign = "always"', 'unit_at = "left"', "25:1", "scale[1].unit_at",
+     "write for example [0, 8]"),
+    ("row without its factor", "{ times = 5, unit", "{ unit", "24:9", "scale[1].also[1].times",
+     "missing; add times = 5"),
+    ("row times nothing", "times = 5", "times = 0", "24:11", "scale[1].also[1].times",
+     "a factor of 0 is not above zero"),
+    ("row times less than nothing", "times = 5", "times = -5", "24:11", "scale[1].also[1].times",
+     "not above zero"),
+    ("row times a word", "times = 5", 'times = "x5"', "24:11", "scale[1].also[1].times",
+     "a factor is a number"),
+    ("row times far too much", "times = 5", "times = 1e300", "24:11", "scale[1].also[1].times",
+     "beyond what a face can show"),
+    ("row that is no table", '[{ times = 5, unit = "V" }]', "[5]", "24:9", "scale[1].also[1]",
+     "this is a table of keys, not 5"),
+    ("row outside a list", '[{ times = 5, unit = "V" }]', "{ times = 5 }", "24:1", "scale[1].also",
+     "write [{ ... }]"),
+    ("too many rows", '[{ times = 5, unit = "V" }]',
+     f"[{', '.join(f'{{ times = {n} }}' for n in range(2, 9))}]", "24:1", "scale[1].also",
+     "7 of them; give at most 6"),
+    ("row on no side", 'unit = "V" }', 'numerals = "above" }', "24:22", "scale[1].also[1].numerals",
+     'write "outside" or "inside"'),
+    ("unit of a row a number", 'unit = "V" }', "unit = 5 }", "24:22", "scale[1].also[1].unit",
+     "this is text"),
+    ("unit of a row not to be lettered", 'unit = "V" }', 'unit = "☃" }', "24:22", "scale[1].also[1].unit",
+     "no font has the character"),
+    ("key of a row", 'unit = "V" }', "factor = 2 }", "24:22", "scale[1].also[1].factor",
+     "the keys are times, unit, circuit, numerals"),
+    ("circuit of a row", 'unit = "V" }', 'circuit = "multiplyer" }', "24:22", "scale[1].also[1].circuit.kind",
+     'did you mean "multiplier"?'),
+    ("circuit of a row of another kind", 'unit = "V" }', 'circuit = "shunt" }', "24:9",
+     "scale[1].also[1].unit", "the shunt takes a current in A"),
+    ("range of a row too small", 'unit = "V" }', 'circuit = { kind = "multiplier", range = "10 mV" } }',
+     "24:55", "scale[1].also[1].circuit.range", "take a larger range"),
+    # zones and limits
+    ("zone without a start", "[[zone]]\nfrom = 2\n", "[[zone]]\n", "39:3", "zone[1].from",
+     "missing; add from = 30"),
+    ("zone without an end", "to = 4\n", "", "39:3", "zone[1].to", "missing; add to = 40"),
+    ("zone without a colour", 'colour = "green"\n', "", "39:3", "zone[1].colour",
+     'missing; add colour = "green"'),
+    ("zone of no such colour", '"green"', '"gren"', "42:1", "zone[1].colour", '"gren" is no colour'),
+    ("zone in American", "colour =", "color =", "42:1", "zone[1].color", "did you mean colour?"),
+    ("zone reversed", "from = 2\nto = 4", "from = 4\nto = 2", "41:1", "zone[1].to",
+     "a zone from 4 to 2 covers nothing; give the lower value first"),
+    ("zone of nothing", "to = 4", "to = 2", "41:1", "zone[1].to", "covers nothing"),
+    ("zone begins off the scale", "from = 2\nto = 4", "from = -2\nto = 4", "40:1", "zone[1].from",
+     "-2 is outside the scale, 0 to 10; keep it within"),
+    ("zone ends off the scale", "to = 4", "to = 14", "41:1", "zone[1].to",
+     "14 is outside the scale, 0 to 10"),
+    ("zone to infinity", "to = 4", "to = inf", "41:1", "zone[1].to", "inf is outside the scale"),
+    ("zone of a scale that is not there", 'colour = "green"', 'colour = "green"\nscale = 2', "43:1",
+     "zone[1].scale", "there is no scale 2; the file has 1, counted from 1"),
+    ("zone of scale nought", 'colour = "green"', 'colour = "green"\nscale = 0', "43:1", "zone[1].scale",
+     "from 1 up, not 0; write scale = 1"),
+    ("zone of a scale by its unit", 'colour = "green"', 'colour = "green"\nscale = "V"', "43:1",
+     "zone[1].scale", 'not "V"'),
+    ("zone in no such place", 'colour = "green"', 'colour = "green"\nplace = "above"', "43:1",
+     "zone[1].place", 'write "line" or "inside" or "outside"'),
+    ("zone of no width", 'colour = "green"', 'colour = "green"\nwidth = 0', "43:1", "zone[1].width",
+     "write 0.01 mm or more"),
+    ("hatch a word", 'colour = "green"', 'colour = "green"\nhatch = "left"', "43:1", "zone[1].hatch",
+     "true or false"),
+    ("zone wider than the scale is far", 'colour = "green"', 'colour = "green"\nplace = "inside"\nwidth = 70',
+     "44:1", "zone[1].width", "the pointer meets nothing; keep nearer to the line"),
+    ("single zone", "[[zone]]", "[zone]", "39:2", "zone", "and this is a table; write [{ ... }]"),
+    ("too many zones", _ZONE, "[[zone]]\n" * 101, "39:3", "zone", "101 of them; give at most 100"),
+    ("limit without a value", "at = 8\n", "", "43:3", "limit[1].at", "missing; add at = 35"),
+    ("limit off the scale", "at = 8", "at = 80", "44:1", "limit[1].at",
+     "80 is outside the scale, 0 to 10; keep it within"),
+    ("limit of a scale that is not there", "at = 8", "at = 8\nscale = 3", "45:1", "limit[1].scale",
+     "there is no scale 3"),
+    ("limit of no such shape", "at = 8", 'at = 8\nshape = "arrow"', "45:1", "limit[1].shape",
+     'write "line" or "triangle"'),
+    ("limit of no such colour", "at = 8", 'at = 8\ncolour = "rde"', "45:1", "limit[1].colour",
+     '"rde" is no colour'),
+    ("limit a word", "at = 8", 'at = "8 V"', "44:1", "limit[1].at", 'a number, not "8 V"'),
+    ("limit to infinity", "at = 8", "at = inf", "44:1", "limit[1].at", "must be finite"),
+    # symbols
+    ("symbols not a list", 'show = ["auto", "test 2 kV", "class"]', 'show = "dc"', "46:1", "symbols.show",
+     '"dc" does not say what to show; write "auto" or ["dc", "vertical"]'),
+    ("too many symbols", '["auto", "test 2 kV", "class"]', f"[{_DC * 41}]", "46:1", "symbols.show",
+     "41 symbols; give at most 40"),
+    ("symbol a number", '"test 2 kV"', "3", "46:17", "symbols.show[2]",
+     'a symbol is text, not 3; write for example "dc"'),
+    ("symbol of no such name", '"test 2 kV"', '"moving cole"', "46:17", "symbols.show[2]", "moving coil"),
+    ("symbol like no other", '"test 2 kV"', '"zzz"', "46:17", "symbols.show[2]", 'no symbol "zzz"'),
+    ("star of no voltage", '"test 2 kV"', '"test"', "46:17", "symbols.show[2]", "kV"),
+    ("star of an odd voltage", '"test 2 kV"', '"test two kV"', "46:17", "symbols.show[2]", "kV"),
+    ("inclined by nothing", '"test 2 kV"', '"inclined"', "46:17", "symbols.show[2]", "inclined 60"),
+    ("inclined past upright", '"test 2 kV"', '"inclined 190"', "46:17", "symbols.show[2]",
+     'is not between 0 and 90 degrees; write for example "inclined 60"'),
+    ("class by its number", '"test 2 kV"', '"class 1.5"', "46:17", "symbols.show[2]",
+     'write "class" alone, and the number at the scale it holds for'),
+    ("star without a test", "tested = 2026-05-01\n", "", "45:17", "symbols.show[2]",
+     "a star claims that the insulation was tested, and no test is on file"),
+    ("class without a class", 'class = 1.5\nfiducial = "limit"\n', "", "44:30", "symbols.show[3]",
+     "no scale has a class to show"),
+    ("symbols at a word", "[symbols]", '[symbols]\nat = "right"', "46:1", "symbols.at",
+     "write for example [0, 8]"),
+    ("symbols of no height", "[symbols]", "[symbols]\nheight = 0", "46:1", "symbols.height",
+     "write 0.01 mm or more"),
+    ("double line without room", "radius = 60", 'radius = 1\nmarks = "inward"', "27:1", "scale[1].look",
+     "there is no room for a double line: ", 1),
+    ("numbered by a word", 'sign = "always"', 'numbered = "all"', "25:1", "scale[1].numbered",
+     '"all" does not say what to number; write "auto", { every = 10 } or [0, 10, 20]'),
+    ("numbered by a step misspelt", 'sign = "always"', "numbered = { evry = 2 }", "25:14",
+     "scale[1].numbered.evry", "did you mean every?"),
+    ("numbered too often", 'sign = "always"', "numbered = { every = 0.001 }", "25:14",
+     "scale[1].numbered.every", "a step of 0.001 gives over 3000 numerals; take a larger one"),
+    ("numbered by a step of less than nothing", 'sign = "always"', "numbered = { every = -2 }", "25:14",
+     "scale[1].numbered.every", "a step of -2 is not above zero"),
+    ("numbered in steps without end", 'unit = "V"\nfrom = 0\nto = 10\ncircuit = "multiplier"',
+     'unit = "kohm"\nfrom = 0\nto = inf\ncircuit = { kind = "series ohmmeter", half = "5 kohm" }\n'
+     "numbered = { every = 10 }",
+     "20:14", "scale[1].numbered.every", 'a step never reaches inf; write a list of values, or "auto"'),
+    ("label a number", 'sign = "always"', "numbered = [0, { at = 5, label = 5 }]", "25:26",
+     "scale[1].numbered[2].label", "this is text, not 5"),
+    ("label not to be lettered", 'sign = "always"', 'numbered = [0, { at = 5, label = "☃" }]', "25:26",
+     "scale[1].numbered[2].label", "no font has the character"),
+    ("label at no value", 'sign = "always"', 'numbered = [0, { label = "OFF" }]', "25:16",
+     "scale[1].numbered[2].at", "missing; add at = 20"),
+    ("divided by a number", 'sign = "always"', "divisions = 5", "25:1", "scale[1].divisions",
+     '5 does not say how to divide; write "auto", { every = 2 } or [{ to = 10, every = 1 }]'),
+    ("divided into no pieces", 'sign = "always"', "divisions = []", "25:1", "scale[1].divisions",
+     "0 pieces of divisions; give 1 to 100"),
+    ("piece without an end", 'sign = "always"', "divisions = [{ every = 1 }]", "25:14",
+     "scale[1].divisions[1].to", "missing; add to = 10"),
+    ("piece without a step", 'sign = "always"', "divisions = [{ to = 10 }]", "25:14",
+     "scale[1].divisions[1].every", "missing; add every = 10"),
+    ("pieces out of order", 'sign = "always"', "divisions = [{ to = 6, every = 1 }, { to = 4, every = 2 }]",
+     "25:39", "scale[1].divisions[2].to", "a piece up to 4 does not follow 6"),
+    ("numerals on no side", 'sign = "always"', 'numerals = "below"', "25:1", "scale[1].numerals",
+     'write "outside" or "inside"'),
+    ("gap in quotes", 'sign = "always"', 'gap = "wide"', "25:1", "scale[1].gap", '"wide" is not a length'),
+    ("line of one point", "radius = 60", "line = [[0, 60], [0, 60]]", "20:1", "scale[1].line",
+     "both ends of the line are one point; give two points"),
+    ("key of the symbols", "[symbols]", "[symbols]\nshwo = []", "46:1", "symbols.shwo", "did you mean show?"),
+    # what the dial is
+    ("test on a day in words", "tested = 2026-05-01", 'tested = "May 2026"', "5:1", "dial.tested",
+     'this is a date, not "May 2026"; write for example 2026-05-01'),
+    ("test at an hour", "tested = 2026-05-01", "tested = 2026-05-01T10:00:00", "5:1", "dial.tested",
+     "this is a date"),
+    ("test in a year alone", "tested = 2026-05-01", "tested = 2026", "5:1", "dial.tested",
+     "this is a date, not 2026"),
+    ("title not to be lettered", '"BATTERY"', '"BATTERY ☃"', "3:1", "dial.title",
+     "no font has the character"),
+    ("maker a number", '"Alder Lane Works"', "7", "4:1", "dial.maker", "this is text, not 7"),
+    # openings of the plate
+    ("slot without a course", "radius = 20\nfrom = -30\nto = 30\n", "", "31:3", "plate.slot[1]",
+     "the slot has no course; give radius, from and to for an arc, or line = [[x, y], [x, y]]"),
+    ("slot with half a course", "to = 30\n", "", "31:3", "plate.slot[1]", "the slot has no course"),
+    ("slot of two courses", "to = 30", "to = 30\nline = [[-20, 30], [20, 30]]", "36:1", "plate.slot[1].line",
+     "an arc or straight, not both"),
+    ("slot reversed", "from = -30\nto = 30", "from = 30\nto = -30", "35:1", "plate.slot[1].to",
+     "a slot from 30 to -30 degrees covers nothing; give the lower angle first"),
+    ("slot of no width", "width = 3\n", "", "31:3", "plate.slot[1].width", "missing; add width = 3"),
+    ("slot along a point", "radius = 20\nfrom = -30\nto = 30", "line = [[-20, 30], 4]", "33:20",
+     "plate.slot[1].line[2]", "this is a pair of values in brackets, not 4"),
+    ("slot off the plate", "radius = 20", "radius = 90", "31:3", "plate.slot[1]",
+     "the slot runs off the plate; coordinates count from the pivot"),
+    ("slot that closes on itself", "from = -30\nto = 30", "from = -180\nto = 178", "32:1",
+     "plate.slot[1].width", "does not fit its arc; make it narrower or shorter"),
+    ("mirror reversed", "mirror = { width = 4 }", "mirror = { from = 20, to = -20 }", "30:23",
+     "plate.mirror.to", "a mirror from 20 to -20 degrees covers nothing"),
+    ("mirror of no such ends", "mirror = { width = 4 }", 'mirror = { ends = "pointed" }', "30:12",
+     "plate.mirror.ends", 'write "round" or "square"'),
+    ("mirror of no width", "mirror = { width = 4 }", "mirror = { width = 0 }", "30:12", "plate.mirror.width",
+     "write 0.01 mm or more"),
+    ("mirror wider than there is room", "mirror = { width = 4 }", "mirror = { width = 200 }", "30:1",
+     "plate.mirror", "there is no room for a mirror"),
+    ("mirror off the plate", "mirror = { width = 4 }", "mirror = { from = -130, to = 0 }", "30:1",
+     "plate.mirror", "the mirror runs off the plate"),
+    ("mirror across a slot", "mirror = { width = 4 }", "mirror = { radius = 21 }", "30:1", "plate.mirror",
+     "the mirror meets a slot"),
+    ("mirror across a hole", "mirror = { width = 4 }",
+     "mirror = { width = 4 }\nhole = [{ at = [0, 50], diameter = 5 }]", "30:1", "plate.mirror",
+     "the mirror meets a hole"),
+    ("window without a size", "size = [114, 84]\n", "", "36:2", "plate.window.size",
+     "missing; add size = [70, 40]"),
+    ("window without a place", "at = [0, 33]\n", "", "36:2", "plate.window.at", "missing; add at = [0, 20]"),
+    ("corner too large for the window", "[plate.window]", "[plate.window]\ncorner = 43", "37:1",
+     "plate.window.corner", "a corner of 43 mm does not fit the window; give at most 42"),
+)  # fmt: skip
+
+FACE = [Bad(*row[:6], text=DRESSED, more=sum(row[6:]), files=_FOLDER) for row in _FACE]
+SENSE += FACE

@@ -241,7 +241,7 @@ DIALS = [
         rest=-60,
         full=60,
         scales=[scale("V", 0, 500, 95.0)],
-        plate="size = [240, 170]\npivot = [120, 40]",
+        plate="size = [256, 176]\npivot = [128, 40]",
         rest_of_file=look("night", 'distance = "2 m"'),
     ),
     dial(

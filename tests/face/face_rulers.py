@@ -9,7 +9,7 @@ from fractions import Fraction
 import numpy as np
 from hypothesis import strategies as st
 
-from dialgen.face.ruler import Ruler
+from dialgen.face.ruled.ruler import Ruler
 
 DIGIT_MM = 1.6
 CLEAR_MM = 1.0

@@ -15,10 +15,10 @@ from dialgen.dial import Dial, attempt
 from dialgen.dialfile import Source, parse
 from dialgen.drawing import Arc, Circle, Letters, Line, Outline
 from dialgen.errors import InputError
+from dialgen.face.fitted.openings import check_openings
 from dialgen.face.laid import check_laid, scale_layers
-from dialgen.face.openings import check_openings
 from dialgen.face.plate import outliner
-from dialgen.face.ruling import RuledScale, rule
+from dialgen.face.ruled.ruling import RuledScale, rule
 from dialgen.geometry.lines import ArcLine, StraightLine
 from dialgen.ink import shape
 from dialgen.lettering import hand

@@ -14,7 +14,7 @@ from dialgen.drawing import Drawing, Primitive, Purpose, Style
 from dialgen.face.compose import compose
 from dialgen.face.parts import GROUND, MAKER, SYMBOLS, TEXT, TITLE, Part
 from dialgen.face.plate import outliner
-from dialgen.face.ruling import rule
+from dialgen.face.ruled.ruling import rule
 from dialgen.ink import Shape, shape
 from dialgen.lettering import hand
 from dialgen.looks import Lettering

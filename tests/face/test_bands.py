@@ -12,8 +12,8 @@ from shapely import LineString, Point
 
 from dialgen.drawing import Style
 from dialgen.errors import InputError
-from dialgen.face.bands import band, bands, slot
-from dialgen.face.courses import ArcCourse, LineCourse, course
+from dialgen.face.inked.bands import band, bands, slot
+from dialgen.face.inked.courses import ArcCourse, LineCourse, course
 from dialgen.geometry.lines import ArcLine, StraightLine
 
 INK = Style(fill="#000000")

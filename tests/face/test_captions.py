@@ -10,7 +10,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from dialgen.dialfile.models import Scale
-from dialgen.face.captions import Caption, captions
+from dialgen.face.ruled.captions import Caption, captions
 from dialgen.looks import Decimal, Look
 from dialgen.quantity import folded_unit
 

@@ -11,7 +11,7 @@ from hypothesis import strategies as st
 from shapely import LineString, MultiPoint, Point, affinity, box
 
 from dialgen.drawing import Style
-from dialgen.face.clearance import Row, clear_of_ends, clear_of_ink, clear_of_others, slides
+from dialgen.face.inked.clearance import Row, clear_of_ends, clear_of_ink, clear_of_others, slides
 from dialgen.face.plate import Disc, Outliner, Rectangle
 
 EDGE_MM = 0.8
@@ -116,7 +116,7 @@ plates = st.one_of(
         lambda w, h, c: Rectangle((-w / 2, -h / 3, w, h), c),
         st.floats(30, 90),
         st.floats(30, 90),
-        st.floats(0, 12),
+        st.one_of(st.just(0.0), st.floats(0.1, 12)),
     ),
     st.builds(lambda x, y, r: Disc((x, y), r), st.floats(-5, 5), st.floats(-5, 5), st.floats(15, 50)),
 )

@@ -12,8 +12,8 @@ from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from dialgen.errors import InputError
-from dialgen.face.divisions import Rank, divide, legal_divisions, stepped
-from dialgen.face.numbering import auto_numbered
+from dialgen.face.ruled.divisions import Rank, divide, legal_divisions, stepped
+from dialgen.face.ruled.numbering import auto_numbered
 
 some = settings(max_examples=60, suppress_health_check=[HealthCheck.too_slow], deadline=None)
 any_ruler = st.one_of(even_rulers, crowding_rulers)
@@ -37,7 +37,9 @@ def gaps_of(numbered):
 
 def check(ruler, numbered):
     """Check every rule of the marks between ``numbered``."""
-    marks = [(exact(v), rank) for v, rank in divide(ruler, numbered)]
+    # Beyond the last finite numeral no division holds: see the test of marks towards infinity.
+    last = max(v for v in numbered if math.isfinite(v))
+    marks = [(exact(v), rank) for v, rank in divide(ruler, numbered) if v <= last]
     assert marks == sorted(marks)
     assert not {v for v, _ in marks} & {exact(v) for v in numbered if math.isfinite(v)}
     wanted = {gap: finest(ruler, *gap) for gap in gaps_of(numbered)}
@@ -107,9 +109,9 @@ def test_explicit_gap_that_nothing_fits_gets_no_marks():
     assert [v for v, _ in marks] == [14.0 + i for i in range(9)]
 
 
-@pytest.mark.parametrize("numbered", [[], [0.0], [math.inf], [5.0, math.inf]])
+@pytest.mark.parametrize("numbered", [[], [0.0], [math.inf]])
 def test_no_gap_no_marks(numbered):
-    """Fewer than two finite numerals leave nothing to divide."""
+    """Fewer than two numerals leave nothing to divide."""
     assert divide(ohms(10.0, 80.0), numbered) == []
 
 
@@ -163,10 +165,22 @@ def test_middle_marks_of_given_steps():
     }
 
 
-def test_marks_beyond_the_last_numeral_are_fine():
-    """Marks outside the numbered values, or before infinity, are fine ones."""
-    marks = stepped(0.0, 10.0, [(10.0, 1.0)], [4.0, 6.0])
-    assert {rank for v, rank in marks if not 4.0 < v < 6.0} == {Rank.FINE}
+def test_marks_beyond_the_last_numeral_go_on_as_before_it():
+    """With 4 and 8 numbered and a mark at every unit, 2 and 10 are middle marks as 6 is."""
+    marks = dict(stepped(0.0, 11.0, [(11.0, 1.0)], [4.0, 8.0]))
+    assert {v for v, rank in marks.items() if rank is Rank.MIDDLE} == {0.0, 2.0, 6.0, 10.0}
+
+
+def test_marks_towards_infinity_stand_at_one_two_and_five():
+    """After the last finite numeral, 1-2-5 values follow while there is room; then infinity stands alone."""
+    ruler = ohms(10.0, 80.0)
+    marks = [(v, rank) for v, rank in divide(ruler, [0.0, 20.0, math.inf]) if v > 20]
+    values = [v for v, _ in marks]
+    assert values == [50.0, 100.0, 200.0, 500.0][: len(values)]
+    assert len(values) >= 2
+    assert {rank for _, rank in marks} == {Rank.MIDDLE}
+    places = ruler.place_mm(np.array([20.0, *values, math.inf]))
+    assert (np.diff(places) >= 2 * ruler.gap_mm).all()
 
 
 @pytest.mark.parametrize(

@@ -7,7 +7,7 @@ from pathlib import Path
 import pytest
 
 from dialgen.dialfile import DialFile, Source, parse
-from dialgen.face.signs import check_signs, row_choices, sign_remarks, signs
+from dialgen.face.lettered.signs import check_signs, row_choices, sign_remarks, signs
 from dialgen.ink import meetings, shape
 from dialgen.lettering import PLAIN
 from dialgen.symbols import SYMBOLS, example

@@ -7,7 +7,7 @@ from laid_scales import ENDS, LINES, course_of, dial_text, inks, laid
 from shapely import Point
 
 from dialgen.drawing import Arc, Circle, Line, Outline, Purpose
-from dialgen.face.fitting import guide_layer
+from dialgen.face.fitted.fitting import guide_layer
 
 
 def guides(**keys):

@@ -9,8 +9,8 @@ from laid_scales import ENDS, LINES, dial_text, ink, laid, polygon
 from shapely import Point
 
 from dialgen.drawing import Cap, Line, Outline
-from dialgen.face.divisions import Rank
-from dialgen.face.numerals import mark_lines
+from dialgen.face.inked.numerals import mark_lines
+from dialgen.face.ruled.divisions import Rank
 
 
 def ranked(found):
@@ -41,8 +41,8 @@ def test_marks_of_a_rank_stand_together_in_one_style(look):
 @pytest.mark.parametrize("ends", ENDS.values(), ids=ENDS)
 @pytest.mark.parametrize("marks", ["outward", "inward", "across"])
 @pytest.mark.parametrize("line", LINES.values(), ids=LINES)
-def test_wedge_narrows_towards_the_pivot_to_the_width_of_fine_marks_at_least(line, marks, ends):
-    """A numbered wedge is a trapezium (a + b)/2·L as long as the bar it stands for, its wide end outside."""
+def test_wedge_narrows_towards_the_scale_line_to_the_width_of_fine_marks_at_least(line, marks, ends):
+    """A numbered wedge is a trapezium (a + b)/2·L as long as the bar, broad where numerals stand."""
     found = laid(dial_text(f'marks = "{marks}"', line=line, ends=ends, look='mark_shape = "taper"'))
     sizes = found.scale.sizes
     lines = {mark: (inner, outer) for mark, inner, outer in mark_lines(found.scale)}
@@ -52,8 +52,9 @@ def test_wedge_narrows_towards_the_pivot_to_the_width_of_fine_marks_at_least(lin
     for mark, item in wedges:
         assert isinstance(item, Outline)
         (a, b, c, d), (inner, outer) = [(v.x, v.y) for v in item.vertices], lines[mark]
-        assert math.dist(a, d) == pytest.approx(narrow, abs=1e-9)
-        assert math.dist(b, c) == pytest.approx(sizes.numbered_width_mm, abs=1e-9)
+        free, foot = sizes.numbered_width_mm, narrow
+        widths = (free, foot) if marks == "inward" else (foot, free)
+        assert (math.dist(a, d), math.dist(b, c)) == pytest.approx(widths, abs=1e-9)
         assert np.add(a, d) / 2 == pytest.approx(inner, abs=1e-9)
         assert np.add(b, c) / 2 == pytest.approx(outer, abs=1e-9)
         area = (narrow + sizes.numbered_width_mm) / 2 * math.dist(inner, outer)
@@ -92,8 +93,9 @@ def test_rounded_wedge_is_the_hull_of_two_discs(marks):
     """A rounded wedge is what its two end discs and their common tangents enclose."""
     found = laid(dial_text(f'marks = "{marks}"', look='mark_shape = "taper"\nmark_ends = "round"'))
     sizes = found.scale.sizes
-    narrow = max(0.45 * sizes.numbered_width_mm, sizes.fine_width_mm) / 2
-    wide = sizes.numbered_width_mm / 2
+    near = max(0.45 * sizes.numbered_width_mm, sizes.fine_width_mm) / 2
+    far = sizes.numbered_width_mm / 2
+    narrow, wide = (far, near) if marks == "inward" else (near, far)
     lines = {mark: (inner, outer) for mark, inner, outer in mark_lines(found.scale)}
     free = {"outward": (False, True), "inward": (True, False), "across": (True, True)}[marks]
     for mark, item in zip(ranked(found), found.items("marks"), strict=True):

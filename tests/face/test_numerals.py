@@ -7,16 +7,17 @@ from dataclasses import dataclass, replace
 
 import numpy as np
 import pytest
-from hypothesis import given, settings
+from hypothesis import example, given, settings
 from hypothesis import strategies as st
 from laid_scales import Laid, ink, laid
 from shapely import LineString, MultiPoint, Point, affinity, box
 
-from dialgen.face.numerals import ROW_SPACE, Numeral, numerals
+from dialgen.face.inked.numerals import ROW_SPACE, Numeral, numerals
 from dialgen.face.plate import outliner
 from dialgen.looks import LOOKS
 
-TRUE_MM = 0.03
+TRUE_MM, TRUE_CAPS, ROWS_TRUE_CAPS = 0.03, 0.01, 0.12
+"""How true distances are: in millimetres, or in heights of a large numeral; between rows in heights."""
 EDGE_MM = 0.8
 LARGE = "size = [600, 600]\npivot = [300, 300]"
 ALONG_ARCS = ("upright", "along")
@@ -62,11 +63,20 @@ def _direct(values: str) -> str:
 
 @dataclass(frozen=True)
 class Stood:
-    """A numeral's ink, and how far it is from the end of its own mark and from those of all others."""
+    """A numeral, and how far its ink is from the end of its own mark, corners and all, and from others.
+
+    ``others_mm`` is from the middles of the ends of all other marks, ``any_mm`` from that of its own too.
+    """
 
     numeral: Numeral
     own_mm: float
     others_mm: float
+    any_mm: float
+
+
+def true_mm(made: Laid) -> float:
+    """How true the distance from a mark is to be: a little more for the large numerals of large scales."""
+    return max(TRUE_MM, TRUE_CAPS * made.scale.sizes.numeral_mm)
 
 
 def ends_of(made: Laid) -> dict[float, Point]:
@@ -111,7 +121,8 @@ def stood(made: Laid, found: tuple[Numeral, ...] | None = None) -> list[Stood]:
             [(end.x - half_mm * uy, end.y + half_mm * ux), (end.x + half_mm * uy, end.y - half_mm * ux)]
         )
         others = MultiPoint([point for value, point in ends.items() if value != numeral.mark.value])
-        stood.append(Stood(numeral, shape.distance(edge), shape.distance(others)))
+        others_mm = shape.distance(others)
+        stood.append(Stood(numeral, shape.distance(edge), others_mm, min(others_mm, shape.distance(end))))
     return stood
 
 
@@ -122,12 +133,12 @@ def drawn(made: Laid) -> tuple[Numeral, ...]:
 
 def assert_evenly_clear(made: Laid, found: list[Stood]) -> None:
     """Every numeral is as far from its mark as the sizes say, unless the end of another holds it off."""
-    space_mm = made.scale.sizes.space_mm
+    space_mm, off_mm = made.scale.sizes.space_mm, true_mm(made)
     for one in found:
-        assert one.own_mm > space_mm - TRUE_MM, one.numeral.letters.text
+        assert one.own_mm > space_mm - off_mm, one.numeral.letters.text
         assert one.others_mm > 0.5 * space_mm, one.numeral.letters.text
         held = one.others_mm < 0.75 * space_mm
-        assert held or one.own_mm < space_mm + TRUE_MM, one.numeral.letters.text
+        assert held or one.own_mm < space_mm + off_mm, one.numeral.letters.text
 
 
 @st.composite
@@ -195,8 +206,8 @@ def assert_one_baseline(made: Laid, found: list[Stood], heights_mm: list[float])
     assert heights_mm == pytest.approx([heights_mm[0]] * len(heights_mm), abs=1e-6)
     nearest_mm = min(one.own_mm for one in found)
     held = min(one.others_mm for one in found) < 0.75 * space_mm
-    assert nearest_mm > space_mm - TRUE_MM
-    assert held or nearest_mm < space_mm + TRUE_MM
+    assert nearest_mm > space_mm - true_mm(made)
+    assert held or nearest_mm < space_mm + true_mm(made)
     assert min(one.others_mm for one in found) > 0.5 * space_mm
 
 
@@ -304,6 +315,8 @@ def test_digits_stand_centred_on_the_pointer_with_their_sign_hung_beside_them(te
     """The pointer's ray goes through the middle of the digits, as if the minus or plus were not there."""
     made = laid(text)
     for numeral in drawn(made):
+        if numeral.letters.text.startswith("+") and numeral.mark.direction[0] > 0.29:
+            continue  # there the plus would hang over the scale, and stands with its digits instead
         spot = numeral.letters.glyphs[-1]
         turn = math.radians(spot.angle_deg)
         # In the numeral's own frame, turned back: its base line, and half a capital above it.
@@ -363,6 +376,19 @@ def tight_dials(draw: st.DrawFn) -> str:
     )
 
 
+WIDE_INSIDE = dial(
+    "from = 0\nto = 12000\nnumbered = { every = 2000 }",
+    ends=(-30, 30),
+    line="radius = 60",
+    style="night",
+    side="inside",
+    marks="inward",
+    keys='sign = "always"',
+    plate="size = [61, 85]\npivot = [30.5, 15]",
+)
+"""A flat arc on a narrow plate, whose last numeral is wide."""
+
+
 @settings(max_examples=100, deadline=None)
 @given(tight_dials())
 def test_no_numeral_leaves_the_plate_where_it_has_room_to_slide(text: str) -> None:
@@ -382,29 +408,30 @@ def test_no_numeral_leaves_the_plate_where_it_has_room_to_slide(text: str) -> No
         assert not any(plate.covers(slid) for slid in slides), numeral.letters.text
 
 
+@pytest.mark.xfail(reason="sliding does not look at the marks that a numeral comes over", strict=True)
 @settings(max_examples=100, deadline=None)
 @given(tight_dials())
+@example(WIDE_INSIDE)
 def test_a_numeral_slid_back_onto_the_plate_stays_clear_of_the_marks(text: str) -> None:
     """Wherever a numeral is slid to, it is half the usual space or more from the end of any mark."""
     made = laid(text)
     for one in stood(made):
-        assert min(one.own_mm, one.others_mm) > 0.5 * made.scale.sizes.space_mm, one.numeral.letters.text
+        assert one.any_mm > 0.5 * made.scale.sizes.space_mm, one.numeral.letters.text
 
 
 def test_end_numerals_slide_inwards_and_the_others_stand() -> None:
     """On a plate just wide enough for its marks the two end numerals move inwards, the others nowhere."""
-    values = "from = 0\nto = 4000\nnumbered = [0, 1000, 2000, 3000, 4000]"
+    values = "from = 1000\nto = 5000\nnumbered = [1000, 2000, 3000, 4000, 5000]"
     free, tight = (
-        {numeral.mark.value: numeral.letters.glyphs[0] for numeral in drawn(laid(dial(values, plate=plate)))}
-        for plate in (LARGE, "size = [74, 70]\npivot = [37, 15]")
+        [numeral.letters.glyphs[0] for numeral in drawn(laid(dial(values, ends=(-30, 30), plate=plate)))]
+        for plate in (LARGE, "size = [54, 70]\npivot = [27, 15]")
     )
-    assert [free[value] == tight[value] for value in sorted(free)] == [False, True, True, True, False]
-    assert tight[0].x > free[0].x
-    assert tight[4000].x < free[4000].x
-    # Along the scale: square to the pointer, which stands at 45 degrees.
-    for value, sign in ((0, 1), (4000, -1)):
-        moved = tight[value].x - free[value].x, tight[value].y - free[value].y
-        assert moved[1] == pytest.approx(sign * moved[0])
+    assert [one == other for one, other in zip(free, tight, strict=True)] == [False, True, True, True, False]
+    # Along the scale: square to the pointer, which stands at 30 degrees to either side.
+    for number, sign in ((0, 1), (-1, -1)):
+        right = tight[number].x - free[number].x
+        assert sign * right > 0
+        assert tight[number].y - free[number].y == pytest.approx(sign * right * math.tan(math.radians(30)))
 
 
 # ---------------------------------------------------------------- further rows
@@ -447,9 +474,10 @@ def test_each_row_is_clear_of_the_one_before_it(text: str) -> None:
         ]
         if not gaps:
             continue
-        assert min(gaps) > space_mm - TRUE_MM
-        assert 'turn = "across"' in text or max(gaps) < space_mm + TRUE_MM
-        assert min(gaps) < space_mm + TRUE_MM
+        off_mm = ROWS_TRUE_CAPS * scale.sizes.numeral_mm
+        assert min(gaps) == pytest.approx(space_mm, abs=off_mm)
+        # Across the pointer a row has one baseline, and some have more space than they need.
+        assert 'turn = "across"' in text or max(gaps) < space_mm + off_mm
 
 
 def test_rows_say_their_own_multiples_and_zero_once() -> None:

@@ -12,8 +12,8 @@ from shapely import LineString, Point, box
 import dialgen
 from dialgen.drawing import Purpose
 from dialgen.errors import DialFileError
+from dialgen.face.fitted.openings import cut_layer
 from dialgen.face.laid import mirror, scale_layers
-from dialgen.face.openings import cut_layer
 from dialgen.face.plate import outliner
 
 every_line = pytest.mark.parametrize("line", LINES.values(), ids=LINES)

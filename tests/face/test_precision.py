@@ -11,8 +11,8 @@ from hypothesis import strategies as st
 
 import dialgen
 from dialgen.dialfile.models import Fiducial, Scale
-from dialgen.face.divisions import Rank
-from dialgen.face.precision import fiducial, fiducial_value, least_gap_mm, least_step
+from dialgen.face.ruled.divisions import Rank
+from dialgen.face.ruled.precision import fiducial, fiducial_value, least_gap_mm, least_step
 
 
 def scale(**keys: object) -> Scale:

@@ -22,9 +22,9 @@ from dialgen.drawing import (
     Vertex,
     polar,
 )
-from dialgen.face.cover import cover, letters_box
+from dialgen.face.lettered.cover import cover, letters_box
+from dialgen.face.lettered.room import Found, Room, Wish
 from dialgen.face.plate import Disc, Outliner, Rectangle, rounded_rectangle
-from dialgen.face.room import Found, Room, Wish
 from dialgen.ink import clearance, shape, touch
 from dialgen.lettering import PLAIN, Fit, hand, letters
 

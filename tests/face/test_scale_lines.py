@@ -12,7 +12,7 @@ from shapely import LineString, Point
 
 import dialgen
 from dialgen.drawing import Arc, Cap, Circle, Line, Outline
-from dialgen.face.dashes import even_dashes, mark_dashes
+from dialgen.face.inked.dashes import even_dashes, mark_dashes
 
 every_line = pytest.mark.parametrize("line", LINES.values(), ids=LINES)
 both_ways = pytest.mark.parametrize("ends", ENDS.values(), ids=ENDS)

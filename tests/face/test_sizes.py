@@ -7,8 +7,8 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from dialgen.dialfile.models import Scale
-from dialgen.face.divisions import Rank
-from dialgen.face.sizes import minutes_seen, seen_mm, sizes_for
+from dialgen.face.ruled.divisions import Rank
+from dialgen.face.ruled.sizes import minutes_seen, seen_mm, sizes_for
 from dialgen.looks import LOOKS, Look
 
 SCALE = Scale.model_validate({"unit": "A", "from": 0, "to": 40, "radius": 44})

@@ -12,11 +12,11 @@ from lxml import etree
 from shapely import LineString, Point
 
 import dialgen
-from dialgen.drawing import Arc, Line, Outline, Style
-from dialgen.face.bands import between
-from dialgen.face.courses import course
-from dialgen.face.divisions import Rank
-from dialgen.face.hatch import hatch, slants
+from dialgen.drawing import Arc, Line, Style
+from dialgen.face.inked.bands import between
+from dialgen.face.inked.courses import course
+from dialgen.face.inked.hatch import hatch, slants
+from dialgen.face.ruled.divisions import Rank
 
 every_line = pytest.mark.parametrize("line", LINES.values(), ids=LINES)
 both_ways = pytest.mark.parametrize("ends", ENDS.values(), ids=ENDS)
@@ -231,14 +231,18 @@ def test_strokes_on_a_bent_band_follow_it(slant):
 @every_line
 @both_ways
 def test_hatched_zone_is_an_outline_and_strokes_in_its_colour(line, ends):
-    """A hatched zone is drawn in strokes of its own colour within its outline, and fills nothing."""
+    """A hatched zone is strokes of its colour within three sides; the scale line is the fourth."""
     found = laid(dial_text("", zone(10, 30, "hatch = true"), line=line, ends=ends))
-    *strokes, outline = found.items("zones")
-    assert isinstance(outline, Outline)
-    assert all(isinstance(stroke, Line) for stroke in strokes)
-    assert {(item.style.stroke, item.style.fill) for item in (*strokes, outline)} == {("#c8201e", None)}
-    area = polygon(outline)
+    *strokes, far, near_end, far_end = found.items("zones")
+    assert isinstance(far, Line if found.scale.spec.line else Arc)
+    assert all(isinstance(stroke, Line) for stroke in (*strokes, near_end, far_end))
+    assert {(item.style.stroke, item.style.fill) for item in found.items("zones")} == {("#c8201e", None)}
+    (plain,) = laid(dial_text("", zone(10, 30), line=line, ends=ends)).items("zones")
+    area = polygon(plain)
     assert len(strokes) > 5
+    # The scale line is the fourth side: the three strokes lie on the band's edge, all but what is along it.
+    edge = area.exterior
+    assert all(edge.buffer(2e-3).contains(course_of(side)) for side in (far, near_end, far_end))
     assert all(area.buffer(2e-3).contains(course_of(stroke)) for stroke in strokes)
 
 

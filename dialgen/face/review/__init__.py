@@ -11,6 +11,7 @@ from dataclasses import replace
 from types import MappingProxyType
 
 from dialgen.errors import Remark
+from dialgen.face.lettered.signs import sign_remarks
 from dialgen.face.review.colours import weak_on_ground, weak_over_zone
 from dialgen.face.review.edges import at_margin, behind_case, over_edge, through_opening
 from dialgen.face.review.ends import narrow_break, past_line
@@ -20,8 +21,7 @@ from dialgen.face.review.pointer import hides_numerals, too_short
 from dialgen.face.review.sizes import too_small_to_read, too_thin_to_print
 from dialgen.face.review.spacing import finer_than_class, marks_between, marks_too_near, numbered_count
 from dialgen.face.review.things import scale_name
-from dialgen.face.ruling import RuledScale
-from dialgen.face.signs import sign_remarks
+from dialgen.face.ruled.ruling import RuledScale
 
 Check = Callable[[Finished], Iterator[Remark]]
 ScaleCheck = Callable[[Finished, RuledScale, str], Iterator[Remark]]

@@ -9,15 +9,15 @@ import numpy as np
 from dialgen.dialfile.models import Zone
 from dialgen.drawing import Point
 from dialgen.errors import Key, Remark
-from dialgen.face.divisions import Rank
-from dialgen.face.numerals import reaches
+from dialgen.face.inked.numerals import reaches
+from dialgen.face.inked.sides import zone_span_mm
 from dialgen.face.parts import TEXT, Part
 from dialgen.face.review.finished import Finished
 from dialgen.face.review.rules import LEAST_CONTRAST, LEAST_ON_GROUND, LEAST_OVER_ZONE, over_zone
 from dialgen.face.review.things import Thing, scale_name
 from dialgen.face.review.wording import at, grouped, weight
-from dialgen.face.ruling import RuledScale
-from dialgen.face.sides import zone_span_mm
+from dialgen.face.ruled.divisions import Rank
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.looks import COLOURS, contrast
 
 _FEET = 0.2

@@ -8,9 +8,9 @@ from collections.abc import Iterator
 import numpy as np
 
 from dialgen.errors import Remark
-from dialgen.face.divisions import Rank
 from dialgen.face.review.finished import Finished
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.divisions import Rank
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.geometry.lines import ArcLine
 
 _PAST_MM = 0.1

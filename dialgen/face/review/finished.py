@@ -15,7 +15,7 @@ from dialgen.face.plate import Outliner
 from dialgen.face.review.openings import openings
 from dialgen.face.review.rules import apart
 from dialgen.face.review.things import OPENING, Sort, Thing, colour_of, printed
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.ink import neighbours, strays
 from dialgen.looks import Look
 

@@ -8,17 +8,17 @@ from statistics import median
 import numpy as np
 
 from dialgen.errors import Remark
-from dialgen.face.divisions import Rank
-from dialgen.face.numerals import mark_lines
+from dialgen.face.inked.numerals import mark_lines
 from dialgen.face.parts import Part
 from dialgen.face.review.finished import Finished
 from dialgen.face.review.things import Thing
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.divisions import Rank
+from dialgen.face.ruled.ruling import RuledScale
 
 SHORT_MM = 1.0
 """How far the tip may stay short of the marks; common practice is to reach just to the fine ones or under."""
-COVERED = 0.15
-"""How much of a numeral's height it may cover."""
+COVERED = 1.0
+"""How much of a numeral's height it may cover: a slim tip hides one when it crosses it whole."""
 
 _KEY = ("movement", "pointer")
 _HAIR_MM = 1e-9

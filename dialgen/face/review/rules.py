@@ -12,7 +12,7 @@ from itertools import combinations_with_replacement
 
 from dialgen.face.parts import SYMBOLS, Part
 from dialgen.face.review.things import LETTERING, OPENING, Sort
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.looks import contrast
 
 LEAST_CONTRAST = 4.5

@@ -10,7 +10,7 @@ from dialgen.face.parts import SYMBOLS, TEXT, Part
 from dialgen.face.review.finished import Finished
 from dialgen.face.review.things import LETTERING, Sort, Thing
 from dialgen.face.review.wording import grouped
-from dialgen.face.sizes import LEAST_NUMERAL_MINUTES, minutes_seen, seen_mm
+from dialgen.face.ruled.sizes import LEAST_NUMERAL_MINUTES, minutes_seen, seen_mm
 from dialgen.lettering.fonts import EM_CAPS
 
 LEAST_LETTER_MM = 1.2

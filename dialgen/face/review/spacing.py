@@ -9,14 +9,14 @@ from itertools import pairwise
 import numpy as np
 
 from dialgen.errors import Key, Remark
-from dialgen.face.divisions import MOST_PARTS, Rank
-from dialgen.face.numbering import wanted_count
-from dialgen.face.precision import fiducial, least_gap_mm, least_step
 from dialgen.face.review.finished import Finished
 from dialgen.face.review.wording import at
-from dialgen.face.ruler import UNEVEN
-from dialgen.face.ruling import Mark, RuledScale
-from dialgen.face.sizes import GAP_MINUTES, LEAST_WHITE, seen_mm
+from dialgen.face.ruled.divisions import MOST_PARTS, Rank
+from dialgen.face.ruled.numbering import wanted_count
+from dialgen.face.ruled.precision import fiducial, least_gap_mm, least_step
+from dialgen.face.ruled.ruler import UNEVEN
+from dialgen.face.ruled.ruling import Mark, RuledScale
+from dialgen.face.ruled.sizes import GAP_MINUTES, LEAST_WHITE, seen_mm
 from dialgen.quantity import plain_number
 from dialgen.stage import Array
 

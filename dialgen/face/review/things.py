@@ -9,7 +9,7 @@ from dialgen.dialfile.models import DialFile, Limit, Zone
 from dialgen.drawing import Drawing, Layer, Letters, Primitive, Purpose
 from dialgen.errors import Key
 from dialgen.face.parts import GROUND, MAKER, SYMBOLS, TEXT, TITLE, Part, layer_name
-from dialgen.face.ruling import RuledScale
+from dialgen.face.ruled.ruling import RuledScale
 from dialgen.ink import Shape, shape
 
 OPENING = "opening"

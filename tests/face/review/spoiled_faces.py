@@ -336,7 +336,7 @@ SPOILED = [
         "pointer long",
         PANEL,
         "pointer = 45",
-        "pointer = 50",
+        "pointer = 52",
         "pointer long",
         "movement.pointer",
         "into the numerals",

@@ -1,0 +1,1 @@
+"""The scales as ink: lines, marks, numerals, zones and limits."""

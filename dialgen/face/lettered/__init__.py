@@ -1,0 +1,1 @@
+"""Lettering beside the numerals, each set where the plate is free."""

@@ -95,7 +95,7 @@ class Movement(Table):
     """The movement, as measured on the bench."""
 
     kind: Annotated[str, PlainValidator(fields.one_of("moving coil", "moving iron", "other"))] = "moving coil"
-    """Kept for symbols, heat and cautions; nothing is drawn or computed from it yet."""
+    """For the dial symbols; a moving iron is left unmarked near zero."""
     current: CurrentA | None = None
     resistance: ResistanceOhm | None = None
     rest: Angle = Field(description="rest = -44.0, the angle of the pointer with no current")
@@ -105,7 +105,7 @@ class Movement(Table):
     ] = None
     response: Annotated[Stage, PlainValidator(_response)] = response.EVEN
     pointer: LengthAbove | None = None
-    """Kept for later checks of the scale line; nothing is drawn or computed from it yet."""
+    """For the review and the guide layer; no mark depends on it."""
     reading: Annotated[tuple[Reading, ...], BeforeValidator(fields.at_most(MOST_READINGS))] = ()
     readings: Annotated[tuple[Reading, ...], PlainValidator(readings_file(Reading))] = ()
     old: OldScale | None = None

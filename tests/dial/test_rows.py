@@ -17,6 +17,7 @@ from dialgen.cli.table import command as table_command
 MOVEMENT_A, MOVEMENT_OHM = 1e-3, 75.0
 AMPERES = 'unit = "A"\nfrom = 0\nto = 10\ncircuit = { kind = "shunt" }'
 VOLTS = 'unit = "V"\nfrom = 0\nto = 10\ncircuit = { kind = "multiplier" }'
+DECADES = 'unit = "mbar"\nfrom = 1\nto = 1000\nlaw = "logarithmic"\ncircuit = "direct"'
 OHMS = 'unit = "ohm"\nfrom = 0\nto = inf\ncircuit = { kind = "series ohmmeter", half = "1500 ohm" }'
 
 
@@ -112,6 +113,7 @@ def shunt_drive(amperes: float, shunt_ohm: float) -> float:
         (VOLTS, row(25, 'kind = "multiplier", range = "250 V"')),
         (VOLTS, row(0.1, 'kind = "multiplier", range = "1 V"')),
         (VOLTS, row(0.001, 'kind = "multiplier", range = "10 V"', "kV")),
+        (DECADES, row(10, 'kind = "direct"')),
         (OHMS, row(10, 'kind = "series ohmmeter", half = "15 kohm"')),
         (OHMS, row(0.01, 'kind = "series ohmmeter", half = "15 kohm"', "kohm")),
     ],
@@ -131,6 +133,14 @@ def test_a_shunt_built_one_per_cent_high_is_told_of() -> None:
     assert remark[1] == ("scale", 0, "also", 0, "circuit")
     assert remark[0].startswith("numerals times 5 are off by up to ")
     assert "; " in remark[0]
+
+
+@pytest.mark.parametrize(("share", "told"), [(1.0008, 0), (1.0013, 1), (0.9987, 1), (0.9992, 0)])
+def test_a_thousandth_of_full_deflection_is_the_least_that_is_told(share: float, told: int) -> None:
+    """A tenth of a per cent is finer than a plate can be printed: below it nothing is remarked."""
+    built_ohm = share * MOVEMENT_A * MOVEMENT_OHM / (50 - MOVEMENT_A)
+    circuit = f'kind = "shunt", range = "50 A", built = "{built_ohm:.12f} ohm"'
+    assert len(remarked(AMPERES + row(5, circuit))) == told
 
 
 def test_a_shunt_for_another_range_is_told_of() -> None:

@@ -36,9 +36,9 @@ def _line(limit: Limit, _zones: Sequence[Zone], scale: RuledScale) -> Line:
 
 
 def _crossing_mm(scale: RuledScale, side: Side) -> float:
-    """Return how far outwards the line of a limit ends on one side; without marks there, on the line."""
-    marks_mm = mark_reach_mm(scale, side)
-    return side * (marks_mm + _PAST * scale.sizes.space_mm) if marks_mm else 0.0
+    """Return how far outwards a limit's line ends on one side; where no marks are, at the scale line's edge."""
+    marks_mm, sizes = mark_reach_mm(scale, side), scale.sizes
+    return side * (marks_mm + _PAST * sizes.space_mm if marks_mm else sizes.line_width_mm / 2)
 
 
 def _triangle(limit: Limit, zones: Sequence[Zone], scale: RuledScale) -> Outline:

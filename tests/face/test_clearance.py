@@ -111,6 +111,9 @@ def test_a_numeral_that_is_clear_stays_where_it_is() -> None:
 
 # ---------------------------------------------------------------- back onto the plate
 
+FAR = np.array([[1e4, 1e4]])
+"""The end of a mark that is in nobody's way."""
+
 plates = st.one_of(
     st.builds(
         lambda w, h, c: Rectangle((-w / 2, -h / 3, w, h), c),
@@ -140,7 +143,7 @@ def test_a_numeral_slides_no_farther_than_it_must(
     """A numeral on the plate stays; one off it slides by the least tenth that brings it and its rim on."""
     corners = np.array([[-wide, -high], [wide, -high], [wide, high], [-wide, high]])
     row = row_of([corners], [(0.0, 0.0)], [way_deg])
-    (slid,) = slides(plate, row, np.array([[x, y]]))
+    (slid,) = slides(plate, row, np.array([[x, y]]), FAR, 0.0)
     ux, uy = unit(way_deg)
     assert slid @ (ux, uy) == pytest.approx(0.0, abs=1e-9)
     rim = box(x - wide - EDGE_MM, y - high - EDGE_MM, x + wide + EDGE_MM, y + high + EDGE_MM)
@@ -163,7 +166,7 @@ def test_each_numeral_of_a_row_slides_by_itself() -> None:
     word = np.array([[-3.0, -1.0], [3.0, 1.0]])
     row = row_of([word] * 3, [(0.0, 0.0)] * 3, [-45.0, 0.0, 45.0])
     shifts = np.array([[-20.0, 20.0], [0.0, 40.0], [27.5, 20.0]])
-    slid = slides(plate, row, shifts)
+    slid = slides(plate, row, shifts, FAR, 0.0)
     assert slid[:2].tolist() == [[0.0, 0.0], [0.0, 0.0]]
     # 1.3 mm over the edge with its rim: 1.3·√2 along a slope of 45 degrees, in whole tenths.
     assert np.hypot(*slid[2]) == pytest.approx(1.9, abs=1e-9)
@@ -194,3 +197,14 @@ def test_the_referees_plate_is_the_plate(plate: Outliner) -> None:
         ]
     )
     assert all(area(plate).boundary.distance(Point(point)) < 1e-4 for point in points)
+
+
+def test_a_numeral_slides_past_a_mark_rather_than_over_it() -> None:
+    """Off the edge a numeral slides on until it is clear of a mark's end; without one, only back on."""
+    plate = Rectangle((-30.0, -10.0, 60.0, 60.0), 0.0)
+    row = row_of([np.array([[-3.0, -1.0], [3.0, 1.0]])], [(0.0, 0.0)], [0.0])
+    at = np.array([[28.5, 20.0]])
+    free = slides(plate, row, at, FAR, 0.5)[0]
+    past = slides(plate, row, at, np.array([[24.8, 20.0]]), 0.5)[0]
+    assert free == pytest.approx((-2.3, 0.0))
+    assert 28.5 + past[0] + 3.0 + 0.5 <= 24.8 + 1e-9

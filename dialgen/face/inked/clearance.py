@@ -125,13 +125,17 @@ def _past(along: Array, room: Array) -> Array:
     return np.where(room >= 0, along + np.sqrt(np.maximum(room, 0.0)), -np.inf)
 
 
-def slides(plate: Outliner, row: Row, shifts: Array) -> Array:
+def slides(plate: Outliner, row: Row, shifts: Array, tips: Array, space_mm: float) -> Array:
     """Return how far each numeral is slid along its scale to be on the plate; nowhere if that is far.
+
+    Clear of the marks if there is such a place.
 
     Args:
         plate: the plate's outline.
         row: the numerals.
         shifts: (k, 2), where each is put, mm.
+        tips: (m, 2), the ends of all marks, mm.
+        space_mm: how near to them its box may come.
     """
     low = np.minimum.reduceat(row.points, row.starts) + shifts - _EDGE_MM
     high = np.maximum.reduceat(row.points, row.starts) + shifts + _EDGE_MM
@@ -144,7 +148,12 @@ def slides(plate: Outliner, row: Row, shifts: Array) -> Array:
         along = np.array([row.aways[i, 1], -row.aways[i, 0]])
         # Nearest first, to either side in turn.
         ways = np.stack([steps, -steps], axis=1).reshape(-1, 1) * along
-        fits = np.flatnonzero(plate.holds(xs[i] + ways[:, :1], ys[i] + ways[:, 1:]).all(axis=1))
-        if fits.size:
+        held = plate.holds(xs[i] + ways[:, :1], ys[i] + ways[:, 1:]).all(axis=1)
+        rim = _EDGE_MM - space_mm
+        above = tips > (low[i] + rim + ways)[:, None]
+        over = np.any(np.all(above & (tips < (high[i] - rim + ways)[:, None]), axis=2), axis=1)
+        # Off the plate a numeral is lost: rather than that it stands near a mark, for the review to tell.
+        fits = [*np.flatnonzero(held & ~over), *np.flatnonzero(held)]
+        if fits:
             found[i] = ways[fits[0]]
     return found

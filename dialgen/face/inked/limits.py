@@ -11,6 +11,7 @@ from dialgen.face.ruled.ruling import RuledScale
 
 _WIDTH = 1.25
 _PAST = 0.3
+_WITHIN = 0.2
 _HEIGHT = 1.0
 _BREADTH = 0.9
 _HAIR_MM = 0.5
@@ -36,9 +37,9 @@ def _line(limit: Limit, _zones: Sequence[Zone], scale: RuledScale) -> Line:
 
 
 def _crossing_mm(scale: RuledScale, side: Side) -> float:
-    """Return how far outwards a limit's line ends on one side; where no marks are, at the scale line's edge."""
+    """Return how far outwards a limit's line ends on one side; where no marks are, within the scale line."""
     marks_mm, sizes = mark_reach_mm(scale, side), scale.sizes
-    return side * (marks_mm + _PAST * sizes.space_mm if marks_mm else sizes.line_width_mm / 2)
+    return side * (marks_mm + _PAST * sizes.space_mm if marks_mm else _WITHIN * sizes.line_width_mm)
 
 
 def _triangle(limit: Limit, zones: Sequence[Zone], scale: RuledScale) -> Outline:

@@ -92,7 +92,7 @@ def _beside(scale: RuledScale, outside: bool, rows: list[int], plate: Outliner) 
         row = _row([ink_points(word) for word in words], [stem for _, stem, _ in said])
         reaches_mm = _reaches(scale, words[0], row, tips, [before.get(mark) for mark in marks])
         shifts = row.ends + reaches_mm[:, None] * row.aways
-        shifts = shifts + slides(plate, row, shifts)
+        shifts = shifts + slides(plate, row, shifts, tips, _OTHERS * scale.sizes.space_mm)
         before.update(zip(marks, row.ink(shifts), strict=True))
         for mark, word, (dx, dy) in zip(marks, words, shifts.tolist(), strict=True):
             yield Numeral(mark, number, moved(word, dx, dy))

@@ -7,7 +7,7 @@ from dataclasses import dataclass, replace
 
 import numpy as np
 import pytest
-from hypothesis import given, settings
+from hypothesis import example, given, settings
 from hypothesis import strategies as st
 from laid_scales import Laid, ink, laid
 from shapely import LineString, MultiPoint, Point, affinity, box
@@ -376,23 +376,64 @@ def tight_dials(draw: st.DrawFn) -> str:
     )
 
 
+def plate_of(made: Laid):
+    """The plate as a shapely figure."""
+    left, bottom, width, height = outliner(made.dial.file.plate).box
+    return box(left, bottom, left + width, bottom + height)
+
+
+def ways_along(numeral: Numeral, longest_mm: float) -> list[tuple[float, float]]:
+    """Ways along the scale, right and up, as far as a numeral of that length may be slid."""
+    most_mm, (ux, uy) = longest_mm + 2 * EDGE_MM - 0.2, numeral.mark.direction
+    return [(t * uy, -t * ux) for t in np.arange(-most_mm, most_mm, 0.05).tolist()]
+
+
 @settings(max_examples=100, deadline=None)
 @given(tight_dials())
 def test_no_numeral_leaves_the_plate_where_it_has_room_to_slide(text: str) -> None:
     """A numeral over the edge is one that no slide by its own length along the scale could bring back."""
     made = laid(text)
-    left, bottom, width, height = outliner(made.dial.file.plate).box
-    plate = box(left, bottom, left + width, bottom + height)
+    plate = plate_of(made)
     for numeral in drawn(made):
         shape = ink(numeral.letters)
         if plate.covers(shape):
             continue
         x1, y1, x2, y2 = shape.bounds
-        ux, uy = numeral.mark.direction
-        longest = max(x2 - x1, y2 - y1) + 2 * EDGE_MM - 0.1
-        rim = box(x1 - EDGE_MM, y1 - EDGE_MM, x2 + EDGE_MM, y2 + EDGE_MM)
-        slides = [affinity.translate(rim, t * uy, -t * ux) for t in np.arange(-longest, longest, 0.05)]
-        assert not any(plate.covers(slid) for slid in slides), numeral.letters.text
+        # A tenth is left for the steps in which it is slid.
+        rim = box(x1, y1, x2, y2).buffer(EDGE_MM + 0.1, join_style="mitre")
+        ways = ways_along(numeral, max(x2 - x1, y2 - y1))
+        assert not any(plate.covers(affinity.translate(rim, *way)) for way in ways), numeral.letters.text
+
+
+WIDE_INSIDE = dial(
+    "from = 0\nto = 12000\nnumbered = { every = 2000 }",
+    ends=(-30, 30),
+    line="radius = 60",
+    style="night",
+    side="inside",
+    marks="inward",
+    keys='sign = "always"',
+    plate="size = [61, 85]\npivot = [30.5, 15]",
+)
+"""A flat arc on a narrow plate, whose last numeral is wide."""
+
+
+@settings(max_examples=100, deadline=None)
+@given(tight_dials())
+@example(WIDE_INSIDE)
+def test_a_numeral_slid_back_onto_the_plate_stays_clear_of_the_marks(text: str) -> None:
+    """One nearer than half the usual space to a mark's end has no clear place on the plate to slide to."""
+    made = laid(text)
+    space_mm, ends = made.scale.sizes.space_mm, MultiPoint(list(ends_of(made).values()))
+    plate = plate_of(made)
+    for one in stood(made):
+        if one.any_mm > 0.5 * space_mm:
+            continue
+        x1, y1, x2, y2 = ink(one.numeral.letters).bounds
+        for right, up in ways_along(one.numeral, max(x2 - x1, y2 - y1)):
+            there = box(x1 + right, y1 + up, x2 + right, y2 + up)
+            fits = plate.covers(there.buffer(EDGE_MM + 0.1, join_style="mitre"))
+            assert not fits or there.distance(ends) < 0.7 * space_mm, one.numeral.letters.text
 
 
 def test_end_numerals_slide_inwards_and_the_others_stand() -> None:

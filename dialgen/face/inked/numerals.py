@@ -92,7 +92,7 @@ def _beside(scale: RuledScale, outside: bool, rows: list[int], plate: Outliner) 
         row = _row([ink_points(word) for word in words], [stem for _, stem, _ in said])
         reaches_mm = _reaches(scale, words[0], row, tips, [before.get(mark) for mark in marks])
         shifts = row.ends + reaches_mm[:, None] * row.aways
-        shifts = shifts + slides(plate, row, shifts, tips, _OTHERS * scale.sizes.space_mm)
+        shifts = shifts + slides(plate, row, shifts, tips, _OTHERS * scale.sizes.space_mm + _pen_mm(words[0]))
         before.update(zip(marks, row.ink(shifts), strict=True))
         for mark, word, (dx, dy) in zip(marks, words, shifts.tolist(), strict=True):
             yield Numeral(mark, number, moved(word, dx, dy))
@@ -119,7 +119,7 @@ def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: li
         before: the ink of the row before at each mark, None where there is none.
     """
     sizes = scale.sizes
-    pen_mm = word.style.width_mm / 2 if word.style.stroke else 0.0
+    pen_mm = _pen_mm(word)
     reaches_mm = clear_of_ends(row, sizes.numbered_width_mm / 2, sizes.space_mm + pen_mm)
     reaches_mm = clear_of_others(row, reaches_mm, tips, _OTHERS * sizes.space_mm + pen_mm)
     space_mm, owners = ROW_SPACE * sizes.space_mm + 2 * pen_mm, row.owners
@@ -133,6 +133,10 @@ def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: li
         # Numerals in a row share a baseline.
         reaches_mm[:] = reaches_mm.max()
     return reaches_mm
+
+
+def _pen_mm(word: Letters) -> float:
+    return word.style.width_mm / 2 if word.style.stroke else 0.0
 
 
 def text_in_row(mark: Mark, row: int) -> str | None:

@@ -52,18 +52,21 @@ class Room:
         fields: the areas.
         cover: what is covered.
         margin_mm: how near to the edges of the fields nothing is free.
-        known: the raster of all this, where it is known already.
+        before: the room that this is without a box, and that box; None where it is nobody's rest.
     """
 
     fields: tuple[Field, ...]
     cover: Cover
     margin_mm: float
-    known: Raster | None = None
+    before: tuple[Room, Box] | None = None
 
     @cached_property
     def raster(self) -> Raster:
-        """The raster, laid out on first use."""
-        return self.known or rasterised(self.fields, self.cover, self.margin_mm)
+        """The raster, laid out on first use, and only once for all that is left of one room."""
+        if self.before is None:
+            return rasterised(self.fields, self.cover, self.margin_mm)
+        room, box = self.before
+        return room.raster.with_box(box)
 
     def free(self, at: Point, width_mm: float, height_mm: float) -> bool:
         """Return whether a box about its middle is free."""
@@ -75,8 +78,7 @@ class Room:
 
     def with_box(self, box: Box) -> Room:
         """Return the room without a box."""
-        known = self.raster.with_box(box) if self.known or "raster" in vars(self) else None
-        return Room(self.fields, self.cover.with_box(box), self.margin_mm, known)
+        return Room(self.fields, self.cover.with_box(box), self.margin_mm, (self, box))
 
     def best(
         self,

@@ -106,15 +106,23 @@ def rule(dial: Dial, plate: Outliner, hand_for: HandFor) -> tuple[tuple[RuledSca
 
 
 def _one_line_each(scales: Sequence[RuledScale]) -> tuple[RuledScale, ...]:
-    """Return the scales with every line drawn once: of those that share one, the widest draws it."""
+    """Return the scales with no line drawn twice: one that runs along another's leaves it to that."""
     found: list[RuledScale] = []
     for scale in scales:
-        sharing = [other for other in scales if other.line == scale.line]
-        widest = max(sharing, key=lambda other: float(np.ptp(other.ends_deg)))
-        single = all(other.look.line is LineForm.SINGLE for other in sharing)
+        longer = [other for other in scales if other is not scale and _carries(other, scale)]
+        # Of two that run alike the first draws the line.
+        drawn = any(not _carries(scale, other) or other in found for other in longer)
         plain = replace(scale, look=replace(scale.look, line=LineForm.NONE))
-        found.append(plain if single and scale is not widest else scale)
+        found.append(plain if drawn else scale)
     return tuple(found)
+
+
+def _carries(one: RuledScale, other: RuledScale) -> bool:
+    """Return whether the single line of one scale is all that another needs."""
+    singles = one.look.line is other.look.line is LineForm.SINGLE
+    own = other.spec.heavy or other.spec.effective or one.spec.effective
+    (low, high), (start, end) = np.sort(one.ends_deg), np.sort(other.ends_deg)
+    return bool(one.line == other.line and singles and not own and low <= start and end <= high)
 
 
 def scale_line(scale: Scale) -> ScaleLine:

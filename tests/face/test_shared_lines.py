@@ -19,7 +19,14 @@ stops = [-60, 60]
 size = [110, 84]
 pivot = [55, 12]
 """
-SCALE = '[[scale]]\nunit = "{unit}"\nfrom = 0\nto = {to}\ncircuit = {{ kind = "direct", full = {full} }}\n{keys}\n'
+SCALE = """
+[[scale]]
+unit = "{unit}"
+from = 0
+to = {to}
+circuit = {{ kind = "direct", full = {full} }}
+{keys}
+"""
 INSIDE = 'marks = "inward"\nnumerals = "inside"\n'
 
 

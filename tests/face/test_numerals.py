@@ -433,7 +433,8 @@ def test_a_numeral_slid_back_onto_the_plate_stays_clear_of_the_marks(text: str) 
         for right, up in ways_along(one.numeral, max(x2 - x1, y2 - y1)):
             there = box(x1 + right, y1 + up, x2 + right, y2 + up)
             fits = plate.covers(there.buffer(EDGE_MM + 0.1, join_style="mitre"))
-            assert not fits or there.distance(ends) < 0.7 * space_mm, one.numeral.letters.text
+            # The program asks for the pen's width besides, in single strokes.
+            assert not fits or there.distance(ends) < space_mm + 0.2, one.numeral.letters.text
 
 
 def test_end_numerals_slide_inwards_and_the_others_stand() -> None:

@@ -12,7 +12,7 @@ import pytest
 PACKAGE = Path(__file__).parents[1] / "dialgen"
 
 FLOORS = (
-    ("errors", "quantity", "drawing", "stage"),
+    ("errors", "quantity", "drawing", "stage", "roots"),
     ("lettering", "geometry", "circuit", "renderers", "templates"),
     ("ink", "looks", "symbols"),
     ("dialfile",),

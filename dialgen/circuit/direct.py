@@ -6,7 +6,8 @@ import math
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
-from dialgen.circuit.terminals import Terminals
+from dialgen.circuit.design import COIL, Design
+from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
 from dialgen.stage import Affine, Stage
 
@@ -15,7 +16,7 @@ FACE_END = "a bare value of the scale, or inf"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class Direct:
+class Direct(Circuit):
     """Deflection in proportion to the signal, from the resting value to the full one."""
 
     kind: ClassVar[str] = "direct"
@@ -43,3 +44,10 @@ class Direct:
         if not math.isfinite(width):
             raise InputError(f"there is no finite signal at full deflection, {full:g}; set full", ("full",))
         return Affine(1.0 / width, -rest_signal / width)
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return a design without parts: there is nothing to build."""
+        full = terminals.full_value if self.full is None else self.full
+        coil = terminals.coil
+        ohms = {} if coil.resistance is None else {COIL: coil.resistance}
+        return Design(kind=self.kind, range=terminals.signal(full), unit=terminals.unit or "", ohms=ohms)

@@ -2,16 +2,22 @@
 
 from __future__ import annotations
 
+import math
 import re
+from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
-from dialgen.circuit.terminals import CURRENT_KEY, Terminals
+from dialgen.circuit.built import BUILT_ABOVE
+from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
+from dialgen.circuit.network import Branch, Feed, solve
+from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, OHM_ABOVE, VOLT_ABOVE, Amount, shown
+from dialgen.quantity import AMPERE, OHM, VOLT_ABOVE, Amount, engineered, shown
 from dialgen.stage import Affine, Stage
 
 RATED = 'a bought shunt, "100 A/75 mV"'
+SHUNT, SWAMP, LEADS = "shunt", "swamp", "leads"
 _EQUAL = 1e-12
 _NEAR_MATCH = 0.005
 
@@ -45,13 +51,13 @@ def read_rating(text: object) -> Rating:
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class Shunt:
+class Shunt(Circuit):
     """A shunt across coil, swamping resistor and leads: designed, as built, or bought by its rating."""
 
     kind: ClassVar[str] = "shunt"
     takes: ClassVar[str | None] = "A"
     range: Annotated[Amount | None, AMPERE] = None
-    built: Annotated[Amount | None, OHM_ABOVE] = None
+    built: Annotated[Amount | None, BUILT_ABOVE] = None
     swamp: Annotated[Amount | None, OHM] = None
     leads: Annotated[Amount | None, OHM] = None
     rated: Annotated[Rating | None, RATED] = None
@@ -67,6 +73,38 @@ class Shunt:
         if self.built and not self.rated:
             shunt_ohm, branch_ohm = self.built.value, self._branch_ohm(terminals)
             return Affine(shunt_ohm / (shunt_ohm + branch_ohm) / coil_a)
+        ohms = self._designed(terminals)
+        shunt_ohm = self.built.value if self.built else ohms[SHUNT]
+        if math.isinf(shunt_ohm):
+            return Affine(1.0 / coil_a)
+        branch_ohm = ohms[COIL] + ohms[SWAMP] + ohms[LEADS]
+        return Affine(shunt_ohm / (shunt_ohm + branch_ohm) / coil_a)
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return shunt and swamping resistor; the shunt is infinite where the movement needs none."""
+        ohms, coil_a = self._designed(terminals), terminals.coil.current_a("a shunt")
+        range_a = terminals.range(self.range.value if self.range else None)
+        built = self.built.value if self.built else None
+        shunt = Part(name=SHUNT, ohms=ohms[SHUNT], built=built, given=self.rated is not None)
+        swamp = Part(name=SWAMP, ohms=ohms[SWAMP], given=self.swamp is not None)
+        return Design(
+            kind=self.kind,
+            range=range_a,
+            unit="A",
+            ohms=ohms,
+            parts=tuple(part for part in (shunt, swamp) if 0 < part.ohms < math.inf),
+            cases=(Case(name=engineered(range_a, "A"), signal=range_a, work=_worker(coil_a)),),
+            facts=_leads_fact(ohms),
+        )
+
+    def _branch_ohm(self, terminals: Terminals) -> float:
+        """Return the resistance of coil, leads and swamping resistor in series."""
+        parts = sum(part.value for part in (self.swamp, self.leads) if part)
+        return terminals.coil.resistance_ohm("a shunt") + parts
+
+    def _designed(self, terminals: Terminals) -> Mapping[str, float]:
+        """Return the ohms of every part as designed: a bought shunt's by its rating."""
+        coil_a = terminals.coil.current_a("a shunt")
         range_a = terminals.range(self.range.value if self.range else None)
         if range_a < coil_a * (1 - _EQUAL):
             raise InputError(
@@ -75,24 +113,23 @@ class Shunt:
                 ("range",),
                 CURRENT_KEY,
             )
-        if self.rated:
-            return self._rated_stage(self.rated, terminals, coil_a, range_a)
-        if range_a <= coil_a * (1 + _EQUAL):
-            return Affine(1.0 / coil_a)
+        none_needed = range_a <= coil_a * (1 + _EQUAL) and not self.rated
+        if none_needed and terminals.coil.resistance is None:
+            # The whole current goes through the coil, whatever its resistance.
+            return {SHUNT: math.inf, SWAMP: 0.0, LEADS: 0.0, COIL: 0.0}
         branch_ohm = self._branch_ohm(terminals)
-        shunt_ohm = coil_a * branch_ohm / (range_a - coil_a)
-        return Affine(shunt_ohm / (shunt_ohm + branch_ohm) / coil_a)
-
-    def _branch_ohm(self, terminals: Terminals) -> float:
-        """Return the resistance of coil, leads and swamping resistor in series."""
-        parts = sum(part.value for part in (self.swamp, self.leads) if part)
-        return terminals.coil.resistance_ohm("a shunt") + parts
-
-    def _rated_stage(self, rated: Rating, terminals: Terminals, coil_a: float, range_a: float) -> Stage:
-        known_ohm = self._branch_ohm(terminals)
-        swamp_ohm = 0.0 if self.swamp else self._designed_swamp(rated, coil_a, range_a, known_ohm)
-        shunt_ohm = self.built.value if self.built else rated.resistance_ohm
-        return Affine(shunt_ohm / (shunt_ohm + known_ohm + swamp_ohm) / coil_a)
+        leads_ohm = self.leads.value if self.leads else 0.0
+        swamp_ohm = self.swamp.value if self.swamp else 0.0
+        if none_needed:
+            shunt_ohm = math.inf
+        elif self.rated:
+            shunt_ohm = self.rated.resistance_ohm
+            if not self.swamp:
+                swamp_ohm = self._designed_swamp(self.rated, coil_a, range_a, branch_ohm)
+        else:
+            shunt_ohm = coil_a * branch_ohm / (range_a - coil_a)
+        coil_ohm = terminals.coil.resistance_ohm("a shunt")
+        return {SHUNT: shunt_ohm, SWAMP: swamp_ohm, LEADS: leads_ohm, COIL: coil_ohm}
 
     def _designed_swamp(self, rated: Rating, coil_a: float, range_a: float, known_ohm: float) -> float:
         swamp_ohm = rated.resistance_ohm * (range_a - coil_a) / coil_a - known_ohm
@@ -108,3 +145,27 @@ class Shunt:
                 ("range",),
             )
         return swamp_ohm
+
+
+def _leads_fact(ohms: Ohms) -> tuple[Fact, ...]:
+    if not ohms[LEADS]:
+        return ()
+    return (Fact(name="sense leads", value=ohms[LEADS], unit="Ω", note="copper, counted in the design"),)
+
+
+def _worker(coil_a: float) -> Callable[[Ohms, float], Working]:
+    def work(ohms: Ohms, signal_a: float) -> Working:
+        solved = solve(
+            (
+                Branch(SHUNT, "in", "out", ohms[SHUNT]),
+                Branch(SWAMP, "in", "swamped", ohms[SWAMP]),
+                Branch(LEADS, "swamped", "led", ohms[LEADS]),
+                Branch(COIL, "led", "out", ohms[COIL]),
+            ),
+            Feed("in", "out", signal_a),
+        )
+        return Working(
+            solved.loads[COIL].current_a / coil_a, solved.loads, solved.drop_v("in", "out")
+        )
+
+    return work

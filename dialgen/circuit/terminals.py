@@ -6,7 +6,8 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import ClassVar, Protocol
 
-from dialgen.errors import InputError
+from dialgen.circuit.design import Design
+from dialgen.errors import InputError, Remark
 from dialgen.stage import Stage
 
 CURRENT_KEY = ("movement", "current")
@@ -86,10 +87,18 @@ class Circuit(Protocol):
     takes: ClassVar[str | None]
 
     def stage(self, terminals: Terminals) -> Stage:
-        """Return the circuit as a stage from signal to drive.
+        """Return the circuit as a stage from signal to drive, with its parts as built.
 
         Raises:
             InputError: it cannot be built; keys are relative to the circuit's table, or start with
                 "movement" where the movement's own keys are at fault.
         """
         ...
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return its parts and how it works with any values of them; raises as `stage` does."""
+        ...
+
+    def remarks(self) -> tuple[Remark, ...]:
+        """Return what was assumed; keys are relative to the circuit's table."""
+        return ()

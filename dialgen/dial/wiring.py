@@ -82,7 +82,10 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     prefix, unit = split_unit(scale.unit)
     factor = 1.0 if law.takes_face_values else prefix
     span = (scale.start * factor, scale.end * factor)
-    stage = law.stage(span)
+    try:
+        stage, zero = law.stage(span, unit), law.zero(span, unit)
+    except InputError as error:
+        raise error.under(*key) from None
     circuit = scale.circuit or shared or Direct()
     values = sample_places(
         (scale.start, scale.end), _FORMULA_SAMPLES if isinstance(law, Formula) else SAMPLES
@@ -92,7 +95,6 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
     circuit_key: Key | None = (*key, "circuit") if scale.circuit else ("circuit",) if shared else None
     signal_unit = law.signal_unit(unit)
     _check_units(circuit, signal_unit, law, key)
-    zero = law.zero(span)
     terminals = Terminals(
         coil=coil,
         signal=lambda value: _signal(stage, value * factor),

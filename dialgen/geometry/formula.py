@@ -18,7 +18,7 @@ from typing import ClassVar
 import numpy as np
 
 from dialgen.errors import FormulaError
-from dialgen.geometry.roots import bracketed_roots
+from dialgen.roots import bracketed_roots
 from dialgen.geometry.sampling import sample_places
 from dialgen.stage import EVERYWHERE, Array, Span, Stage
 
@@ -66,11 +66,11 @@ class Formula:
         """Return None: the signal is in whatever SI unit the circuit takes."""
         return None
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the formula as a stage, followed on from ``span``."""
         return follow(compile_formula(self.signal), span)
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0 where the formula, followed on from the scale, reaches it; else None."""
         stage = follow(compile_formula(self.signal), span)
         places = np.append(stage.places, stage.domain[1])

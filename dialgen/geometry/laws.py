@@ -35,14 +35,17 @@ class Law(Protocol):
         """Return the unit of the signal on a scale whose SI unit is ``unit``; None is any."""
         ...
 
-    def stage(self, span: Span) -> Stage:
-        """Return the law as a stage, for a scale that runs over ``span``.
+    def stage(self, span: Span, unit: str) -> Stage:
+        """Return the law as a stage, for a scale that runs over ``span`` in ``unit``.
 
-        A formula is inverted about it; the other laws need no span.
+        A formula is inverted about the span; a sensor takes its temperature in the unit.
+
+        Raises:
+            InputError: the law has no meaning in this unit; keys are relative to the scale.
         """
         ...
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return the signal where nothing is applied, or None where the law never reaches it."""
         ...
 
@@ -78,13 +81,13 @@ class Linear:
         """Return the unit of ``per``, or the scale's own."""
         return self.per.unit if self.per else unit
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the straight line."""
         if self.per is None:
             return Affine(1.0)
         return Affine(self.per.value, self.at_zero.value if self.at_zero else 0.0)
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0."""
         return 0.0
 
@@ -116,14 +119,14 @@ class Power:
         """Return volts across a load, else a pure number (an exponent of 1 keeps the unit)."""
         return "V" if self.load else unit if self.exponent == 1 else ""
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return (load·value)^exponent; odd whole exponents also take negative values."""
         odd = self.exponent > 0 and self.exponent % 2 == 1
         return _PowerStage(
             self.exponent, self.load.value if self.load else 1.0, EVERYWHERE if odd else POSITIVE
         )
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0."""
         return 0.0
 
@@ -171,14 +174,14 @@ class Decibel:
         """Return the unit of the reference, volts across a load, or a pure number."""
         return "V" if self.load else self.reference.unit if self.reference else ""
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the exponential."""
         reference = self.reference.value if self.reference else 1.0
         if self.load:
             return _Exponential(math.sqrt(reference * self.load.value), 20.0)
         return _Exponential(reference, 20.0 if self.of == "amplitude" else 10.0)
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0, which stands at minus infinity decibels."""
         return 0.0
 
@@ -213,11 +216,11 @@ class Logarithmic:
         """Return a pure number."""
         return ""
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the logarithm."""
         return _Log10()
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return None: a logarithm has no zero signal of its own."""
         return None
 
@@ -250,11 +253,11 @@ class Reflection:
         """Return a pure number."""
         return ""
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the reflection coefficient."""
         return _Reflection()
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0, which stands at a ratio of 1."""
         return 0.0
 

@@ -52,11 +52,11 @@ class Table:
         except InputError as error:
             raise error.under("points") from None
 
-    def stage(self, span: Span) -> Stage:
+    def stage(self, span: Span, unit: str) -> Stage:
         """Return the curve through the points, going on along its end slopes."""
         return self._curve()
 
-    def zero(self, span: Span) -> float | None:
+    def zero(self, span: Span, unit: str) -> float | None:
         """Return 0 where the signals reach it, else None."""
         signals = self._curve().values
         return 0.0 if signals.min() <= 0 <= signals.max() else None

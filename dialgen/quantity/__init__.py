@@ -20,11 +20,11 @@ from dialgen.quantity.reading import (
     read_length,
     read_number,
 )
-from dialgen.quantity.showing import plain_number, shown
+from dialgen.quantity.showing import engineered, plain_number, shown
 from dialgen.quantity.units import folded_unit, shown_unit, split_unit
 
 __all__ = [
     "AMPERE", "ANY_CURRENT", "OHM", "OHM_ABOVE", "SIGNAL", "SIGNAL_ABOVE", "VOLT", "VOLT_ABOVE", "Amount",
-    "Measure", "bare_number", "folded_unit", "plain_number", "read_length", "read_number", "shown",
+    "Measure", "bare_number", "engineered", "folded_unit", "plain_number", "read_length", "read_number", "shown",
     "shown_unit", "split_unit",
 ]  # fmt: skip

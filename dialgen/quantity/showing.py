@@ -7,6 +7,7 @@ import math
 from decimal import Decimal
 
 _LONGEST_SHOWN = 40
+_BY_THOUSANDS = {-4: "p", -3: "n", -2: "µ", -1: "m", 0: "", 1: "k", 2: "M", 3: "G"}
 
 
 def plain_number(value: float) -> str:
@@ -19,6 +20,20 @@ def plain_number(value: float) -> str:
         return "−∞" if value < 0 else "∞"
     text = f"{Decimal(f'{value:.12g}'):f}"
     return text.replace("-", "−") if text != "-0" else "0"
+
+
+def engineered(value: float, unit: str, digits: int = 5) -> str:
+    """Return an amount with the SI prefix that leaves one to three figures before the point.
+
+    >>> engineered(0.001875046876, "Ω"), engineered(40.0, "A"), engineered(0.0, "W")
+    ('1.875 mΩ', '40 A', '0 W')
+    """
+    if not value or not math.isfinite(value):
+        return f"{plain_number(value)} {unit}"
+    rounded = float(f"{value:.{digits}g}")
+    power = min(max(math.floor(math.log10(abs(rounded)) / 3 + 1e-12), min(_BY_THOUSANDS)), max(_BY_THOUSANDS))
+    mantissa = float(f"{rounded:.{digits}g}") / 10.0 ** (3 * power)
+    return f"{plain_number(float(f'{mantissa:.{digits}g}'))} {_BY_THOUSANDS[power]}{unit}"
 
 
 def shown(given: object) -> str:

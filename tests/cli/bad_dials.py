@@ -593,6 +593,9 @@ _FACE = (
      "scale[1].look.font", "none.ttf"),
     ("font in single strokes", 'ink = "black"', f'font = "{_FONT}"\nlettering = "single stroke"', "13:1",
      "look.font", "outlines, not single strokes"),
+    ("font of a scale in single strokes", "{ letter_scale = 1.1 }",
+     f'{{ font = "{_FONT}", lettering = "single stroke" }}', "26:10", "scale[1].look.font",
+     "outlines, not single strokes"),
     # a scale's class, stretches and rows
     ("class of nothing", "class = 1.5", "class = 0", "21:1", "scale[1].class",
      "a class of 0 is out of bounds; write a number from 0.005 to 20"),

@@ -16,7 +16,7 @@ from dialgen.face.inked.numerals import ROW_SPACE, Numeral, numerals
 from dialgen.face.plate import outliner
 from dialgen.looks import LOOKS
 
-TRUE_MM, TRUE_CAPS, ROWS_TRUE_CAPS = 0.03, 0.01, 0.12
+TRUE_MM, TRUE_CAPS, ROWS_TRUE_CAPS = 0.03, 0.01, 0.015
 """How true distances are: in millimetres, or in heights of a large numeral; between rows in heights."""
 EDGE_MM = 0.8
 LARGE = "size = [600, 600]\npivot = [300, 300]"

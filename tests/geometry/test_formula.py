@@ -296,4 +296,4 @@ def test_formula_to_infinity_is_inverted_all_the_way():
 )
 def test_zero_signal_is_known_only_where_it_is_reached(text, span, zero):
     """A formula has a zero signal where it reaches one, and None where it never does."""
-    assert Formula(signal=text).zero(span) == zero
+    assert Formula(signal=text).zero(span, "") == zero

@@ -21,7 +21,7 @@ ANY_SPAN = (0.0, 1.0)
 
 def signal(law, value):
     """The signal of a law at one value."""
-    return float(law.stage(ANY_SPAN).forward(np.array(value)))
+    return float(law.stage(ANY_SPAN, "").forward(np.array(value)))
 
 
 # 0 dBu is the voltage of 1 mW in 600 ohm; computed from the definition in arithmetic apart from this
@@ -104,7 +104,7 @@ def test_reflection_of_standing_wave_ratios(ratio, gamma, return_loss_db):
 
 def test_reflection_ends():
     """A ratio of 1 reflects nothing and an infinite one everything, both ways round."""
-    stage = Reflection().stage(ANY_SPAN)
+    stage = Reflection().stage(ANY_SPAN, "")
     assert stage.forward(np.array([1.0, math.inf])).tolist() == [0.0, 1.0]
     assert stage.inverse(np.array([0.0, 1.0])).tolist() == [1.0, math.inf]
 
@@ -137,7 +137,7 @@ def test_power_equals_mpmath(value, exponent, falls):
 @given(st.sampled_from((1.0, 3.0, 5.0)), st.floats(-10.0, 10.0))
 def test_odd_powers_take_both_signs(exponent, value):
     """An odd whole exponent takes negative values too, and its inverse gives them back."""
-    stage = Power(exponent=exponent).stage(ANY_SPAN)
+    stage = Power(exponent=exponent).stage(ANY_SPAN, "")
     made = float(stage.forward(np.array(value)))
     assert made == pytest.approx(value ** int(exponent), rel=1e-13)
     assert float(stage.inverse(np.array(made))) == pytest.approx(value, rel=1e-13, abs=1e-60)
@@ -146,7 +146,7 @@ def test_odd_powers_take_both_signs(exponent, value):
 @given(st.floats(1e-6, 1e6))
 def test_logarithmic_equals_mpmath(value):
     """The logarithm is mpmath's, and its inverse gives the value back."""
-    stage = Logarithmic().stage(ANY_SPAN)
+    stage = Logarithmic().stage(ANY_SPAN, "")
     made = float(stage.forward(np.array(value)))
     assert made == pytest.approx(float(mpmath.log10(value)), rel=1e-14, abs=1e-16)
     assert float(stage.inverse(np.array(made))) == pytest.approx(value, rel=1e-13)
@@ -188,14 +188,14 @@ def test_table_passes_through_its_points_in_their_unit():
 )
 def test_table_has_a_zero_only_where_its_points_reach_it(points, zero):
     """A table's zero signal is 0 where its points reach it, and None elsewhere."""
-    assert Table(points=points).zero(ANY_SPAN) == zero
+    assert Table(points=points).zero(ANY_SPAN, "") == zero
 
 
 def test_other_zeros():
     """Every other law rests at zero signal, but the logarithm, which has none."""
     for law in (Linear(), Power(exponent=0.5), Decibel(), Reflection()):
-        assert law.zero(ANY_SPAN) == 0.0
-    assert Logarithmic().zero(ANY_SPAN) is None
+        assert law.zero(ANY_SPAN, "") == 0.0
+    assert Logarithmic().zero(ANY_SPAN, "") is None
 
 
 @pytest.mark.parametrize(

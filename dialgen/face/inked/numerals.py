@@ -125,8 +125,7 @@ def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: li
     space_mm, owners = ROW_SPACE * sizes.space_mm + 2 * pen_mm, row.owners
     for i, ink in enumerate(before):
         if ink is not None:
-            # Every other point of both is near enough, and a quarter of the work.
-            points, obstacles = row.points[owners == i][::2], (ink - row.ends[i])[::2]
+            points, obstacles = row.points[owners == i], ink - row.ends[i]
             away = (float(row.aways[i, 0]), float(row.aways[i, 1]))
             reaches_mm[i] = clear_of_ink(points, obstacles, away, space_mm)
     if isinstance(scale.line, StraightLine) or scale.look.turn is Turn.ACROSS:

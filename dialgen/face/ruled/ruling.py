@@ -142,7 +142,7 @@ def _rule_scale(scale: ScaleDial, file: DialFile, plate: Outliner, hand_for: Han
     check_meets(line, ends, [spec.start, spec.end], spec, key)
     look = look_of(file.look, spec.look)
     sizes = sizes_for(spec, look, abs(float(np.diff(line.along(ends))[0])))
-    rows, hand = captions(spec, look, _largest(scale, ends)), hand_for(look)
+    rows, hand = captions(spec, look, _largest(scale, ends)), _hand(hand_for, look, spec, key)
     ruler = survey(scale, line, ends, look, sizes, rows, partial(numeral_width, hand=hand))
     asked = _asked(spec, key)
     bare = blank_from_zero(scale, file.movement)
@@ -155,6 +155,14 @@ def _rule_scale(scale: ScaleDial, file: DialFile, plate: Outliner, hand_for: Han
     further = {v: _further(rows, v) for v in numbered if v not in own}
     placed = _placed(scale, line, plate, marks, labels, further)
     return RuledScale(scale, line, ends, placed, look, sizes, rows, hand)
+
+
+def _hand(hand_for: HandFor, look: Look, spec: Scale, key: Key) -> Hand:
+    try:
+        return hand_for(look)
+    except InputError as error:
+        own = {"font", "lettering"} & spec.look.changes.keys()
+        raise error.under(*(key if own else ())) from None
 
 
 def _further(rows: Sequence[Caption], value: float) -> tuple[str, ...]:

@@ -5,8 +5,9 @@ from __future__ import annotations
 from collections.abc import Callable
 
 import numpy as np
+from numpy.typing import NDArray
 
-from dialgen.stage import Array
+Array = NDArray[np.float64]
 
 _STEPS = 120
 

@@ -6,7 +6,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 from scipy.optimize import brentq
 
-from dialgen.geometry.roots import bracketed_roots
+from dialgen.roots import bracketed_roots
 
 FUNCTIONS = {
     "cubic": lambda x: x**3 + x,

@@ -41,11 +41,11 @@ def read_built_each(given: object) -> tuple[Amount, ...]:
         ValueError: as `read_built` does, with the place in the list.
     """
     if not isinstance(given, list):
-        return (read_built_above(given),)
+        return (read_built(given),)
     found = []
     for number, each in enumerate(given, 1):
         try:
-            found.append(read_built_above(each))
+            found.append(read_built(each))
         except ValueError as error:
             raise ValueError(f"number {number}: {error}") from None
     if not found:

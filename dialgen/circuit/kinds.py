@@ -6,7 +6,18 @@ from dialgen.circuit.direct import Direct
 from dialgen.circuit.multiplier import Multiplier
 from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.shunt import Shunt
+from dialgen.circuit.transformer import CurrentTransformer
+from dialgen.circuit.universal import UniversalShunt
 
 CIRCUITS: dict[str, type] = {
-    circuit.kind: circuit for circuit in (Direct, Shunt, Multiplier, SeriesOhmmeter, ShuntOhmmeter)
+    circuit.kind: circuit
+    for circuit in (
+        Direct,
+        Shunt,
+        UniversalShunt,
+        CurrentTransformer,
+        Multiplier,
+        SeriesOhmmeter,
+        ShuntOhmmeter,
+    )
 }

@@ -35,7 +35,7 @@ def row_remarks(scale: Scale, key: Key, own: Wiring, shared: Circuit | None, coi
         if row.circuit is None or isinstance(scale.law, Observed):
             continue
         there = (*key, "also", i)
-        wiring = _wired(scale, scale.law, row, there, shared, coil)
+        wiring = row_wiring(scale, scale.law, row, there, shared, coil)
         off = float(np.nanmax(np.abs(_drives(wiring, values * row.times) - drives)))
         if off > _OFF:
             yield Remark(
@@ -45,7 +45,12 @@ def row_remarks(scale: Scale, key: Key, own: Wiring, shared: Circuit | None, coi
             )
 
 
-def _wired(scale: Scale, law: Law, row: Row, there: Key, shared: Circuit | None, coil: Coil) -> Wiring:
+def row_wiring(scale: Scale, law: Law, row: Row, there: Key, shared: Circuit | None, coil: Coil) -> Wiring:
+    """Return the way from a row's values to the drive, as if it were a scale of its own.
+
+    Raises:
+        InputError: its circuit does not go with the scale's law and the row's range.
+    """
     ranged = scale.model_copy(
         update={
             "start": scale.start * row.times,

@@ -38,6 +38,7 @@ class Wiring:
         drives: the drives over the scale, from its first value on.
         terminals: what the circuit was built from.
         circuit: the circuit itself.
+        circuit_key: where it stands in the file; None where it is direct for want of one.
         remarks: what was assumed.
     """
 
@@ -45,17 +46,38 @@ class Wiring:
     drives: Array
     terminals: Terminals
     circuit: Circuit
+    circuit_key: Key | None
     remarks: tuple[Remark, ...]
+
+    @property
+    def as_designed(self) -> Circuit:
+        """The circuit with every part as designed, whatever was built."""
+        circuit: Any = self.circuit
+        made: Circuit = replace(circuit, built=()) if self.built else circuit
+        return made
+
+    @property
+    def built(self) -> bool:
+        """Whether the file says what was built."""
+        return bool(getattr(self.circuit, "built", None))
 
     def designed(self, values: Array) -> Array:
         """Return the drives at ``values`` of the circuit as designed, whatever was built."""
-        circuit: Any = self.circuit
-        as_designed = replace(circuit, built=None) if getattr(circuit, "built", None) else circuit
+        return self.as_designed.stage(self.terminals).forward(self._signals(values))
+
+    def indicated(self, values: Array) -> Array:
+        """Return what a face drawn for the designed circuit shows where ``values`` are applied."""
+        ideal = self.as_designed.stage(self.terminals)
+        step = ideal.inverse(self.links[-1].stage.forward(self._signals(values)))
+        for each in reversed(self.links[:-1]):
+            step = each.stage.inverse(step)
+        return step
+
+    def _signals(self, values: Array) -> Array:
         step = values
         for each in self.links[:-1]:
             step = each.stage.forward(step)
-        drives: Array = as_designed.stage(self.terminals).forward(step)
-        return drives
+        return step
 
 
 def link(stage: Stage, values: Array) -> tuple[Link, Array]:
@@ -112,7 +134,9 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         drives=drives,
         terminals=terminals,
         circuit=circuit,
+        circuit_key=circuit_key,
         remarks=(
+            *_assumed(circuit, circuit_key or key),
             *_own_current(circuit, terminals, _under(circuit_key, key, "full")),
             *past_points(law, scale, key),
         ),
@@ -201,6 +225,10 @@ def _placed(error: InputError, circuit_key: Key | None, key: Key) -> InputError:
 
 def _under(circuit_key: Key | None, key: Key, name: str) -> Key:
     return (*circuit_key, name) if circuit_key else (*key, {"full": "to", "rest": "from"}.get(name, name))
+
+
+def _assumed(circuit: Circuit, key: Key) -> tuple[Remark, ...]:
+    return tuple(replace(remark, key=(*key, *remark.key)) for remark in circuit.remarks())
 
 
 def _own_current(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Remark, ...]:

@@ -8,8 +8,18 @@ from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
 from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
+from dialgen.circuit.built import (
+    BUILT,
+    BUILT_ABOVE,
+    BUILT_EACH,
+    read_built,
+    read_built_above,
+    read_built_each,
+)
 from dialgen.circuit.direct import FACE_END, FACE_VALUE
+from dialgen.circuit.ranges import AMPERE_RANGES, VOLT_RANGES, read_current_ranges, read_voltage_ranges
 from dialgen.circuit.shunt import RATED, read_rating
+from dialgen.circuit.transformer import RATIO, read_ratio
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Flaws, nearest_key
 from dialgen.errors import InputError
@@ -21,6 +31,12 @@ _NOTES: dict[object, fields.Reader] = {
     FACE_VALUE: fields.face_value,
     FACE_END: fields.face_end,
     RATED: read_rating,
+    RATIO: read_ratio,
+    BUILT: read_built,
+    BUILT_ABOVE: read_built_above,
+    BUILT_EACH: read_built_each,
+    AMPERE_RANGES: read_current_ranges,
+    VOLT_RANGES: read_voltage_ranges,
     SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
     FACE_POINTS: fields.points(
         fields.face_end, fields.number("a position", -_MOST, _MOST), "[[0, -44], [10, -20.5]]"
@@ -102,6 +118,8 @@ def _reader(name: str, hint: object) -> fields.Reader:
         return note.read if isinstance(note, Measure) else _NOTES[note]
     if get_origin(hint) is Literal:
         return fields.one_of(*get_args(hint))
+    if hint is bool:
+        return fields.true_or_false
     if hint is str:
         return fields.formula_text
     if hint is float:

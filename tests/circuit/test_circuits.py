@@ -111,14 +111,14 @@ MULTIPLIERS = [
 def test_textbook_multipliers_give_full_deflection(coil_a, coil_ohm, range_v, multiplier_ohm):
     """The printed multiplier, as built, drives the coil fully at its range, as does the designed one."""
     coil = {"coil_a": coil_a, "coil_ohm": coil_ohm}
-    assert drive(Multiplier(built=ohm(multiplier_ohm)), range_v, **coil) == pytest.approx(1.0, rel=1e-12)
+    assert drive(Multiplier(built=(ohm(multiplier_ohm),)), range_v, **coil) == pytest.approx(1.0, rel=1e-12)
     assert drive(Multiplier(range=volt(range_v)), range_v / 4, **coil) == pytest.approx(0.25, rel=1e-12)
 
 
 def test_bare_movement_as_a_voltmeter():
     """LIEC: 1 mA in 500 ohm is a 0.5 V voltmeter, so its multiplier is nothing."""
     assert drive(Multiplier(range=volt(0.5)), 0.5) == pytest.approx(1.0)
-    assert drive(Multiplier(built=ohm(0.0)), 0.5) == pytest.approx(1.0)
+    assert drive(Multiplier(built=(ohm(0.0),)), 0.5) == pytest.approx(1.0)
 
 
 # LIEC, "Ohmmeter design": 9 V, 1 mA: half scale 9 kΩ, a quarter at 27 kΩ, three quarters at 3 kΩ.

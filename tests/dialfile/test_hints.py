@@ -39,7 +39,7 @@ SLIPS = [
         'circuit = "shunt"',
         'circuit = { kind = "direct", range = "3 A" }',
         "12:30: scale[1].circuit.range: ",
-        'it goes with kind = "shunt" or "multiplier"',
+        'it goes with kind = "shunt" or "universal shunt" or "',
     ),
     (
         "radius = 44",

@@ -26,6 +26,7 @@ _CURRENTS: Mapping[str, Mapping[str, str]] = {
     "moving coil": {
         "direct": "dc",
         "shunt": "dc",
+        "universal shunt": "dc",
         "multiplier": "dc",
         "series ohmmeter": "dc",
         "shunt ohmmeter": "dc",

@@ -1,0 +1,105 @@
+"""The circuits that a dial's scales and rows stand on, each once, with their designs."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterator
+from dataclasses import dataclass, replace
+from typing import Any
+
+from dialgen.circuit.design import Design
+from dialgen.circuit.terminals import Circuit, Coil, Terminals
+from dialgen.dial.build import Dial, ScaleDial
+from dialgen.dial.rows import row_wiring
+from dialgen.dial.wiring import Wiring
+from dialgen.errors import InputError, Key, Refused
+from dialgen.geometry.points import Observed
+from dialgen.quantity import Amount, split_unit
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Designed:
+    """One circuit of a dial.
+
+    Args:
+        key: where it stands in the file; a scale's own place where it is direct for want of one.
+        scale: the first scale that it serves, counted from 1.
+        also: the further row of that scale that it serves, counted from 1; 0 is the scale itself.
+        wiring: the scale's way through it; None where the finished circuit was observed.
+        design: its parts.
+        reswamped: the design with another swamping resistor, in ohms; None where it takes none.
+    """
+
+    key: Key
+    scale: int
+    also: int
+    wiring: Wiring | None
+    design: Design
+    reswamped: Callable[[float], Design] | None
+
+
+def designs(dial: Dial) -> tuple[Designed, ...]:
+    """Return the circuits of a dial in the order of its scales, each once.
+
+    A circuit that serves several scales counts once for each range it is designed for.
+
+    Raises:
+        Refused: circuits that cannot be designed, each with its keys.
+    """
+    found: dict[tuple[Key, float | None], Designed] = {}
+    errors: list[InputError] = []
+    for number, scale in enumerate(dial.scales, 1):
+        for also, key, circuit, terminals, wiring in _circuits(dial, scale):
+            try:
+                made = _designed(key, number, also, circuit, terminals, wiring)
+            except InputError as error:
+                errors.append(_placed(error, key))
+            else:
+                found.setdefault((key, made.design.range), made)
+    if errors:
+        raise Refused(errors)
+    return tuple(found.values())
+
+
+def _circuits(dial: Dial, scale: ScaleDial) -> Iterator[tuple[int, Key, Circuit, Terminals, Wiring | None]]:
+    """Yield the circuit of a scale and those of its further rows."""
+    file, spec, own = dial.file, scale.spec, scale.wiring
+    coil = Coil(current=file.movement.current, resistance=file.movement.resistance)
+    if own is not None:
+        yield 0, own.circuit_key or scale.key, own.circuit, own.terminals, own
+    elif (circuit := spec.circuit or file.circuit) is not None:
+        key: Key = (*scale.key, "circuit") if spec.circuit else ("circuit",)
+        yield 0, key, circuit, _seen_only(coil, spec.end, spec.unit), None
+    for i, row in enumerate(spec.also):
+        if row.circuit is not None and not isinstance(spec.law, Observed):
+            there = (*scale.key, "also", i)
+            wiring = row_wiring(spec, spec.law, row, there, file.circuit, coil)
+            yield i + 1, (*there, "circuit"), row.circuit, wiring.terminals, wiring
+
+
+def _seen_only(coil: Coil, full_value: float, unit: str) -> Terminals:
+    """Return the terminals behind an observed scale, whose law is not known apart from its circuit."""
+    factor, si_unit = split_unit(unit)
+    return Terminals(
+        coil=coil,
+        signal=lambda value: value * factor,
+        rest_signal=0.0,
+        full_value=full_value,
+        unit=si_unit,
+    )
+
+
+def _designed(
+    key: Key, number: int, also: int, circuit: Circuit, terminals: Terminals, wiring: Wiring | None
+) -> Designed:
+    def reswamped(swamp_ohm: float) -> Design:
+        changed: Any = circuit
+        made: Design = replace(changed, swamp=Amount(swamp_ohm, "Ω")).design(terminals)
+        return made
+
+    takes_swamp = hasattr(circuit, "swamp")
+    return Designed(key, number, also, wiring, circuit.design(terminals), reswamped if takes_swamp else None)
+
+
+def _placed(error: InputError, key: Key) -> InputError:
+    error.keys = tuple(k if k[:1] == ("movement",) else (*key, *k) for k in error.keys)
+    return error

@@ -11,6 +11,7 @@ from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.dial.build import Dial, ScaleDial
 from dialgen.dial.rows import row_wiring
 from dialgen.dial.wiring import Wiring
+from dialgen.dialfile.models import Scale
 from dialgen.errors import InputError, Key, Refused
 from dialgen.geometry.points import Observed
 from dialgen.quantity import Amount, split_unit
@@ -68,7 +69,7 @@ def _circuits(dial: Dial, scale: ScaleDial) -> Iterator[tuple[int, Key, Circuit,
         yield 0, own.circuit_key or scale.key, own.circuit, own.terminals, own
     elif (circuit := spec.circuit or file.circuit) is not None:
         key: Key = (*scale.key, "circuit") if spec.circuit else ("circuit",)
-        yield 0, key, circuit, _seen_only(coil, spec.end, spec.unit), None
+        yield 0, key, circuit, _seen_only(circuit, coil, spec), None
     for i, row in enumerate(spec.also):
         if row.circuit is not None and not isinstance(spec.law, Observed):
             there = (*scale.key, "also", i)
@@ -76,16 +77,18 @@ def _circuits(dial: Dial, scale: ScaleDial) -> Iterator[tuple[int, Key, Circuit,
             yield i + 1, (*there, "circuit"), row.circuit, wiring.terminals, wiring
 
 
-def _seen_only(coil: Coil, full_value: float, unit: str) -> Terminals:
-    """Return the terminals behind an observed scale, whose law is not known apart from its circuit."""
-    factor, si_unit = split_unit(unit)
-    return Terminals(
-        coil=coil,
-        signal=lambda value: value * factor,
-        rest_signal=0.0,
-        full_value=full_value,
-        unit=si_unit,
-    )
+def _seen_only(circuit: Circuit, coil: Coil, scale: Scale) -> Terminals:
+    """Return the terminals behind an observed scale, whose law is not known: only its own values are."""
+    factor, unit = split_unit(scale.unit)
+
+    def signal(value: float) -> float:
+        if circuit.takes not in (None, unit):
+            raise InputError(
+                "the scale was observed, so no signal is known to take the range from; give range", ("range",)
+            )
+        return value * factor
+
+    return Terminals(coil=coil, signal=signal, rest_signal=0.0, full_value=scale.end, unit=unit)
 
 
 def _designed(

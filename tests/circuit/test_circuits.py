@@ -11,6 +11,7 @@ import numpy as np
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
+from kirchhoff import coil_current
 
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.kinds import CIRCUITS
@@ -51,26 +52,6 @@ def volt(value):
 def ampere(value):
     """A current."""
     return Amount(value, "A")
-
-
-def coil_current(conductances, sources, coil):
-    """The current in one branch of a network, by nodal analysis.
-
-    ``conductances`` are (node, node, siemens), node 0 the reference; ``sources`` are (node, amperes)
-    into nodes; ``coil`` is the branch asked for.
-    """
-    count = max(max(a, b) for a, b, _ in conductances)
-    matrix, vector = np.zeros((count + 1, count + 1)), np.zeros(count + 1)
-    for a, b, g in conductances:
-        matrix[a, a] += g
-        matrix[b, b] += g
-        matrix[a, b] -= g
-        matrix[b, a] -= g
-    for node, current in sources:
-        vector[node] += current
-    volts = np.concatenate(([0.0], np.linalg.solve(matrix[1:, 1:], vector[1:])))
-    a, b, g = coil
-    return float((volts[a] - volts[b]) * g)
 
 
 # LIEC, "Ammeter design": 1 mA, 500 ohm; the shunts for 0.1, 1, 5, 10 and 100 A (5.00005 mΩ printed).

@@ -5,21 +5,22 @@ from __future__ import annotations
 import errno
 import os
 import shutil
-from collections.abc import Iterable, Sequence
+from collections.abc import Callable, Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 from os import PathLike, fspath
 from pathlib import Path
-from typing import overload
+from typing import TYPE_CHECKING, overload
 
 import numpy as np
 from numpy.typing import ArrayLike
 
 from dialgen import dialfile
 from dialgen.dial import Chain, Dial, attempt
+from dialgen.dial.designs import Designed, designs
 from dialgen.dialfile import Source
 from dialgen.drawing import Drawing, Purpose
-from dialgen.errors import DialFileError, Fault, Finding, InputError, OutputError, Remark
+from dialgen.errors import DialFileError, Fault, Finding, InputError, OutputError, Refused, Remark
 from dialgen.face.compose import compose
 from dialgen.face.fitted.openings import check_openings
 from dialgen.face.laid import check_laid
@@ -29,8 +30,12 @@ from dialgen.face.review import Finished, review
 from dialgen.face.ruled.ruling import RuledScale, rule
 from dialgen.lettering import Hand, hand
 from dialgen.looks import Lettering, Look
+from dialgen.quantity import engineered
 from dialgen.renderers import Options, render
 from dialgen.stage import Array
+
+if TYPE_CHECKING:
+    from dialgen.parts.bill import Bill, Drawer
 
 DEFAULT_MARGIN_MM = 3.0
 
@@ -109,6 +114,76 @@ class Face:
         """Return what should be known of the dial whatever its face looks like, such as an assumed diode."""
         remarks = self.dial.remarks
         return tuple(dict.fromkeys(self.source.fault(remark.key, remark.message) for remark in remarks))
+
+    @cached_property
+    def circuits(self) -> tuple[Designed, ...]:
+        """The circuits that the scales and their rows stand on, each once.
+
+        Raises:
+            DialFileError: circuits that cannot be designed, with their places.
+        """
+        try:
+            return designs(self.dial)
+        except Refused as refused:
+            raise self.source.refusal(self.source.fault_of(e) for e in refused.errors) from None
+
+    def drawer(self, instead: Mapping[str, object] | None = None) -> Drawer:
+        """Return the maker's drawer as the file has it, with some of its keys said instead.
+
+        Raises:
+            InputError: one of ``instead`` is wrong.
+        """
+        from dialgen.dialfile.parts import drawer
+
+        return drawer(self.dial.file.parts, instead or {})
+
+    def bill(
+        self,
+        circuit: Designed,
+        drawer: Drawer | None = None,
+        progress: Callable[[str], Callable[[int, int], None]] | None = None,
+    ) -> Bill:
+        """Return what the bench is told of one of `circuits`: parts, heat, drift, cautions.
+
+        Args:
+            circuit: which one.
+            drawer: what the maker has; the file's own where it is left out.
+            progress: given a part's name, what is told how far the search for it in the drawer is.
+
+        Raises:
+            InputError: a wanted drift that nothing brings.
+        """
+        from dialgen.parts.bill import bill
+
+        movement = self.dial.file.movement.kind
+        return bill(
+            circuit.design, drawer or self.drawer(), movement, reswamped=circuit.reswamped, progress=progress
+        )
+
+    def old_face(self, circuit: Designed) -> tuple[tuple[float, float], ...]:
+        """Return what a face drawn for the exact values shows at its numbered marks, as built.
+
+        Pairs of applied and indicated value; none where nothing was built, or at an infinite mark.
+        """
+        wiring = circuit.wiring
+        if wiring is None or not wiring.built or circuit.also:
+            return ()
+        marks = self.scales[circuit.scale - 1].marks
+        values = [m.value for m in marks if m.rank == "numbered" and np.isfinite(m.value)]
+        shown = wiring.indicated(np.array(values))
+        return tuple(zip(values, shown.tolist(), strict=True))
+
+    def schematic(self, circuit: Designed) -> Drawing:
+        """Return the picture of one of `circuits` as a display list."""
+        from dialgen.schematic import draw
+
+        movement = self.dial.file.movement
+        coil = ((movement.current, "A"), (movement.resistance, "Ω"))
+        return draw(
+            circuit.design,
+            title=self.dial.file.dial.name or "",
+            coil_text=" ".join(engineered(value, unit) for value, unit in coil if value is not None),
+        )
 
     def render(
         self,

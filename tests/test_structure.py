@@ -14,7 +14,7 @@ PACKAGE = Path(__file__).parents[1] / "dialgen"
 FLOORS = (
     ("errors", "quantity", "drawing", "stage", "roots"),
     ("lettering", "geometry", "circuit", "renderers", "templates"),
-    ("ink", "looks", "symbols"),
+    ("ink", "looks", "symbols", "parts", "schematic"),
     ("dialfile",),
     ("dial",),
     ("face",),

@@ -2,14 +2,18 @@
 
 from __future__ import annotations
 
+from typing import Any
+
+from dialgen.circuit.bridge import Bridge
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.multiplier import Multiplier
 from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.rectifier import Rectifier
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.transformer import CurrentTransformer
 from dialgen.circuit.universal import UniversalShunt
 
-CIRCUITS: dict[str, type] = {
+CIRCUITS: dict[str, type[Any]] = {
     circuit.kind: circuit
     for circuit in (
         Direct,
@@ -17,7 +21,9 @@ CIRCUITS: dict[str, type] = {
         UniversalShunt,
         CurrentTransformer,
         Multiplier,
+        Rectifier,
         SeriesOhmmeter,
         ShuntOhmmeter,
+        Bridge,
     )
 }

@@ -4,55 +4,171 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
-from typing import Annotated, ClassVar
+from typing import Annotated, ClassVar, Literal
 
 import numpy as np
 
-from dialgen.circuit.terminals import Terminals
+from dialgen.circuit.cell import cell_of, check_cell, undesigned
+from dialgen.circuit.design import COIL, Design
+from dialgen.circuit.series_ohmmeter import Chain, range_name, series_design
+from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
+from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount
+from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered, read_number, shown
 from dialgen.stage import Array, Span, Stage
+
+TIMES = "the ranges of one ohms scale, one or a list"
+_MOST_RANGES = 12
+_LEAST_TIMES, _MOST_TIMES = 1e-3, 1e6
+_ROUND = 1e-9
+
+
+def read_times(given: object) -> tuple[float, ...]:
+    """Return what the scale's readings are multiplied by on each range: ×1 first, then ascending.
+
+    Raises:
+        ValueError: not a number or a list of different numbers above zero.
+
+    >>> read_times([100, 10, 1]), read_times(10)
+    ((1.0, 10.0, 100.0), (10.0,))
+    """
+    listed = given if isinstance(given, list) else [given]
+    if not 1 <= len(listed) <= _MOST_RANGES:
+        raise ValueError(
+            f"{len(listed)} ranges on one scale; write 1 to {_MOST_RANGES}, such as [1, 10, 100]"
+        )
+    found = [read_number(each, "times") for each in listed]
+    for times in found:
+        if not _LEAST_TIMES <= times <= _MOST_TIMES:
+            raise ValueError(
+                f"a range of {times:g} times the scale is out of bounds; "
+                f"write {_LEAST_TIMES:g} to {_MOST_TIMES:g}, such as [1, 10, 100]"
+            )
+    if len(set(found)) < len(found):
+        raise ValueError(f"{shown(given)} has a range twice; list each once")
+    return tuple(sorted(found, key=lambda times: (times != 1.0, times)))
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class SeriesOhmmeter:
-    """Full deflection at zero ohms, half of it where the unknown equals the inner resistance."""
+class SeriesOhmmeter(Circuit):
+    """Full deflection at zero ohms, half of it where the unknown equals the inner resistance.
+
+    The scale is that of the range ×1; on ×k half scale is k times ``half``.  ``zero`` says where the
+    zero adjuster is, across the coil or in series with it, and ``worn`` what the battery gives at the
+    end of its life.
+    """
 
     kind: ClassVar[str] = "series ohmmeter"
     takes: ClassVar[str | None] = "Ω"
     half: Annotated[Amount, OHM_ABOVE]
     battery: Annotated[Amount | None, VOLT_ABOVE] = None
+    worn: Annotated[Amount | None, VOLT_ABOVE] = None
+    times: Annotated[tuple[float, ...], TIMES] = (1.0,)
+    zero: Literal["across", "series"] = "across"
+
+    def __post_init__(self) -> None:
+        check_cell(self.battery, self.worn)
 
     def stage(self, terminals: Terminals) -> Stage:
         """Return half/(half + signal), by Ohm's law with full deflection set at zero ohms.
 
         Raises:
-            InputError: the battery cannot give full deflection through the half-scale resistance.
+            InputError: the battery cannot give full deflection on every range, as far as the
+                movement's figures are known.
         """
-        if self.battery and terminals.coil.current is not None:
-            most_ohm = self.battery.value / terminals.coil.current
-            if self.half.value > most_ohm * (1 + 1e-9):
-                raise InputError(
-                    f"{self.battery.value:g} V drives full deflection through at most {most_ohm:.6g} Ω, "
-                    f"not {self.half.value:g} Ω; take a smaller half or a higher battery",
-                    ("half",),
-                    ("battery",),
-                )
+        self._check_drive(terminals.coil)
+        if self.battery and terminals.coil.current is not None and terminals.coil.resistance is not None:
+            self._chain(self.battery, terminals.coil).check()
         return _SeriesStage(self.half.value)
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return chain, range shunts and zero adjuster; no parts without a battery."""
+        if not self.battery:
+            return _undesigned(self.kind, self.half, terminals.coil)
+        chain = self._chain(self.battery, terminals.coil)
+        self._check_drive(terminals.coil)
+        chain.check()
+        return series_design(self.kind, chain.lifted(), self.half.value, self.times)
+
+    def _chain(self, battery: Amount, coil: Coil) -> Chain:
+        """Return the ohmmeter of the largest range."""
+        return Chain(
+            coil_a=coil.current_a("an ohmmeter's design"),
+            coil_ohm=coil.resistance_ohm("an ohmmeter's design"),
+            cell=cell_of(battery, self.worn),
+            half_ohm=self.half.value * max(self.times),
+            across=self.zero == "across",
+        )
+
+    def _check_drive(self, coil: Coil) -> None:
+        """Refuse a half scale, on any range, through which a new cell gives less than the coil's current."""
+        if not self.battery or coil.current is None:
+            return
+        most_ohm = self.battery.value / coil.current
+        times = max(self.times)
+        if self.half.value * times <= most_ohm * (1 + _ROUND):
+            return
+        through = (
+            f"{engineered(self.battery.value, 'V')} drives full deflection through at most "
+            f"{engineered(most_ohm, 'Ω')}, not "
+        )
+        if self.half.value > most_ohm * (1 + _ROUND) or times <= 1.0:
+            raise InputError(
+                f"{through}{engineered(self.half.value * times, 'Ω')}; "
+                "take a smaller half or a higher battery",
+                ("half",),
+                ("battery",),
+            )
+        needed_v = self.half.value * times * coil.current
+        raise InputError(
+            f"{through}the {engineered(self.half.value * times, 'Ω')} of {range_name(times)}; "
+            f"leave that range out or take a battery of {engineered(needed_v, 'V')} or more",
+            ("times",),
+            ("battery",),
+        )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class ShuntOhmmeter:
+class ShuntOhmmeter(Circuit):
     """Rest at zero ohms (a shorted coil), full deflection with nothing connected."""
 
     kind: ClassVar[str] = "shunt ohmmeter"
     takes: ClassVar[str | None] = "Ω"
     half: Annotated[Amount, OHM_ABOVE]
     battery: Annotated[Amount | None, VOLT_ABOVE] = None
+    worn: Annotated[Amount | None, VOLT_ABOVE] = None
+
+    def __post_init__(self) -> None:
+        check_cell(self.battery, self.worn)
 
     def stage(self, terminals: Terminals) -> Stage:
-        """Return signal/(signal + half), by current division; ``battery`` is for the design of its feed."""
+        """Return signal/(signal + half), by current division.
+
+        Raises:
+            InputError: where the movement's figures are known, the battery cannot give this half scale.
+        """
+        if self.battery and terminals.coil.current is not None and terminals.coil.resistance is not None:
+            self._fed(self.battery, terminals.coil).check()
         return _ShuntStage(self.half.value)
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return the feed, its adjuster and what is around the coil; no parts without a battery."""
+        if not self.battery:
+            return _undesigned(self.kind, self.half, terminals.coil)
+        made = self._fed(self.battery, terminals.coil)
+        made.check()
+        return shunt_design(self.kind, made)
+
+    def _fed(self, battery: Amount, coil: Coil) -> Fed:
+        coil_a = coil.current_a("an ohmmeter's design")
+        coil_ohm = coil.resistance_ohm("an ohmmeter's design")
+        return fed(coil_a, coil_ohm, cell_of(battery, self.worn), self.half.value)
+
+
+def _undesigned(kind: str, half: Amount, coil: Coil) -> Design:
+    """Return the design of an ohmmeter whose battery is not known: nothing to build yet."""
+    ohms = {} if coil.resistance is None else {COIL: coil.resistance}
+    return Design(kind=kind, range=half.value, unit="Ω", ohms=ohms, facts=undesigned(half.value))
 
 
 @dataclass(frozen=True, slots=True)

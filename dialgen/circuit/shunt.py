@@ -164,8 +164,6 @@ def _worker(coil_a: float) -> Callable[[Ohms, float], Working]:
             ),
             Feed("in", "out", signal_a),
         )
-        return Working(
-            solved.loads[COIL].current_a / coil_a, solved.loads, solved.drop_v("in", "out")
-        )
+        return Working(solved.loads[COIL].current_a / coil_a, solved.loads, solved.drop_v("in", "out"))
 
     return work

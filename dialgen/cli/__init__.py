@@ -21,6 +21,7 @@ _COMMANDS = {
     "new": "a commented dial file to start from",
     "draw": "the plate, as SVG, PDF, PNG or DXF",
     "table": "where every mark falls",
+    "circuit": "the range circuit: parts, heat, cautions, a schematic",
     "review": "what would be hard to read on the face, and where",
     "symbols": "the dial symbols, as a sheet or a list",
 }

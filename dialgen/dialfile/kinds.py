@@ -8,6 +8,7 @@ from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
 from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
+from dialgen.circuit.bridge import ARMS, read_arms
 from dialgen.circuit.built import (
     BUILT,
     BUILT_ABOVE,
@@ -16,7 +17,10 @@ from dialgen.circuit.built import (
     read_built_above,
     read_built_each,
 )
+from dialgen.circuit.diodes import DIODE, read_diode
 from dialgen.circuit.direct import FACE_END, FACE_VALUE
+from dialgen.circuit.kinds import CIRCUITS
+from dialgen.circuit.ohmmeter import TIMES, read_times
 from dialgen.circuit.ranges import AMPERE_RANGES, VOLT_RANGES, read_current_ranges, read_voltage_ranges
 from dialgen.circuit.shunt import RATED, read_rating
 from dialgen.circuit.transformer import RATIO, read_ratio
@@ -24,7 +28,8 @@ from dialgen.dialfile import fields
 from dialgen.dialfile.base import Flaws, nearest_key
 from dialgen.errors import InputError
 from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
-from dialgen.quantity import Measure, shown
+from dialgen.geometry.thermistor import BETA, CALIBRATION, COEFFICIENT
+from dialgen.quantity import OHM_ABOVE, TEMPERATURE, Measure, shown
 
 _MOST = 1e6
 _NOTES: dict[object, fields.Reader] = {
@@ -32,14 +37,22 @@ _NOTES: dict[object, fields.Reader] = {
     FACE_END: fields.face_end,
     RATED: read_rating,
     RATIO: read_ratio,
+    DIODE: read_diode,
     BUILT: read_built,
     BUILT_ABOVE: read_built_above,
     BUILT_EACH: read_built_each,
     AMPERE_RANGES: read_current_ranges,
     VOLT_RANGES: read_voltage_ranges,
+    TIMES: read_times,
+    ARMS: read_arms,
     SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
     FACE_POINTS: fields.points(
         fields.face_end, fields.number("a position", -_MOST, _MOST), "[[0, -44], [10, -20.5]]"
+    ),
+    BETA: fields.number("beta in kelvin", 1.0, _MOST),
+    COEFFICIENT: fields.number("a coefficient of Steinhart and Hart", -1.0, 1.0),
+    CALIBRATION: fields.points(
+        TEMPERATURE.read, OHM_ABOVE.read, '[["0 degC", "32.65 kohm"], ["25 degC", ...], ...]', least=0
     ),
 }
 """Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
@@ -78,6 +91,17 @@ def model_of(kind: type) -> type[BaseModel]:
         f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)
     }
     return create_model(kind.__name__, __config__=ConfigDict(extra="forbid", frozen=True), **made)
+
+
+CIRCUIT_KEYS = ("kind", "takes", "keys")
+
+
+def circuit_keys() -> list[tuple[str, str | None, tuple[str, ...]]]:
+    """Return every kind of circuit with the unit it takes and its keys, from the table of the check."""
+    return [
+        (kind, made.takes, tuple(field.name for field in dataclasses.fields(made)))
+        for kind, made in CIRCUITS.items()
+    ]
 
 
 def _made(kind: type, keys: BaseModel) -> fields.Value:

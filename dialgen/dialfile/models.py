@@ -8,11 +8,11 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from datetime import date, datetime
-from typing import Annotated
+from typing import Annotated, Any
 
-from pydantic import BeforeValidator, Field, PlainValidator
+from pydantic import BeforeValidator, Field, PlainValidator, ValidationInfo
 
-from dialgen.dialfile.base import Table, needs
+from dialgen.dialfile.base import Table, checked, needs
 from dialgen.dialfile.dividing import Entry, Every, Piece
 from dialgen.dialfile.fields import Lettered, Text, at_most
 from dialgen.dialfile.looks import Dress, read_dress
@@ -55,6 +55,13 @@ def _date(given: object) -> date:
     raise ValueError(f"this is a date, not {shown(given)}; write for example 2026-05-01")
 
 
+def _parts(given: object, info: ValidationInfo) -> Table:
+    # Only the circuit's bill asks for it; a plate is drawn without loading that room.
+    from dialgen.dialfile.parts import Parts
+
+    return checked(Parts, given, info.context)
+
+
 class Head(Table):
     """What the dial is: name and serial for the people who keep it, the others to be printed."""
 
@@ -79,6 +86,8 @@ class DialFile(Table):
     plate: Plate = Field(description="a table [plate] with pivot, and size or diameter")
     zone: Annotated[tuple[Zone, ...], BeforeValidator(at_most(_MOST_ZONES))] = ()
     limit: Annotated[tuple[Limit, ...], BeforeValidator(at_most(_MOST_ZONES))] = ()
+    parts: Annotated[Any, PlainValidator(_parts)] = None
+    """The maker's drawer, a `dialgen.dialfile.parts.Parts`; None where the file has none."""
     symbols: Symbols | None = None
     look: Annotated[Dress, PlainValidator(read_dress)] = Dress()
     text: Annotated[tuple[FreeText, ...], BeforeValidator(at_most(_MOST_TEXTS))] = ()

@@ -1,0 +1,232 @@
+"""A moving coil behind a rectifier, for alternating voltage, marked in RMS of a sine."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass
+from typing import Annotated, ClassVar, Literal
+
+import numpy as np
+
+from dialgen.circuit.built import BUILT
+from dialgen.circuit.conduction import Curve
+from dialgen.circuit.design import COIL, Case, Design, Fact, Part
+from dialgen.circuit.diodes import DIODE, SILICON, Diode
+from dialgen.circuit.rectified import RectifierWork
+from dialgen.circuit.rectifying import COIL_SHUNT, CONNECTIONS, LEGS, MULTIPLIER, coil_with_shunt
+from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
+from dialgen.errors import InputError, Remark
+from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered
+from dialgen.roots import bracketed_roots
+from dialgen.stage import Array, Span, Stage
+
+_PURPOSE = "a rectifier instrument"
+_ROUNDING = 1e-12
+_BEYOND = 10.0
+"""How far beyond the range a scale may be asked for, in ranges."""
+_FIRST_MOVE = 0.01
+_HIGHER = np.geomspace(1.0, 1e9, 31)
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class _RectifierStage:
+    """Drive by RMS volts, which have no sign.
+
+    Args:
+        curve: the mean current of a pulse by the peak that drives it.
+        into: that peak by a volt RMS at the terminals.
+        gain: drive by the mean current of a pulse.
+        most_v: the largest signal.
+    """
+
+    curve: Curve
+    into: float
+    gain: float
+    most_v: float
+
+    @property
+    def domain(self) -> Span:
+        return (0.0, self.most_v)
+
+    @property
+    def image(self) -> Span:
+        return (0.0, float(self.forward(np.array(self.most_v))))
+
+    def forward(self, x: Array) -> Array:
+        within = (x >= 0) & (x <= self.most_v)
+        return np.where(within, self.curve.mean_a(np.where(within, x, 0.0) * self.into) * self.gain, np.nan)
+
+    def inverse(self, y: Array) -> Array:
+        return self.curve.peak_v(y / self.gain) / self.into
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Rectifier(Circuit):
+    """A multiplier, designed or as built, and diodes in one of three connections before the coil."""
+
+    kind: ClassVar[str] = "rectifier"
+    takes: ClassVar[str | None] = "V"
+    range: Annotated[Amount | None, VOLT_ABOVE] = None
+    rectifier: Literal["bridge", "half bridge", "half wave"] = "bridge"
+    diode: Annotated[Diode, DIODE] = SILICON
+    legs: Annotated[Amount | None, OHM_ABOVE] = None
+    coil_shunt: Annotated[Amount | None, OHM_ABOVE] = None
+    built: Annotated[Amount | None, BUILT] = None
+
+    def __post_init__(self) -> None:
+        half_bridge = self.rectifier == "half bridge"
+        if half_bridge and not self.legs:
+            raise InputError(
+                'a half bridge has two equal resistors in place of two diodes; add legs = "2 kohm"', ("legs",)
+            )
+        if self.legs and not half_bridge:
+            raise InputError(
+                f'a {self.rectifier} has no legs; leave them out, or write rectifier = "half bridge"',
+                ("legs",),
+                ("rectifier",),
+            )
+
+    def stage(self, terminals: Terminals) -> Stage:
+        """Return the mean coil current over Im, for sines up to ten times the range.
+
+        Raises:
+            InputError: even without a multiplier the coil does not get its current at the range.
+        """
+        multiplier_ohm = self.built.value if self.built else self._designed_ohm(terminals)
+        return self._stage(terminals, multiplier_ohm)
+
+    def design(self, terminals: Terminals) -> Design:
+        """Return multiplier, coil shunt and legs, all of which the diodes make differ from a DC meter's."""
+        ohms = self._ohms(terminals)
+        range_v, coil_a = self._range_v(terminals), terminals.coil.current_a(_PURPOSE)
+        worker = RectifierWork(CONNECTIONS[self.rectifier], self.diode.junction, coil_a)
+        given = tuple(name for name in (COIL_SHUNT, *LEGS) if name in ohms)
+        first_v = self._stage(terminals, ohms[MULTIPLIER]).inverse(np.array([_FIRST_MOVE]))
+        return Design(
+            kind=self.kind,
+            range=range_v,
+            unit="V",
+            ohms=ohms,
+            parts=(
+                Part(name=MULTIPLIER, ohms=ohms[MULTIPLIER], built=self.built.value if self.built else None),
+                *(Part(name=name, ohms=ohms[name], given=True) for name in given),
+            ),
+            cases=(Case(name=engineered(range_v, "V"), signal=range_v, work=worker.work),),
+            facts=(
+                *worker.facts(ohms, range_v),
+                Fact(
+                    name="first movement",
+                    value=float(first_v[0]),
+                    unit="V",
+                    note="RMS, moves the pointer by 1 % of full deflection",
+                ),
+                *self._diode_facts(),
+            ),
+            alternating=True,
+        )
+
+    def remarks(self) -> tuple[Remark, ...]:
+        """Return that a typical diode was assumed, and below what voltage a threshold diode is dead."""
+        key = ("diode",)
+        found = []
+        if self.diode.typical:
+            text = (
+                f"typical {self.diode.typical} diodes are assumed, from memory: {self.diode.described}; "
+                "measure yours and give them under diode"
+            )
+            found.append(Remark(text, key))
+        if threshold_v := self.diode.junction.threshold_v:
+            # What drives the junctions of a half bridge is half of what stands behind the multiplier.
+            connection = CONNECTIONS[self.rectifier]
+            factor = float(connection.seen(np.array(0.0), 0.0, self.legs.value if self.legs else 0.0)[1])
+            least_v = connection.junctions * threshold_v / factor / math.sqrt(2)
+            behind = " behind the multiplier" if self.legs else ""
+            text = (
+                f"below {engineered(least_v, 'V', 3)} RMS{behind} these diodes pass nothing and the pointer "
+                "rests; a diode by saturation and ideality bends the foot of the scale as a real one does"
+            )
+            found.append(Remark(text, key))
+        return tuple(found)
+
+    def _stage(self, terminals: Terminals, multiplier_ohm: float) -> _RectifierStage:
+        coil_ohm, wanted_a = self._wanted(terminals)
+        connection = CONNECTIONS[self.rectifier]
+        ohms, factor = connection.seen(np.array(multiplier_ohm), coil_ohm, self._leg_ohm)
+        most_v = _BEYOND * max(self._range_v(terminals), abs(terminals.signal(terminals.full_value)))
+        into = math.sqrt(2) * float(factor)
+        curve = self.diode.junction.curve(float(ohms), connection.junctions, into * most_v)
+        return _RectifierStage(curve, into, 1.0 / wanted_a, most_v)
+
+    def _designed_ohm(self, terminals: Terminals) -> float:
+        """Return the multiplier with which the mean coil current at the range is the movement's."""
+        range_v = self._range_v(terminals)
+        coil_ohm, wanted_a = self._wanted(terminals)
+        connection, junction = CONNECTIONS[self.rectifier], self.diode.junction
+
+        def drive(multiplier_ohm: Array, signal_v: Array) -> Array:
+            ohms, factor = connection.seen(multiplier_ohm, coil_ohm, self._leg_ohm)
+            peak_v = math.sqrt(2) * factor * signal_v
+            return junction.averages(peak_v, ohms, connection.junctions).mean_a / wanted_a
+
+        most = float(drive(np.array(0.0), np.array(range_v)))
+        if most < 1.0 - _ROUNDING:
+            self._refuse(range_v, most, drive)
+        if most <= 1.0:
+            return 0.0
+        # Diodes that drop nothing, and nothing else in the way, would need this much.
+        whole_ohm = 2 / math.pi * math.sqrt(2) * range_v / wanted_a
+        found = bracketed_roots(
+            lambda ohms: 1.0 / drive(ohms, np.full_like(ohms, range_v)),
+            np.array([0.0, whole_ohm]),
+            np.array([1.0]),
+        )
+        return float(found[0])
+
+    def _refuse(self, range_v: float, most: float, drive: Callable[[Array, Array], Array]) -> None:
+        ranges_v = range_v * _HIGHER
+        least_v = bracketed_roots(lambda v: drive(np.zeros_like(v), v), ranges_v, np.array([1.0]))[0]
+        raise InputError(
+            f"a range of {engineered(range_v, 'V')} drives the coil to {most:.3g} of full deflection even "
+            f"without a multiplier, diodes and coil take so much; take a range of {engineered(least_v, 'V')} "
+            "or more, diodes with less drop, or a more sensitive movement",
+            ("range",),
+            ("diode",),
+            RESISTANCE_KEY,
+        )
+
+    def _range_v(self, terminals: Terminals) -> float:
+        range_v = terminals.range(self.range.value if self.range else None)
+        if not range_v > 0:
+            raise InputError(
+                f"a rectifier shows RMS volts, which are above 0, and the scale ends at {range_v:g} V; "
+                'give range = "10 V"',
+                ("range",),
+            )
+        return range_v
+
+    def _wanted(self, terminals: Terminals) -> tuple[float, float]:
+        """Return the ohms of coil and shunt, and the mean of a pulse that is full deflection."""
+        coil_a, coil_ohm = terminals.coil.current_a(_PURPOSE), terminals.coil.resistance_ohm(_PURPOSE)
+        shunted_ohm, share = coil_with_shunt(coil_ohm, self.coil_shunt.value if self.coil_shunt else None)
+        return shunted_ohm, coil_a / share * 2 / CONNECTIONS[self.rectifier].pulses
+
+    @property
+    def _leg_ohm(self) -> float:
+        return self.legs.value if self.legs else 0.0
+
+    def _ohms(self, terminals: Terminals) -> Mapping[str, float]:
+        ohms = {MULTIPLIER: self._designed_ohm(terminals), COIL: terminals.coil.resistance_ohm(_PURPOSE)}
+        if self.coil_shunt:
+            ohms[COIL_SHUNT] = self.coil_shunt.value
+        if self.legs:
+            ohms |= dict.fromkeys(LEGS, self.legs.value)
+        return ohms
+
+    def _diode_facts(self) -> tuple[Fact, ...]:
+        typical = self.diode.typical
+        note = f"assumed: typical {typical}, from memory" if typical else "as given"
+        return tuple(
+            Fact(name=name, value=value, unit=unit, note=note)
+            for name, value, unit in self.diode.junction.figures
+        )

@@ -1,0 +1,25 @@
+"""Rows of words as columns, for a terminal or a printed page."""
+
+from __future__ import annotations
+
+import textwrap
+from collections.abc import Sequence
+
+WIDTH = 100
+
+
+def columns(rows: Sequence[Sequence[str]], left: int = 1, gap: str = "  ") -> list[str]:
+    """Return a line for each row; the first ``left`` columns begin together, the others end together."""
+    widths = [max(map(len, column)) for column in zip(*rows, strict=True)]
+    return [
+        gap.join(
+            cell.ljust(width) if i < left else cell.rjust(width)
+            for i, (cell, width) in enumerate(zip(row, widths, strict=True))
+        ).rstrip()
+        for row in rows
+    ]
+
+
+def wrapped(text: str, first: str = "", rest: str = "  ") -> list[str]:
+    """Return a text in lines of readable width, the first and the others behind their own beginning."""
+    return textwrap.wrap(text, WIDTH, initial_indent=first, subsequent_indent=rest, break_long_words=False)

@@ -1,0 +1,101 @@
+"""What the maker has: the drawer, the spools, and how parts are judged."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from typing import Annotated, Any
+
+from pydantic import PlainValidator, ValidationError
+
+from dialgen.dialfile import fields
+from dialgen.dialfile.base import Table, each
+from dialgen.errors import InputError
+from dialgen.parts.bench import Bench
+from dialgen.parts.bill import Drawer
+from dialgen.parts.cautions import USUAL_RATINGS_V
+from dialgen.parts.drawer import Lot, read_stock
+from dialgen.parts.preferred import SERIES
+from dialgen.parts.ratings import MARGIN
+from dialgen.parts.wire import Wire, read_wire
+from dialgen.quantity import VOLT_ABOVE, shown
+
+_MOST_LOTS, _MOST_WIRES = 200, 12
+
+
+def _list_of(read: fields.Reader, most: int, example: str) -> fields.Reader:
+    def read_list(given: object) -> tuple[Any, ...]:
+        if not isinstance(given, list) or not 0 < len(given) <= most:
+            raise ValueError(
+                f"this is a list of 1 to {most} entries, not {shown(given)}; write for example {example}"
+            )
+        return each(given, read)
+
+    return read_list
+
+
+def _volts(given: object) -> float:
+    return VOLT_ABOVE.read(given).value
+
+
+class Parts(Table):
+    """The maker's drawer; all of it has a default, and nothing of it moves a mark."""
+
+    stock: Annotated[
+        tuple[Lot, ...],
+        PlainValidator(_list_of(read_stock, _MOST_LOTS, '["3.3 ohm x12", "10 ohm x5"]')),
+    ] = ()
+    wire: Annotated[
+        tuple[Wire, ...],
+        PlainValidator(_list_of(read_wire, _MOST_WIRES, '["manganin 0.5 mm", "constantan AWG 24"]')),
+    ] = ()
+    series: Annotated[str | None, PlainValidator(fields.one_of(*SERIES))] = None
+    """The E series that parts are bought in; None shows all."""
+    tolerance: Annotated[float | None, PlainValidator(fields.number("a tolerance", 0.001, 50.0))] = None
+    """Percent, of every part; None takes each series' own."""
+    margin: Annotated[float, PlainValidator(fields.number("a margin", 1.0, 100.0))] = MARGIN
+    """How many times its dissipation a resistor is rated for."""
+    overload: Annotated[float, PlainValidator(fields.number("an overload", 1.0, 100.0))] = 1.2
+    """Times full scale."""
+    drift: Annotated[float | None, PlainValidator(fields.number("a drift", 1e-4, 10.0))] = None
+    """The largest wanted, in percent for a kelvin, for the swamping resistor."""
+    voltage: Annotated[float, PlainValidator(_volts)] = min(USUAL_RATINGS_V.values())
+    """What one resistor stands."""
+
+    def drawer(self) -> Drawer:
+        """Return it as the bench asks for it."""
+        return Drawer(
+            bench=Bench(
+                tolerance_percent=self.tolerance,
+                margin=self.margin,
+                overload=self.overload,
+                series=self.series,
+                drift_wanted_percent_per_k=self.drift,
+            ),
+            lots=self.stock,
+            wires=self.wire,
+            voltage_v=self.voltage,
+        )
+
+
+def drawer(parts: Parts | None, instead: Mapping[str, object]) -> Drawer:
+    """Return the drawer of a file, with some of its keys said instead.
+
+    Args:
+        parts: the file's table, if it has one.
+        instead: keys as they would stand in the table, with their values.
+
+    Raises:
+        InputError: one of ``instead`` is wrong, with the key in front.
+    """
+    try:
+        said = Parts.model_validate(dict(instead))
+    except ValidationError as error:
+        raise InputError(_told(error)) from None
+    changed = {name: getattr(said, name) for name in instead}
+    return (parts or Parts()).model_copy(update=changed).drawer()
+
+
+def _told(error: ValidationError) -> str:
+    first = error.errors(include_url=False)[0]
+    cause = first.get("ctx", {}).get("error")
+    return f"{first['loc'][0]}: {cause or first['msg']}"

@@ -1,0 +1,1 @@
+"""What to buy, wind and find in the drawer for a circuit that is designed."""

@@ -1,0 +1,150 @@
+"""Everything the bench is told of one circuit, put together."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable
+from dataclasses import dataclass, field
+
+from dialgen.circuit.design import Design, Part
+from dialgen.errors import InputError
+from dialgen.parts.assessed import Assessment, PartAssessed, assess
+from dialgen.parts.bench import Bench
+from dialgen.parts.cautions import USUAL_RATINGS_V, Caution, cautions, split_count
+from dialgen.parts.drawer import Lot
+from dialgen.parts.drift import NoSwamping, Swamping, swamping
+from dialgen.parts.situation import Situation, situation_of
+from dialgen.parts.stock import Progress, Search, search
+from dialgen.parts.trimming import Trim, trims
+from dialgen.parts.winding import Winding, wound
+from dialgen.parts.wire import Wire
+
+Reswamped = Callable[[float], Design]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Drawer:
+    """What the maker has: how designs are judged, what lies in the drawer and on the spool.
+
+    Args:
+        bench: how a design is judged.
+        lots: resistors in the drawer.
+        wires: wires and strips to make parts of.
+        voltage_v: what one resistor stands, for the splitting of a multiplier.
+    """
+
+    bench: Bench = field(default_factory=Bench)
+    lots: tuple[Lot, ...] = ()
+    wires: tuple[Wire, ...] = ()
+    voltage_v: float = min(USUAL_RATINGS_V.values())
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Split:
+    """One resistor made of several in series, so that none has more than its rated voltage."""
+
+    part: str
+    count: int
+    ohms: float
+    voltage_v: float
+
+
+@dataclass(frozen=True, slots=True, kw_only=True, eq=False)
+class Bill:
+    """Everything the bench is told of one circuit.
+
+    Args:
+        design: the circuit; above 1 kV nothing is told of it but the cautions.
+        assessment: what its parts carry, and how good they are.
+        trims: parts as built, and their cures.
+        splits: resistors to be made of several for their voltage.
+        searches: what the drawer gives for a part, by its name.
+        windings: what it takes of each wire, by the part's name.
+        swamping: a resistor for the wanted drift, or why none helps.
+        cautions: what to beware of.
+    """
+
+    design: Design
+    assessment: Assessment | None
+    trims: tuple[Trim, ...] = ()
+    splits: tuple[Split, ...] = ()
+    searches: tuple[tuple[str, Search], ...] = ()
+    windings: tuple[tuple[str, Winding], ...] = ()
+    swamping: Swamping | NoSwamping | None = None
+    cautions: tuple[Caution, ...] = ()
+
+
+def bill(
+    design: Design,
+    drawer: Drawer,
+    movement: str,
+    *,
+    reswamped: Reswamped | None = None,
+    progress: Callable[[str], Progress] | None = None,
+) -> Bill:
+    """Return what the bench is told of a circuit.
+
+    Args:
+        design: the circuit.
+        drawer: what the maker has.
+        movement: the movement's kind.
+        reswamped: the circuit designed with another swamping resistor, where it takes one.
+        progress: given a part's name, what is told of the search for it in the drawer.
+
+    Raises:
+        InputError: a wanted drift that no resistor brings; its key is "drift".
+    """
+    situation = situation_of(design, movement)
+    heeded = cautions(situation)
+    if situation.beyond_help:
+        return Bill(design=design, assessment=None, cautions=heeded)
+    assessment = assess(design, drawer.bench)
+    made = [part for part in assessment.parts if _is_made(part.part)]
+    return Bill(
+        design=design,
+        assessment=assessment,
+        trims=trims(design),
+        splits=tuple(each for part in made for each in _splits(part, situation, drawer.voltage_v)),
+        searches=tuple(
+            (
+                each.part.name,
+                search(each.part.ohms, drawer.lots, progress=progress and progress(each.part.name)),
+            )
+            for each in made
+            if drawer.lots
+        ),
+        windings=tuple(
+            (each.part.name, wound(each.part.ohms, abs(each.full.current_a or 0.0), wire))
+            for each in made
+            for wire in drawer.wires
+        ),
+        swamping=_swamping(reswamped, drawer.bench),
+        cautions=heeded,
+    )
+
+
+def _is_made(part: Part) -> bool:
+    """Return whether a part is to be bought, found or wound: not given, not a whole of others, not a wire."""
+    return not part.given and not part.sums and 0 < part.ohms < math.inf
+
+
+def _splits(part: PartAssessed, situation: Situation, rating_v: float) -> list[Split]:
+    if situation.takes != "V" or part.full.voltage_v is None:
+        return []
+    peak_v = abs(part.full.voltage_v) * (1.0 if situation.alternating is False else math.sqrt(2))
+    if situation.alternating:
+        peak_v = max(peak_v, situation.resistor_peak_v)
+    count = split_count(peak_v, rating_v)
+    if count == 1:
+        return []
+    return [Split(part=part.part.name, count=count, ohms=part.part.ohms / count, voltage_v=peak_v / count)]
+
+
+def _swamping(reswamped: Reswamped | None, bench: Bench) -> Swamping | NoSwamping | None:
+    wanted = bench.drift_wanted_percent_per_k
+    if wanted is None or reswamped is None:
+        return None
+    try:
+        return swamping(reswamped, wanted, bench.materials)
+    except InputError as error:
+        raise InputError(error.message, ("parts", "drift")) from None

@@ -1,0 +1,134 @@
+"""Parts as they were made: what they do to an old face, and what cures them."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterable, Sequence
+from dataclasses import dataclass, replace
+
+from dialgen.circuit.design import Case, Design, Part
+from dialgen.errors import InputError
+from dialgen.parts.worked import Worked, largest, worked
+from dialgen.quantity import engineered
+
+_FILED_BELOW_OHM = 1.0
+"""Below about an ohm a part is strip or a few turns of wire, and filed (common practice)."""
+_SAME = 1e-9
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Trim:
+    """A part that was made, against what was designed.
+
+    Args:
+        part: its name.
+        ohms: as designed.
+        built: as measured.
+        off_percent: how much larger it came out.
+        reading_percent: what that alone does to full scale, of the worst range.
+        parallel_ohm: the resistor across it that brings it down, where it came out too large.
+        parallel_w: what that one dissipates at full scale, of the worst range.
+        series_ohm: what it lacks, where it came out too small.
+        filed_share: the share of its cross-section to file off along its whole length for that.
+        longer_share: by what share of its length to make it longer instead.
+    """
+
+    part: str
+    ohms: float
+    built: float
+    off_percent: float
+    reading_percent: float
+    parallel_ohm: float | None = None
+    parallel_w: float | None = None
+    series_ohm: float | None = None
+    filed_share: float | None = None
+    longer_share: float | None = None
+
+    @property
+    def advice(self) -> str:
+        """What to do about it, in a line."""
+        if self.parallel_ohm is not None:
+            heat = f", which takes {engineered(self.parallel_w, 'W', 2)}" if self.parallel_w else ""
+            return f"put {engineered(self.parallel_ohm, 'Ω', 4)} across it{heat}"
+        if self.series_ohm is None or self.filed_share is None or self.longer_share is None:
+            return "nothing to do"
+        if self.ohms >= _FILED_BELOW_OHM:
+            return f"put {engineered(self.series_ohm, 'Ω', 4)} in series with it"
+        return (
+            f"file or scrape {self.filed_share * 100:.2g} % off its cross-section along the whole length "
+            f"between the sense points, or set these {self.longer_share * 100:.2g} % farther apart"
+        )
+
+
+def trims(design: Design) -> tuple[Trim, ...]:
+    """Return every part that was measured, with its cure.
+
+    Wholes that others make up are left out, and parts that are a wire or an open place by design.
+    """
+    ranges = worked(design)
+    return tuple(
+        _trim(part, part.built, [each for each in ranges if each.has(part.name)])
+        for part in design.parts
+        if part.built and not part.sums and 0 < part.ohms < math.inf
+    )
+
+
+def _trim(part: Part, built: float, ranges: Sequence[Worked]) -> Trim:
+    trim = Trim(
+        part=part.name,
+        ohms=part.ohms,
+        built=built,
+        off_percent=(built / part.ohms - 1.0) * 100.0,
+        reading_percent=largest([each.error_percent({part.name: built}) for each in ranges]),
+    )
+    if built > part.ohms * (1 + _SAME):
+        parallel_ohm = built * part.ohms / (built - part.ohms)
+        # Once cured the part drops what it was designed to, and so does what lies across it.
+        volts = largest([each.full.loads[part.name].voltage_v for each in ranges])
+        return replace(trim, parallel_ohm=parallel_ohm, parallel_w=volts**2 / parallel_ohm)
+    if built < part.ohms * (1 - _SAME):
+        share = built / part.ohms  # resistance is length over cross-section
+        return replace(
+            trim, series_ohm=part.ohms - built, filed_share=1.0 - share, longer_share=1.0 / share - 1.0
+        )
+    return trim
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Misreading:
+    """How far the pointer of a range stands off at full scale, with all parts as built, in percent."""
+
+    case: str
+    percent: float
+
+
+def misreadings(design: Design) -> tuple[Misreading, ...]:
+    """Return the error of every range at full scale of a face that was drawn for the design."""
+    return tuple(
+        Misreading(case=each.case.name, percent=each.error_percent(design.as_built))
+        for each in worked(design)
+    )
+
+
+def indicated(design: Design, case: Case, shares: Iterable[float]) -> tuple[float, ...]:
+    """Return what an evenly divided old face shows with the parts as built.
+
+    Args:
+        design: the circuit.
+        case: one of its ranges.
+        shares: true values as shares of full scale: marks, 0.25 for 10 A of 40 A.
+
+    Returns:
+        The indicated values, as shares of full scale too; a share's error in percent of full scale
+        is 100·(indicated - true).
+
+    Raises:
+        InputError: the range is in ohms, whose face is not evenly divided.
+    """
+    if design.unit == "Ω":
+        raise InputError("a face in ohms is not evenly divided; draw it anew for the parts as built")
+    # Nothing may drive backwards, where the zero is suppressed: the old face was drawn from there.
+    at_nothing = case.work(design.ohms, 0.0).drive
+    at_full = case.work(design.ohms, case.signal).drive
+    drives = [case.work(design.as_built, share * case.signal).drive for share in shares]
+    return tuple((drive - at_nothing) / (at_full - at_nothing) for drive in drives)

@@ -3,10 +3,12 @@
 from __future__ import annotations
 
 import math
+from decimal import Decimal
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
+from scipy.constants import convert_temperature
 
 from dialgen.quantity import (
     AMPERE,
@@ -15,6 +17,7 @@ from dialgen.quantity import (
     OHM_ABOVE,
     SIGNAL,
     SIGNAL_ABOVE,
+    TEMPERATURE,
     VOLT,
     VOLT_ABOVE,
     Measure,
@@ -74,6 +77,21 @@ READ = [
     (SIGNAL, "4 mA", 0.004, "A"),
     (SIGNAL, "100 ohm", 100.0, "Ω"),
     (SIGNAL, "1 mW", 0.001, "W"),
+    (TEMPERATURE, "25 degC", 298.15, "K"),
+    (TEMPERATURE, "25 °C", 298.15, "K"),
+    (TEMPERATURE, "25\u2103", 298.15, "K"),
+    (TEMPERATURE, "25\u00a0°C", 298.15, "K"),
+    (TEMPERATURE, "77 degF", 298.15, "K"),
+    (TEMPERATURE, "77°F", 298.15, "K"),
+    (TEMPERATURE, "77 \u2109", 298.15, "K"),
+    (TEMPERATURE, "298.15 K", 298.15, "K"),
+    (TEMPERATURE, "298.15 \u212a", 298.15, "K"),
+    (TEMPERATURE, "0 degC", 273.15, "K"),
+    (TEMPERATURE, "32 degF", 273.15, "K"),
+    (TEMPERATURE, "\u221240 degC", 233.15, "K"),
+    (TEMPERATURE, "-40 degF", 233.15, "K"),
+    (TEMPERATURE, "1e3 K", 1000.0, "K"),
+    (TEMPERATURE, "660.323 degC", 933.473, "K"),
 ]
 
 
@@ -120,6 +138,27 @@ REFUSED = [
     (SIGNAL, "4k7", "is not in V or A or Ω or W"),
     (SIGNAL, "12 mS", "is not in V or A or Ω or W"),
     (SIGNAL_ABOVE, "0 V", "is not above 0"),
+    (TEMPERATURE, 25, '25 has none; write for example "25 degC"'),
+    (TEMPERATURE, -4.5, 'write for example "-4.5 degC"'),
+    (TEMPERATURE, "25", "has no unit"),
+    (TEMPERATURE, "25,5 degC", 'write "25.5 degC"'),
+    (TEMPERATURE, "25 C", 'did you mean "25 degC"?'),
+    (TEMPERATURE, "77 F", 'did you mean "77 degF"?'),
+    (TEMPERATURE, "300 °K", 'did you mean "300 K"?'),
+    (TEMPERATURE, "300 k", 'did you mean "300 K"?'),
+    (TEMPERATURE, "25 deg. Celsius", 'did you mean "25 degC"?'),
+    (TEMPERATURE, "25 mK", "is not in °C, °F or K"),
+    (TEMPERATURE, "4K7", "is not in °C, °F or K"),
+    (TEMPERATURE, "25 kohm", 'write for example "25 degC"'),
+    (TEMPERATURE, "0 K", "is not above absolute zero"),
+    (TEMPERATURE, "-273.15 degC", "is not above absolute zero"),
+    (TEMPERATURE, "-459.67 degF", "is not above absolute zero"),
+    (TEMPERATURE, "1e-400 K", "is not above absolute zero"),
+    (TEMPERATURE, "-1 K", "is not above absolute zero"),
+    (TEMPERATURE, "1e400 degC", "hotter than anything a meter shows"),
+    (TEMPERATURE, "nan degC", "is not a temperature"),
+    (TEMPERATURE, "warm", "is not a temperature"),
+    (TEMPERATURE, True, "is text with its unit, not true"),
     (AMPERE, 1, 'write for example "1 mA"'),
     (AMPERE, 0.05, 'write for example "0.05 mA"'),
     (OHM, 75, 'write for example "75 ohm"'),
@@ -148,7 +187,7 @@ def test_what_is_no_quantity_is_refused_with_the_mend(measure: Measure, given: o
 @given(st.text(max_size=80))
 def test_no_text_gives_anything_but_an_amount_or_a_refusal(text: str) -> None:
     """Whatever is written, the answer is a finite amount or a ValueError."""
-    for measure in (OHM, AMPERE, SIGNAL):
+    for measure in (OHM, AMPERE, SIGNAL, TEMPERATURE):
         try:
             assert math.isfinite(measure.read(text).value)
         except ValueError as error:
@@ -163,6 +202,18 @@ def test_a_prefix_moves_the_point_and_rounds_once(number: object, prefix: tuple[
     """A number with a prefix is the double nearest to the decimal, as Python itself reads it."""
     letter, exponent = prefix
     assert VOLT.read(f"{number} {letter}V").value == float(f"{number}e{exponent}")
+
+
+@given(
+    st.decimals(min_value="-273", max_value="3000", places=3),
+    st.sampled_from([("degC", "Celsius"), ("degF", "Fahrenheit"), ("K", "Kelvin")]),
+)
+def test_temperatures_are_read_as_scipy_converts_them(number: Decimal, unit: tuple[str, str]) -> None:
+    """In each unit a temperature is the kelvin that scipy makes of it, to rounding."""
+    written, name = unit
+    kelvin = float(convert_temperature(float(number), name, "Kelvin"))
+    if kelvin > 0.001:
+        assert TEMPERATURE.read(f"{number} {written}").value == pytest.approx(kelvin, rel=1e-12, abs=1e-12)
 
 
 @pytest.mark.parametrize(

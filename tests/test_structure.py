@@ -14,8 +14,8 @@ PACKAGE = Path(__file__).parents[1] / "dialgen"
 FLOORS = (
     ("errors", "quantity", "drawing", "stage", "roots"),
     ("lettering", "geometry", "circuit", "renderers", "templates"),
-    ("ink", "looks", "symbols", "parts", "schematic"),
-    ("dialfile",),
+    ("ink", "looks", "symbols", "parts"),
+    ("dialfile", "schematic"),
     ("dial",),
     ("face",),
     ("api",),

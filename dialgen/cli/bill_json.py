@@ -5,7 +5,8 @@ from __future__ import annotations
 import math
 from typing import Any
 
-from dialgen.parts.assessed import PartAssessed
+from dialgen.circuit.design import Design
+from dialgen.parts.assessed import CaseAssessed, PartAssessed
 from dialgen.parts.bill import Bill
 from dialgen.parts.drift import NoSwamping, Swamping
 from dialgen.parts.stock import Candidate
@@ -23,14 +24,14 @@ def circuit_json(bill: Bill) -> Fields:
         "kind": design.kind,
         "range": _number(design.range),
         "unit": design.unit,
-        "drop": _number(cases[0].drop_v) if cases else None,
+        "drop": _drop(design, cases[0]) if cases else None,
         "parts": [_part(part) for part in assessment.parts] if assessment else [],
         "cautions": [f"{each.text} ({each.source})" for each in bill.cautions],
         "ranges": [
             {
                 "range": case.name,
                 "signal": _number(case.signal),
-                "drop": _number(case.drop_v),
+                "drop": _drop(design, case),
                 "resistance": _number(case.input_ohm),
                 "ohms_per_volt": _number(case.ohms_per_volt),
                 "watts": case.watts,
@@ -86,6 +87,11 @@ def _number(value: float | None) -> float | str | None:
     if value is None or math.isfinite(value):
         return value
     return "inf" if value > 0 else "-inf"
+
+
+def _drop(design: Design, case: CaseAssessed) -> float | None:
+    # Across an ohmmeter's terminals stands what is measured: it has no drop of its own.
+    return None if design.unit == "Ω" else case.drop_v
 
 
 def _part(assessed: PartAssessed) -> Fields:

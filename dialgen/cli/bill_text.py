@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Iterator, Sequence
 
+from dialgen.circuit.design import Fact
 from dialgen.cli.columns import columns, wrapped
-from dialgen.parts.assessed import Assessment, Carried, PartAssessed
+from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed, Together
 from dialgen.parts.bill import Bill
+from dialgen.parts.cautions import CAUTIONS
 from dialgen.parts.drift import NoSwamping, Swamping
 from dialgen.parts.stock import Candidate, Search
 from dialgen.parts.workshop import advice, objections, summary
@@ -18,14 +20,49 @@ _SHOWN_CANDIDATES = 5
 _FAR = 0.2
 """A network farther off than this share is of no use, nor are the next ones."""
 _ROUNDING = 1e-6
+_PREFIXED = ("A", "V", "Ω", "W", "VA", "Ω/V")
 
 
-def bill_lines(bill: Bill, old_face: Iterable[str] = ()) -> Iterator[str]:
-    """Yield the lines of a bill, its sections parted by empty ones; ``old_face`` goes before the cautions."""
-    for lines in (*(section(bill) for section in _SECTIONS), old_face, _cautions(bill)):
-        if section_lines := list(lines):
+def bill_lines(bill: Bill) -> Iterator[str]:
+    """Yield the lines of one circuit's bill, its sections parted by empty ones."""
+    for section in _SECTIONS:
+        if lines := list(section(bill)):
             yield ""
-            yield from section_lines
+            yield from lines
+
+
+def closing_lines(bills: Sequence[Bill]) -> Iterator[str]:
+    """Yield what goes for all circuits: how to read the columns, and the cautions, gravest first."""
+    assessments = [bill.assessment for bill in bills if bill.assessment and bill.assessment.parts]
+    if assessments:
+        yield "How to read it"
+        for note in _notes(assessments, ohms=any(bill.design.unit == "Ω" for bill in bills)):
+            yield from wrapped(note, "- ")
+        yield ""
+    yield "Cautions"
+    heeded = {caution.id: caution for bill in bills for caution in bill.cautions}
+    for caution in CAUTIONS:
+        if caution.id in heeded:
+            yield from wrapped(f"{caution.text} ({caution.source})", "- ")
+
+
+def _notes(assessments: Sequence[Assessment], *, ohms: bool) -> Iterator[str]:
+    margin = plain_number(assessments[0].bench.margin)
+    yield (
+        "Current, voltage and power are at full scale, of several ranges where each is worst; to buy is a "
+        f"rating of at least {margin} times that power (common practice)."
+    )
+    yield (
+        "Heat is that of coil and resistors together. Drift is what the coil's copper does, 0.393 % per "
+        "kelvin (IEC 60028), against resistors of 0.001 %; magnet and springs are not counted."
+    )
+    yield (
+        "Below each nearest value (IEC 60063) stands the error at full scale with it alone, then that with "
+        "all of them, and what their tolerance does to full scale: at worst, and likely (root of the sum of "
+        "squares)."
+    )
+    if ohms:
+        yield "In an ohmmeter these errors are those before the zero is set again."
 
 
 def percent(value: float) -> str:
@@ -45,16 +82,6 @@ def _parts(bill: Bill) -> Iterator[str]:
     times = plain_number(assessment.bench.overload)
     heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "to buy")
     yield from columns([heads, *(row for part in assessment.parts for row in _part_rows(part))])
-    margin = plain_number(assessment.bench.margin)
-    yield from wrapped(
-        f"Current, voltage and power at full scale{_of_the_worst(assessment)}; to buy: at least {margin} "
-        "times the power there (common practice).",
-        rest="",
-    )
-
-
-def _of_the_worst(assessment: Assessment) -> str:
-    return " of the range where each is worst" if len(assessment.cases) > 1 else ""
 
 
 def _part_rows(assessed: PartAssessed) -> Iterator[tuple[str, ...]]:
@@ -88,7 +115,7 @@ def _ranges(bill: Bill) -> Iterator[str]:
     rows = [
         (
             case.name,
-            engineered(case.drop_v, "V", 4),
+            _drop(bill, case),
             _resistance(case.input_ohm),
             "" if case.ohms_per_volt is None else f"{engineered(case.ohms_per_volt, 'Ω', 4)}/V",
             engineered(case.watts, "W", 3),
@@ -97,11 +124,11 @@ def _ranges(bill: Bill) -> Iterator[str]:
         for case, drift in zip(assessment.cases, assessment.drifts, strict=True)
     ]
     yield from columns([heads, *rows])
-    yield from wrapped(
-        "Heat of coil and resistors together. Drift: the coil's copper, 0.393 % per kelvin (IEC 60028), "
-        "against resistors of 0.001 %; magnet and springs not counted.",
-        rest="",
-    )
+
+
+def _drop(bill: Bill, case: CaseAssessed) -> str:
+    # Across an ohmmeter's terminals stands what is measured, at full scale nothing.
+    return "" if bill.design.unit == "Ω" else engineered(case.drop_v, "V", 4)
 
 
 def _resistance(ohms: float | None) -> str:
@@ -125,17 +152,18 @@ def _bought(bill: Bill) -> Iterator[str]:
                     ("", *(percent(fit.error_percent) for fit in part.fits)),
                 )
             ),
-            ("all fitted", *(percent(each.error_percent) for each in assessment.together)),
-            ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in assessment.together)),
-            ("  at worst", *(f"±{_figure(each.worst_percent)} %" for each in assessment.together)),
-            ("  likely", *(f"±{_figure(each.likely_percent)} %" for each in assessment.together)),
+            *_all_together(assessment.together, alone=len(bought) == 1),
         ]
     )
-    yield from wrapped(
-        "Below each value the error at full scale with it alone; then with all of them, and what their "
-        "tolerance does to full scale. Series of IEC 60063.",
-        rest="",
-    )
+
+
+def _all_together(together: Sequence[Together], *, alone: bool) -> Iterator[tuple[str, ...]]:
+    if not alone:
+        yield ("all fitted", *(percent(each.error_percent) for each in together))
+    yield ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in together))
+    yield ("" if alone else "  at worst", *(f"±{_figure(each.worst_percent)} %" for each in together))
+    if not alone:
+        yield ("  likely", *(f"±{_figure(each.likely_percent)} %" for each in together))
 
 
 def _figure(value: float) -> str:
@@ -237,15 +265,15 @@ def _facts(bill: Bill) -> Iterator[str]:
     if bill.assessment is None:
         return
     for fact in bill.design.facts:
-        value = engineered(fact.value, fact.unit) if math.isfinite(fact.value) else ""
-        yield from wrapped(f"{fact.name}: {value}{', ' if value and fact.note else ''}{fact.note}")
+        yield from wrapped(f"{fact.name}: {_fact(fact)}")
 
 
-def _cautions(bill: Bill) -> Iterator[str]:
-    if bill.cautions:
-        yield "Cautions"
-    for caution in bill.cautions:
-        yield from wrapped(f"{caution.text} ({caution.source})", "- ")
+def _fact(fact: Fact) -> str:
+    if not math.isfinite(fact.value):
+        return fact.note
+    whole = plain_number(float(f"{fact.value:.5g}"))
+    value = engineered(fact.value, fact.unit) if fact.unit in _PREFIXED else f"{whole} {fact.unit}".strip()
+    return f"{value}, {fact.note}" if fact.note else value
 
 
 _SECTIONS = (

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import json
-from collections.abc import Callable
+from collections.abc import Callable, Iterator, Sequence
 from pathlib import Path
 from typing import TYPE_CHECKING
 
@@ -96,7 +96,7 @@ def command(
 
         click.echo(json.dumps({"circuits": [circuit_json(bill) for _, bill in bills]}))
     else:
-        click.echo("\n\n".join("\n".join(_lines(face, each, bill)) for each, bill in bills))
+        click.echo("\n".join(_lines(face, bills)))
 
 
 def _chosen(face: Face, only: int | None) -> tuple[Designed, ...]:
@@ -145,16 +145,28 @@ def _draw(face: Face, chosen: tuple[Designed, ...], outputs: tuple[str, ...]) ->
     api.write_files(files)
 
 
-def _lines(face: Face, designed: Designed, bill: Bill) -> list[str]:
-    from dialgen.cli.bill_text import bill_lines, old_face_lines
-    from dialgen.quantity import engineered, shown_unit
+def _lines(face: Face, bills: Sequence[tuple[Designed, Bill]]) -> Iterator[str]:
+    from dialgen.cli.bill_text import bill_lines, closing_lines, old_face_lines
+    from dialgen.quantity import shown_unit
 
-    design = bill.design
+    for designed, bill in bills:
+        yield _title(designed)
+        yield from bill_lines(bill)
+        rows = face.old_face(designed) if bill.assessment else ()
+        if rows:
+            yield ""
+            yield from old_face_lines(shown_unit(face.dial.file.scale[designed.scale - 1].unit), rows)
+        yield ""
+    yield from closing_lines([bill for _, bill in bills])
+
+
+def _title(designed: Designed) -> str:
+    from dialgen.quantity import engineered
+
+    design = designed.design
     size = "" if design.range is None else f" for {engineered(design.range, design.unit).rstrip()}"
-    serves = f"scale {designed.scale}" + (f", row {designed.also + 1}" if designed.also else "")
-    rows = face.old_face(designed) if bill.assessment else ()
-    unit = shown_unit(face.dial.file.scale[designed.scale - 1].unit)
-    return [f"{design.kind}{size} ({serves})", *bill_lines(bill, old_face_lines(unit, rows) if rows else ())]
+    serves = (f"scale {scale}" + (f" row {also + 1}" if also else "") for scale, also in designed.serves)
+    return f"{design.kind}{size} ({', '.join(serves)})"
 
 
 def _print_kinds(as_json: bool) -> None:

@@ -2,10 +2,12 @@
 
 from __future__ import annotations
 
+import re
 import textwrap
 from collections.abc import Sequence
 
 WIDTH = 100
+_AMOUNT = re.compile(r"(\d) ((?:[pnµmkMG]?(?:A|V|W|Ω|VA|m)|mm|K|%|°C)(?!\w))")
 
 
 def columns(rows: Sequence[Sequence[str]], left: int = 1, gap: str = "  ") -> list[str]:
@@ -22,4 +24,14 @@ def columns(rows: Sequence[Sequence[str]], left: int = 1, gap: str = "  ") -> li
 
 def wrapped(text: str, first: str = "", rest: str = "  ") -> list[str]:
     """Return a text in lines of readable width, the first and the others behind their own beginning."""
-    return textwrap.wrap(text, WIDTH, initial_indent=first, subsequent_indent=rest, break_long_words=False)
+    # A number stays with its unit.
+    kept = _AMOUNT.sub("\\1\u00a0\\2", text)
+    lines = textwrap.wrap(
+        kept,
+        WIDTH,
+        initial_indent=first,
+        subsequent_indent=rest,
+        break_long_words=False,
+        break_on_hyphens=False,
+    )
+    return [line.replace("\u00a0", " ") for line in lines]

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, fields, replace
 from typing import Any
 
 from dialgen.circuit.design import Design
@@ -23,39 +23,50 @@ class Designed:
 
     Args:
         key: where it stands in the file; a scale's own place where it is direct for want of one.
-        scale: the first scale that it serves, counted from 1.
-        also: the further row of that scale that it serves, counted from 1; 0 is the scale itself.
+        serves: the scales and rows that stand on it, first the one it was designed for: a scale's
+            number, and that of its further row, 0 for the scale itself.
         wiring: the scale's way through it; None where the finished circuit was observed.
         design: its parts.
         reswamped: the design with another swamping resistor, in ohms; None where it takes none.
     """
 
     key: Key
-    scale: int
-    also: int
+    serves: tuple[tuple[int, int], ...]
     wiring: Wiring | None
     design: Design
     reswamped: Callable[[float], Design] | None
+
+    @property
+    def scale(self) -> int:
+        """The first scale that it serves, counted from 1."""
+        return self.serves[0][0]
+
+    @property
+    def also(self) -> int:
+        """The further row of that scale that it serves, 0 where it is the scale itself."""
+        return self.serves[0][1]
 
 
 def designs(dial: Dial) -> tuple[Designed, ...]:
     """Return the circuits of a dial in the order of its scales, each once.
 
-    A circuit that serves several scales counts once for each range it is designed for.
+    One of the same kind and parts as one before is that one: several ranges of one tapped shunt.
 
     Raises:
         Refused: circuits that cannot be designed, each with its keys.
     """
-    found: dict[tuple[Key, float | None], Designed] = {}
+    found: dict[object, Designed] = {}
     errors: list[InputError] = []
     for number, scale in enumerate(dial.scales, 1):
         for also, key, circuit, terminals, wiring in _circuits(dial, scale):
             try:
-                made = _designed(key, number, also, circuit, terminals, wiring)
+                made = _designed(key, (number, also), circuit, terminals, wiring)
             except InputError as error:
                 errors.append(_placed(error, key))
             else:
-                found.setdefault((key, made.design.range), made)
+                what = (made.design.kind, made.design.parts or key)
+                first = found.get(what)
+                found[what] = replace(first, serves=(*first.serves, *made.serves)) if first else made
     if errors:
         raise Refused(errors)
     return tuple(found.values())
@@ -92,15 +103,17 @@ def _seen_only(circuit: Circuit, coil: Coil, scale: Scale) -> Terminals:
 
 
 def _designed(
-    key: Key, number: int, also: int, circuit: Circuit, terminals: Terminals, wiring: Wiring | None
+    key: Key, place: tuple[int, int], circuit: Circuit, terminals: Terminals, wiring: Wiring | None
 ) -> Designed:
     def reswamped(swamp_ohm: float) -> Design:
         changed: Any = circuit
-        made: Design = replace(changed, swamp=Amount(swamp_ohm, "Ω")).design(terminals)
+        # What was built or bought was for the circuit without it.
+        anew = {f.name: f.default for f in fields(changed) if f.name in ("built", "rated")}
+        made: Design = replace(changed, **anew, swamp=Amount(swamp_ohm, "Ω")).design(terminals)
         return made
 
     takes_swamp = hasattr(circuit, "swamp")
-    return Designed(key, number, also, wiring, circuit.design(terminals), reswamped if takes_swamp else None)
+    return Designed(key, (place,), wiring, circuit.design(terminals), reswamped if takes_swamp else None)
 
 
 def _placed(error: InputError, key: Key) -> InputError:

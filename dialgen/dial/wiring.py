@@ -203,7 +203,7 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key) -> None
     plain = isinstance(law, Linear) and law.per is None
     names: dict[str, str] = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
     what = names.get(unit, f"in {unit}") if unit else "a pure number"
-    letter = _UNIT_WORDS.get(unit.lower())
+    letter = _UNIT_WORDS.get(unit.lower()) if plain else None
     raise InputError(
         f"the {circuit.kind} takes {names.get(circuit.takes, circuit.takes)}, "
         f"but the scale's signal is {what}; "

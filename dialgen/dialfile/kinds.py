@@ -71,7 +71,7 @@ def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
         example = f'{noun} = "{next(iter(table))}"'
         raise InputError(f"a {noun} is a name or a table, not {shown(given)}; write for example {example}")
     kind = given.get("kind")
-    if kind is None and (meant := next((k for k in given if nearest_key(k, ["kind"])), None)):
+    if kind is None and (meant := _kind_elsewhere(given, table)):
         raise InputError("not a key here; did you mean kind?", (meant,))
     if not isinstance(kind, str) or kind not in table:
         raise InputError(_no_such_kind(kind, table, noun), ("kind",))
@@ -91,6 +91,11 @@ def model_of(kind: type) -> type[BaseModel]:
         f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)
     }
     return create_model(kind.__name__, __config__=ConfigDict(extra="forbid", frozen=True), **made)
+
+
+def _kind_elsewhere(given: dict[str, Any], table: dict[str, type]) -> str | None:
+    """Return the key under which the kind stands by mistake, if one does."""
+    return next((k for k, v in given.items() if nearest_key(k, ["kind"]) and v in list(table)), None)
 
 
 CIRCUIT_KEYS = ("kind", "takes", "keys")

@@ -18,8 +18,8 @@ from typing import ClassVar
 import numpy as np
 
 from dialgen.errors import FormulaError
-from dialgen.roots import bracketed_roots
 from dialgen.geometry.sampling import sample_places
+from dialgen.roots import bracketed_roots
 from dialgen.stage import EVERYWHERE, Array, Span, Stage
 
 LONGEST = 400

@@ -192,9 +192,9 @@ def _leaders(levels: Floats, worst: Floats, wanted: int) -> Places:
     order: Places = np.lexsort((worst, levels))
     different, first = np.unique(levels[order], return_index=True)
     away = np.abs(different)
-    if len(away) <= wanted:
-        return order[first]
-    return order[first[away <= np.sort(away)[wanted - 1]]]
+    near = away <= np.sort(away)[:wanted].max(initial=0.0)
+    leaders: Places = order[first[near]]
+    return leaders
 
 
 def _fewest_parts(entries: Iterable[_Entry]) -> Iterable[_Entry]:

@@ -21,10 +21,11 @@ from dialgen.quantity.reading import (
     read_number,
 )
 from dialgen.quantity.showing import engineered, plain_number, shown
+from dialgen.quantity.temperature import TEMPERATURE, ZERO_CELSIUS_K, meant_degree
 from dialgen.quantity.units import folded_unit, shown_unit, split_unit
 
 __all__ = [
-    "AMPERE", "ANY_CURRENT", "OHM", "OHM_ABOVE", "SIGNAL", "SIGNAL_ABOVE", "VOLT", "VOLT_ABOVE", "Amount",
-    "Measure", "bare_number", "engineered", "folded_unit", "plain_number", "read_length", "read_number", "shown",
-    "shown_unit", "split_unit",
+    "AMPERE", "ANY_CURRENT", "OHM", "OHM_ABOVE", "SIGNAL", "SIGNAL_ABOVE", "TEMPERATURE", "VOLT",
+    "VOLT_ABOVE", "ZERO_CELSIUS_K", "Amount", "Measure", "bare_number", "engineered", "folded_unit",
+    "meant_degree", "plain_number", "read_length", "read_number", "shown", "shown_unit", "split_unit",
 ]  # fmt: skip

@@ -21,7 +21,7 @@ _NUMBER = re.compile(r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]{1,4})?
 
 
 class Amount(NamedTuple):
-    """A number in an SI unit; ``unit`` is one of A, V, Ω or W."""
+    """A number in an SI unit; ``unit`` is one of A, V, Ω, W or K."""
 
     value: float
     unit: str
@@ -62,23 +62,33 @@ class Measure:
         return amount
 
     def _parse(self, text: str) -> Amount:
+        plain = self._plain(text)
+        coded = _RKM.fullmatch(plain)
+        if coded and (coded[1].strip("+-") or coded[3]) and self._takes_rkm(coded[2]):
+            return Amount(_rkm_value(*coded.groups()), self.units[0])
+        number, written = self._parted(plain, text)
+        prefix, unit = prefix_and_unit(written, self.units, WORDS)
+        if unit not in self.units:
+            raise ValueError(f"{shown(text)} {self._wrong_unit(number, unit)}")
+        value = _scaled(number, prefix)
+        if abs(value) > _LARGEST or (abs(value) < _SMALLEST and not _is_zero(number)):
+            raise ValueError(f"{shown(text)} is beyond anything a meter has; {self._example()}")
+        return Amount(value, unit)
+
+    def _plain(self, text: str) -> str:
+        """Return the text with one character for each meaning, and no decimal comma."""
         plain = plain_text(text).strip()
         if len(plain) > _LONGEST:
             raise ValueError(f"a {self.name} of {len(plain)} characters; {self._example()}")
         if "," in plain:
             raise ValueError(f"{shown(text)} has a comma; {_comma_mend(plain)}")
-        coded = _RKM.fullmatch(plain)
-        if coded and (coded[1].strip("+-") or coded[3]) and self._takes_rkm(coded[2]):
-            return Amount(_rkm_value(*coded.groups()), self.units[0])
+        return plain
+
+    def _parted(self, plain: str, text: str) -> tuple[str, str]:
+        """Return the number in front, and what is written behind it."""
         if not (number := _NUMBER.match(plain)):
             raise ValueError(f"{shown(text)} is not a {self.name}; {self._example()}")
-        prefix, unit = prefix_and_unit(plain[number.end() :].strip(), self.units, WORDS)
-        if unit not in self.units:
-            raise ValueError(f"{shown(text)} {self._wrong_unit(number[0], unit)}")
-        value = _scaled(number[0], prefix)
-        if abs(value) > _LARGEST or (abs(value) < _SMALLEST and not _is_zero(number[0])):
-            raise ValueError(f"{shown(text)} is beyond anything a meter has; {self._example()}")
-        return Amount(value, unit)
+        return number[0], plain[number.end() :].strip()
 
     def _takes_rkm(self, letter: str) -> bool:
         # The code has no unit, so the key must leave no choice of one.

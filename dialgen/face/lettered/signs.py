@@ -28,8 +28,10 @@ _CURRENTS: Mapping[str, Mapping[str, str]] = {
         "shunt": "dc",
         "universal shunt": "dc",
         "multiplier": "dc",
+        "rectifier": "ac",
         "series ohmmeter": "dc",
         "shunt ohmmeter": "dc",
+        "bridge": "dc",
     },
 }
 """The kind of current that a movement shows behind a circuit, by the kinds of both."""
@@ -39,6 +41,9 @@ _ANY_CIRCUIT: Mapping[str, str] = {"moving iron": "ac and dc"}
 
 _MOVEMENTS: Mapping[str, str] = {"moving coil": "moving coil", "moving iron": "moving iron"}
 """The symbol of a movement by its kind; those not listed have none."""
+
+_TOGETHER: Mapping[tuple[str, str], str] = {("moving coil", "rectifier"): "moving coil with rectifier"}
+"""One symbol for a movement and a kind of circuit before it."""
 
 _FORMS: Mapping[Fiducial, ClassForm] = {
     Fiducial.LIMIT: "limit",
@@ -147,8 +152,10 @@ def _following(file: DialFile, own: Sequence[Sign]) -> list[Sign]:
     """Return the signs that follow from movement and circuits, but for subjects the list speaks of itself."""
     spoken = {sign.symbol.subject for sign in own}
     movement = file.movement.kind
-    currents = [_current(movement, kind) for kind in _circuit_kinds(file)] or [_ANY_CIRCUIT.get(movement)]
-    names = [_MOVEMENTS.get(movement), *currents]
+    kinds = list(_circuit_kinds(file))
+    currents = [_current(movement, kind) for kind in kinds] or [_ANY_CIRCUIT.get(movement)]
+    joint = next((_TOGETHER[movement, kind] for kind in kinds if (movement, kind) in _TOGETHER), None)
+    names = [joint or _MOVEMENTS.get(movement), *currents]
     found = [parse(name) for name in dict.fromkeys(names) if name]
     found = [sign for sign in found if sign.symbol.subject not in spoken]
     return [*found, parse("shunt")] if _bought_shunt(file) else found

@@ -27,6 +27,7 @@ _BEYOND = 10.0
 """How far beyond the range a scale may be asked for, in ranges."""
 _FIRST_MOVE = 0.01
 _HIGHER = np.geomspace(1.0, 1e9, 31)
+_LEAST_DIGITS = 4
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -128,26 +129,29 @@ class Rectifier(Circuit):
 
     def remarks(self) -> tuple[Remark, ...]:
         """Return that a typical diode was assumed, and below what voltage a threshold diode is dead."""
-        key = ("diode",)
-        found = []
+        texts = []
         if self.diode.typical:
-            text = (
+            texts.append(
                 f"typical {self.diode.typical} diodes are assumed, from memory: {self.diode.described}; "
                 "measure yours and give them under diode"
             )
-            found.append(Remark(text, key))
-        if threshold_v := self.diode.junction.threshold_v:
-            # What drives the junctions of a half bridge is half of what stands behind the multiplier.
-            connection = CONNECTIONS[self.rectifier]
-            factor = float(connection.seen(np.array(0.0), 0.0, self.legs.value if self.legs else 0.0)[1])
-            least_v = connection.junctions * threshold_v / factor / math.sqrt(2)
+        if self.diode.junction.threshold_v:
             behind = " behind the multiplier" if self.legs else ""
-            text = (
-                f"below {engineered(least_v, 'V', 3)} RMS{behind} these diodes pass nothing and the pointer "
-                "rests; a diode by saturation and ideality bends the foot of the scale as a real one does"
+            texts.append(
+                f"below {engineered(self._dead_v, 'V', 3)} RMS{behind} these diodes pass nothing and the "
+                "pointer rests; diodes by saturation and ideality bend the foot of the scale as real ones do"
             )
-            found.append(Remark(text, key))
-        return tuple(found)
+        return tuple(Remark(text, ("diode",)) for text in texts)
+
+    @property
+    def _dead_v(self) -> float:
+        """The RMS volts behind the multiplier up to which threshold diodes pass nothing.
+
+        In series with them it drops nothing until they do; before legs it does.
+        """
+        connection = CONNECTIONS[self.rectifier]
+        factor = float(connection.seen(np.array(0.0), 0.0, self._leg_ohm or 1.0)[1])
+        return connection.junctions * self.diode.junction.threshold_v / factor / math.sqrt(2)
 
     def _stage(self, terminals: Terminals, multiplier_ohm: float) -> _RectifierStage:
         coil_ohm, wanted_a = self._wanted(terminals)
@@ -186,9 +190,11 @@ class Rectifier(Circuit):
     def _refuse(self, range_v: float, most: float, drive: Callable[[Array, Array], Array]) -> None:
         ranges_v = range_v * _HIGHER
         least_v = bracketed_roots(lambda v: drive(np.zeros_like(v), v), ranges_v, np.array([1.0]))[0]
+        # Rounded up, so that the range of the message works.
+        least = engineered(least_v * (1 + 0.5 * 10.0 ** (1 - _LEAST_DIGITS)), "V", _LEAST_DIGITS)
         raise InputError(
             f"a range of {engineered(range_v, 'V')} drives the coil to {most:.3g} of full deflection even "
-            f"without a multiplier, diodes and coil take so much; take a range of {engineered(least_v, 'V')} "
+            f"without a multiplier, diodes and coil take so much; take a range of {least} "
             "or more, diodes with less drop, or a more sensitive movement",
             ("range",),
             ("diode",),

@@ -9,7 +9,7 @@ from dataclasses import dataclass
 
 from dialgen.quantity import OHM_ABOVE, shown
 
-_COUNTED = re.compile(r"(?s)(.*?)\s*[xX×]\s*(\S*)\s*")
+_COUNTED = re.compile(r"(?s)(.*?)\s*[xX×]\s*(.*?)\s*")
 _COUNT = re.compile("[0-9]{1,6}")
 _EXAMPLE = 'write for example "3.3 ohm x12"'
 _SAME = 1e-12

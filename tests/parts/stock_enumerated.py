@@ -3,8 +3,8 @@
 A network is a part's place in the drawer, or ("+", members) or ("||", members) in one fixed order.
 """
 
-from functools import cache
 from fractions import Fraction
+from functools import cache
 from itertools import combinations, combinations_with_replacement, product
 
 

@@ -19,7 +19,7 @@ E12 = (1.0, 1.2, 1.5, 1.8, 2.2, 2.7, 3.3, 3.9, 4.7, 5.6, 6.8, 8.2)
 PLENTY = 99
 
 drawers = st.lists(
-    st.tuples(st.integers(1, 40), st.integers(1, 5)), min_size=1, max_size=3, unique_by=lambda l: l[0]
+    st.tuples(st.integers(1, 40), st.integers(1, 5)), min_size=1, max_size=3, unique_by=lambda lot: lot[0]
 )
 targets = st.fractions(Fraction(1, 4), 120, max_denominator=200)
 

@@ -1,0 +1,100 @@
+"""What is written in a picture: parts with their values, ranges, signs of polarity."""
+
+from __future__ import annotations
+
+import re
+from collections.abc import Iterator, Mapping
+from dataclasses import dataclass, field
+
+from dialgen.circuit.design import COIL, Design, Fact, Part
+from dialgen.quantity import engineered
+from dialgen.schematic.pieces import Item, Kind, Label
+
+AC, PLUS, MINUS = "~", "+", "−"
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Plan:
+    """A design with all that is written about it.
+
+    Args:
+        design: the circuit.
+        coil_text: the movement's current and resistance.
+        values: a text in place of a part's value, by the part's name.
+    """
+
+    design: Design
+    coil_text: str
+    values: Mapping[str, str] = field(default_factory=dict)
+
+    def named(self, *starts: str) -> list[Part]:
+        """Return the parts whose names are, or start with a word that is, one of ``starts``."""
+        return [
+            p for p in self.design.parts if any(p.name == s or p.name.startswith(f"{s} ") for s in starts)
+        ]
+
+    def fact(self, name: str) -> Fact | None:
+        """Return the fact of that name."""
+        return next((fact for fact in self.design.facts if fact.name == name), None)
+
+    def currents_a(self) -> Mapping[str, float]:
+        """Return what every part carries at full deflection of the first range, in amperes."""
+        if not self.design.cases:
+            return {}
+        case = self.design.cases[0]
+        loads = case.work(self.design.ohms, case.signal).loads
+        return {name: abs(load.current_a) for name, load in loads.items()}
+
+    def label(self, part: Part) -> Label:
+        """Return a part's name, its value and, where it was measured otherwise, its value as built."""
+        return Label(part.name, tuple(self._values(part)))
+
+    def item(self, part: Part, kind: Kind = Kind.RESISTOR) -> Item:
+        """Return a part as it stands in the picture."""
+        return Item(kind, self.label(part), part.name)
+
+    def items(self, *starts: str, kind: Kind = Kind.RESISTOR) -> list[Item]:
+        """Return the parts of those names as they stand in the picture."""
+        return [self.item(part, kind) for part in self.named(*starts)]
+
+    def wire_items(self, name: str) -> list[Item]:
+        """Return what a wire's own resistance is drawn as: nothing where it has none."""
+        ohms = self.design.ohms.get(name, 0.0)
+        if not ohms or self.named(name):
+            return self.items(name)
+        return [Item(Kind.RESISTOR, Label(name, (engineered(ohms, "Ω"),)), name)]
+
+    def movement(self) -> Item:
+        """Return the movement, its current and its resistance each on a line of its own."""
+        lines = tuple(line for line in re.split(r"\s+(?=\d)|\n", self.coil_text.strip()) if line)
+        return Item(Kind.MOVEMENT, Label("", lines), COIL, plus=not self.alternating_at_coil)
+
+    @property
+    def alternating_at_coil(self) -> bool:
+        """Whether the movement itself sees alternating current: it is meant for it, with no rectifier."""
+        return self.design.alternating and self.design.kind != "rectifier"
+
+    @property
+    def upper(self) -> str:
+        """What is written at the upper terminal: the range and the sign of its current."""
+        return self.at_plus(self._range())
+
+    @property
+    def lower(self) -> str:
+        """What is written at the lower terminal."""
+        return AC if self.design.alternating else MINUS
+
+    def at_plus(self, range_text: str) -> str:
+        """Return a range with the sign of its current."""
+        return f"{range_text} {AC if self.design.alternating else PLUS}".strip()
+
+    def _range(self) -> str:
+        if self.design.cases:
+            return self.design.cases[0].name
+        known = self.design.range is not None and self.design.unit in ("A", "V")
+        return engineered(self.design.range or 0.0, self.design.unit) if known else ""
+
+    def _values(self, part: Part) -> Iterator[str]:
+        yield self.values.get(part.name, engineered(part.ohms, "Ω"))
+        if part.built is not None and engineered(part.built, "Ω") != engineered(part.ohms, "Ω"):
+            yield f"as built {engineered(part.built, 'Ω')}"

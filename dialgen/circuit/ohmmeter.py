@@ -9,8 +9,9 @@ from typing import Annotated, ClassVar, Literal
 import numpy as np
 
 from dialgen.circuit.cell import cell_of, check_cell, undesigned
+from dialgen.circuit.chain import Chain
 from dialgen.circuit.design import COIL, Design
-from dialgen.circuit.series_ohmmeter import Chain, range_name, series_design
+from dialgen.circuit.series_ohmmeter import range_name, series_design
 from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError

@@ -189,7 +189,8 @@ def _closing_in(shelves: Shelves, best: _Best, most_parts: int, progress: Progre
 
 def _leaders(levels: Floats, worst: Floats, wanted: int) -> Places:
     """Return the rows of the coolest network of each level, for as many levels as are wanted."""
-    order: Places = np.lexsort((worst, levels))
+    # Not by a last digit, as above; the first in order is taken.
+    order: Places = np.lexsort((worst.round(12), levels))
     different, first = np.unique(levels[order], return_index=True)
     away = np.abs(different)
     near = away <= np.sort(away)[:wanted].max(initial=0.0)

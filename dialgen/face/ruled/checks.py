@@ -40,6 +40,13 @@ def check_order(values: Sequence[float], angles: Array, key: Key) -> None:
     turned = np.flatnonzero(steps <= 0 if angles.size and angles[-1] > angles[0] else steps >= 0)
     if len(turned):
         at = int(turned[0])
+        if angles[at] == angles[at + 1]:
+            raise InputError(
+                f"the marks {values[at]:g} and {values[at + 1]:g} both stand at {angles[at]:.4g} degrees, as "
+                "the pointer does not move between them; leave one out",
+                (*key, "divisions"),
+                (*key, "numbered"),
+            )
         raise InputError(
             f"the marks {values[at]:g} and {values[at + 1]:g} do not follow each other; "
             "the law must move one way, and marks must stand apart",

@@ -93,6 +93,7 @@ class _Nodes:
     clear_mm: float
     gap_mm: float
     wanted_mm: float
+    foot: bool
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -112,7 +113,16 @@ def _nodes(ruler: Ruler, values: Array, forced: tuple[float, ...], wanted_mm: fl
     costs = np.array([0.0 if v in forced else _roundness(v) for v in values.tolist()])
     stops = np.searchsorted(values, np.array(forced))
     return _Nodes(
-        values, places, ruler.width_mm(values), costs, slopes, stops, ruler.clear_mm, ruler.gap_mm, wanted_mm
+        values,
+        places,
+        ruler.width_mm(values),
+        costs,
+        slopes,
+        stops,
+        ruler.clear_mm,
+        ruler.gap_mm,
+        wanted_mm,
+        ruler.foot,
     )
 
 
@@ -212,7 +222,9 @@ def _undivided(nodes: _Nodes, here: Indices, there: Indices, gap: float) -> NDAr
     coarsest = min(division.parts for division in legal_divisions(gap))
     low, high = nodes.slopes[here], nodes.slopes[there]
     share = (high - low) / (2 * coarsest)
-    nearest = np.minimum(low + share, high - share) * gap / coarsest
+    # At the foot of a scale the first marks may be left out.
+    first = np.where(nodes.foot & (here == 0), math.inf, low + share)
+    nearest = np.minimum(first, high - share) * gap / coarsest
     return np.asarray(nearest < nodes.gap_mm)
 
 

@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from enum import StrEnum
 from itertools import pairwise
 
@@ -17,6 +17,7 @@ import numpy as np
 
 from dialgen.errors import InputError
 from dialgen.face.ruled.ruler import Ruler, decimal_value, multiples
+from dialgen.stage import Array
 
 MOST_PARTS = 10
 MOST_MARKS = 3000
@@ -34,10 +35,14 @@ class Rank(StrEnum):
 
 @dataclass(frozen=True, slots=True)
 class Division:
-    """A gap cut into equal parts: how many, and after how many of them a middle mark stands."""
+    """A gap cut into equal parts: how many, and after how many of them a middle mark stands.
+
+    At the foot of a scale the first ``skipped`` marks are left out.
+    """
 
     parts: int
     middle_every: int
+    skipped: int = 0
 
 
 def legal_divisions(gap: float) -> list[Division]:
@@ -74,7 +79,8 @@ def divide(ruler: Ruler, numbered: Sequence[float]) -> list[tuple[float, Rank]]:
     marks = []
     for (low, high), division in zip(gaps, chosen, strict=True):
         if division:
-            marks += [(v, _rank(i, division)) for i, v in enumerate(_cut(low, high, division.parts), 1)]
+            cut = list(enumerate(_cut(low, high, division.parts), 1))
+            marks += [(v, _rank(i, division)) for i, v in cut[division.skipped :]]
     return [*marks, *_towards_infinity(ruler, numbered)]
 
 
@@ -125,15 +131,30 @@ def _finest_roomy(
     steps = np.diff(ruler.place_mm(np.concatenate(cuts)))
     # Within a cut its steps stand one after another; the step from cut to cut is passed over.
     starts = np.cumsum([0, *(len(cut) for cut in cuts[:-1])])
-    nearest = iter([steps[at : at + len(cut) - 1].min() for at, cut in zip(starts, cuts, strict=True)])
+    pieces = iter([steps[at : at + len(cut) - 1] for at, cut in zip(starts, cuts, strict=True)])
+    gap_mm = ruler.gap_mm * (1 - 1e-9)
     chosen: list[Division | None] = []
     for (low, high), legal in zip(gaps, choices, strict=True):
         least = ruler.least_step(low, high) * (1 - 1e-9)
         # The list is used up whole, so that every gap reads its own distances.
-        roomy = [d for d in legal if next(nearest) >= ruler.gap_mm * (1 - 1e-9)]
+        foot = ruler.foot and low == ruler.start
+        roomy = [d for division in legal if (d := _with_room(division, next(pieces), gap_mm, foot))]
         fitting = [d for d in roomy if (high - low) / d.parts >= least]
         chosen.append(fitting[0] if fitting else None)
     return chosen
+
+
+def _with_room(division: Division, steps_mm: Array, gap_mm: float, foot: bool) -> Division | None:
+    """Return a division whose marks have room, at a scale's foot by leaving out the first; None if none."""
+    narrow = np.flatnonzero(steps_mm < gap_mm)
+    if not len(narrow):
+        return division
+    # All that is narrow must lie at the foot: the marks from the last narrow step on are kept, but for
+    # its own end where that is still too near the start.
+    skipped = int(narrow[-1])
+    if steps_mm[: skipped + 1].sum() < gap_mm:
+        skipped += 1
+    return replace(division, skipped=skipped) if foot and skipped < division.parts - 1 else None
 
 
 def _levelled(

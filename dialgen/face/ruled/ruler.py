@@ -31,6 +31,8 @@ class Ruler:
         gap_mm: the least distance between marks.
         clear_mm: the least clear space between numerals.
         least_step: the least step of value that is justified between two values.
+        foot: whether the pointer starts from rest and at first scarcely moves, so that the first
+            marks may be left out while those after them stand.
     """
 
     start: float
@@ -42,6 +44,7 @@ class Ruler:
     gap_mm: float
     clear_mm: float
     least_step: Callable[[float, float], float] = lambda low, high: 0.0
+    foot: bool = False
 
     @property
     def length_mm(self) -> float:

@@ -21,6 +21,9 @@ from dialgen.stage import Array
 _STEPS = 96
 _FEW_STEPS = 32
 _LEAST_STEP, _LARGEST_VALUE = 1e-30, 1e30
+_AT_REST = 0.0025
+_SLOW = 4.0
+"""So many times the mean step of value in the first step of place, and the scale has a foot."""
 
 NumeralWidth = Callable[[str, float], float]
 """The width in mm of a numeral's text at a height in mm."""
@@ -72,17 +75,27 @@ def survey(
             above = (sizes.numeral_mm + sizes.stacked_mm) / across
         return np.minimum(beside, above) * crowding - sizes.clear_mm
 
+    along = _along(scale, line, ends_deg, place_mm)
     return Ruler(
         start=spec.start,
         end=spec.end,
         place_mm=place_mm,
-        along=_along(scale, line, ends_deg, place_mm),
+        along=along,
         width_mm=width_mm,
         digit_mm=min(numeral_width("0", sizes.numeral_mm), sizes.numeral_mm) * crowding,
         gap_mm=least_gap_mm(spec, abs(last - first), sizes.gap_mm),
         clear_mm=sizes.clear_mm,
         least_step=least_step(spec),
+        foot=_has_foot(scale, ends_deg, along),
     )
+
+
+def _has_foot(scale: ScaleDial, ends_deg: Array, along: Array) -> bool:
+    """Return whether a scale starts from rest and its first values scarcely move the pointer."""
+    chain = scale.chain
+    at_rest = abs(ends_deg[0] - chain.rest_deg) <= _AT_REST * abs(chain.full_deg - chain.rest_deg)
+    steps = np.diff(along)
+    return bool(at_rest and math.isfinite(along[-1]) and steps[0] > _SLOW * steps.mean())
 
 
 def _along(scale: ScaleDial, line: ScaleLine, ends_deg: Array, place_mm: Callable[[Array], Array]) -> Array:

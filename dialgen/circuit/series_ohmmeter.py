@@ -5,7 +5,7 @@ that of the largest range.  A smaller range puts a resistor across the whole cha
 resistor together have its half-scale resistance.  With the test leads shorted the chain has the whole
 cell across it on every range, so one zero adjuster serves all of them and need not be touched when
 the range is switched (common practice in multimeters).  Where half scale is so low that the adjuster
-would have to be of an ohm or less, the chain is made for a higher one than any range has.
+would be of a few ohms, the chain is made for a higher one than any range has.
 """
 
 from __future__ import annotations

@@ -9,8 +9,8 @@ from dialgen.circuit.design import Design
 from dialgen.parts.assessed import CaseAssessed, PartAssessed
 from dialgen.parts.bill import Bill
 from dialgen.parts.drift import NoSwamping, Swamping
-from dialgen.parts.stock import Candidate
-from dialgen.parts.winding import Winding
+from dialgen.parts.stock.search import Candidate
+from dialgen.parts.wire.winding import Winding
 
 Fields = dict[str, Any]
 

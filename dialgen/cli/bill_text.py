@@ -9,10 +9,10 @@ from dialgen.circuit.design import Fact
 from dialgen.cli.columns import columns, wrapped
 from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed, Together
 from dialgen.parts.bill import Bill
-from dialgen.parts.cautions import CAUTIONS
+from dialgen.parts.caution.cautions import CAUTIONS
 from dialgen.parts.drift import NoSwamping, Swamping
-from dialgen.parts.stock import Candidate, Search
-from dialgen.parts.workshop import advice, objections, summary
+from dialgen.parts.stock.search import Candidate, Search
+from dialgen.parts.wire.workshop import advice, objections, summary
 from dialgen.quantity import engineered, plain_number
 
 _EXACT_DIGITS = 7

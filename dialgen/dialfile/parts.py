@@ -12,11 +12,11 @@ from dialgen.dialfile.base import Table, each
 from dialgen.errors import InputError
 from dialgen.parts.bench import Bench
 from dialgen.parts.bill import Drawer
-from dialgen.parts.cautions import USUAL_RATINGS_V
-from dialgen.parts.drawer import Lot, read_stock
+from dialgen.parts.caution.cautions import USUAL_RATINGS_V
 from dialgen.parts.preferred import SERIES
 from dialgen.parts.ratings import MARGIN
-from dialgen.parts.wire import Wire, read_wire
+from dialgen.parts.stock.drawer import Lot, read_stock
+from dialgen.parts.wire.spool import Wire, read_wire
 from dialgen.quantity import VOLT_ABOVE, shown
 
 _MOST_LOTS, _MOST_WIRES = 200, 12

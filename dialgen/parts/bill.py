@@ -10,14 +10,14 @@ from dialgen.circuit.design import Design, Part
 from dialgen.errors import InputError
 from dialgen.parts.assessed import Assessment, PartAssessed, assess
 from dialgen.parts.bench import Bench
-from dialgen.parts.cautions import USUAL_RATINGS_V, Caution, cautions, split_count
-from dialgen.parts.drawer import Lot
+from dialgen.parts.caution.cautions import USUAL_RATINGS_V, Caution, cautions, split_count
+from dialgen.parts.caution.situation import Situation, situation_of
 from dialgen.parts.drift import NoSwamping, Swamping, swamping
-from dialgen.parts.situation import Situation, situation_of
-from dialgen.parts.stock import Progress, Search, search
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.search import Progress, Search, search
 from dialgen.parts.trimming import Trim, trims
-from dialgen.parts.winding import Winding, wound
-from dialgen.parts.wire import Wire
+from dialgen.parts.wire.spool import Wire
+from dialgen.parts.wire.winding import Winding, wound
 
 Reswamped = Callable[[float], Design]
 

@@ -13,8 +13,8 @@ import time
 from collections.abc import Callable
 from itertools import product
 
-from dialgen.parts.drawer import Lot
-from dialgen.parts.stock import search
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.search import search
 
 E12 = (1.0, 1.2, 1.5, 1.8, 2.2, 2.7, 3.3, 3.9, 4.7, 5.6, 6.8, 8.2)
 TARGET_OHM = 7.313

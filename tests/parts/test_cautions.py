@@ -16,8 +16,8 @@ from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.transformer import CurrentTransformer, read_ratio
 from dialgen.circuit.universal import UniversalShunt
 from dialgen.errors import InputError
-from dialgen.parts.cautions import CAUTIONS, USUAL_RATINGS_V, cautions, split_count
-from dialgen.parts.situation import Situation, situation_of
+from dialgen.parts.caution.cautions import CAUTIONS, USUAL_RATINGS_V, cautions, split_count
+from dialgen.parts.caution.situation import Situation, situation_of
 from dialgen.quantity import Amount
 
 GENERAL = ("radium", "sealed meters", "marks lost", "codes")

@@ -10,10 +10,10 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from dialgen.errors import InputError
-from dialgen.parts import shelves as shelves_module
-from dialgen.parts.drawer import Lot
-from dialgen.parts.networks import Single, networks_of
-from dialgen.parts.stock import search
+from dialgen.parts.stock import shelves as shelves_module
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.networks import Single, networks_of
+from dialgen.parts.stock.search import search
 
 E12 = (1.0, 1.2, 1.5, 1.8, 2.2, 2.7, 3.3, 3.9, 4.7, 5.6, 6.8, 8.2)
 PLENTY = 99

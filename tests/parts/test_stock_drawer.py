@@ -2,7 +2,7 @@
 
 import pytest
 
-from dialgen.parts.drawer import Lot, merged, read_stock
+from dialgen.parts.stock.drawer import Lot, merged, read_stock
 
 
 @pytest.mark.parametrize(

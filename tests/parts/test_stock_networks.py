@@ -9,9 +9,9 @@ import stock_enumerated as enumerated
 from hypothesis import given
 from hypothesis import strategies as st
 
-from dialgen.parts.drawer import Lot
-from dialgen.parts.networks import Parallel, Series, Single, figure, in_parallel, in_series, networks_of
-from dialgen.parts.shelves import stocked_shelves
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.networks import Parallel, Series, Single, figure, in_parallel, in_series, networks_of
+from dialgen.parts.stock.shelves import stocked_shelves
 
 WIRINGS = (1, 2, 4, 10, 24, 66, 180, 522)
 """OEIS A000084, series-parallel networks with n unlabelled edges."""

@@ -9,12 +9,12 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from dialgen.errors import InputError
-from dialgen.parts import cooling, workshop
-from dialgen.parts.cooling import rise_in_air_k, rise_of_bobbin_k
-from dialgen.parts.gauges import awg_diameter_mm
-from dialgen.parts.materials import MATERIALS
-from dialgen.parts.winding import wound
-from dialgen.parts.wire import read_wire
+from dialgen.parts.wire import cooling, workshop
+from dialgen.parts.wire.cooling import rise_in_air_k, rise_of_bobbin_k
+from dialgen.parts.wire.gauges import awg_diameter_mm
+from dialgen.parts.wire.materials import MATERIALS
+from dialgen.parts.wire.spool import read_wire
+from dialgen.parts.wire.winding import wound
 
 AMPERE_SHUNT = wound(1.875e-3, 40.0, read_wire("manganin 20 x 1 mm"))
 BOBBIN = wound(9500.0, 1e-3, read_wire("manganin 0.05 mm"))

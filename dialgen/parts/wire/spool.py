@@ -6,8 +6,8 @@ import math
 import re
 from dataclasses import dataclass, replace
 
-from dialgen.parts.gauges import awg_diameter_mm, gauge_name, read_gauge
-from dialgen.parts.materials import MATERIALS, Material, known_materials, meant_material
+from dialgen.parts.wire.gauges import awg_diameter_mm, gauge_name, read_gauge
+from dialgen.parts.wire.materials import MATERIALS, Material, known_materials, meant_material
 from dialgen.quantity import OHM_ABOVE, plain_number, read_length, shown
 from dialgen.quantity.units import plain_text
 

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable
 
-from dialgen.parts.winding import Winding
+from dialgen.parts.wire.winding import Winding
 from dialgen.quantity import engineered, plain_number
 
 PRECISE_RISE_K, RUINOUS_RISE_K = 60.0, 120.0

@@ -2,7 +2,7 @@
 
 All series-parallel networks are covered: of up to eight parts from a drawer of at most twelve values,
 of up to six from one of at most 150, of up to four from a larger one.  They are not all held; see
-`dialgen.parts.windows`.  The windows close in on the wanted value as better networks are found, so
+`dialgen.parts.stock.windows`.  The windows close in on the wanted value as better networks are found, so
 that the last size, with by far the most networks, costs least for each.
 """
 
@@ -15,10 +15,10 @@ from dataclasses import dataclass, field, replace
 import numpy as np
 
 from dialgen.errors import InputError
-from dialgen.parts.drawer import Lot, merged
-from dialgen.parts.networks import Network, figure, networks_of
-from dialgen.parts.shelves import Floats, Places, Shelves, stocked_shelves
-from dialgen.parts.windows import Found, Windows, found_in, look_ups, look_ups_of, reach_ohm, slabs
+from dialgen.parts.stock.drawer import Lot, merged
+from dialgen.parts.stock.networks import Network, figure, networks_of
+from dialgen.parts.stock.shelves import Floats, Places, Shelves, stocked_shelves
+from dialgen.parts.stock.windows import Found, Windows, found_in, look_ups, look_ups_of, reach_ohm, slabs
 
 MOST_PARTS = ((12, 8), (150, 6), (1500, 4))
 """Up to so many values in the drawer, networks of up to so many parts are sought; for time and room."""
@@ -67,7 +67,7 @@ class Search:
         cooler: networks of the first candidate's value with more parts, each with less power in its
             worst part than those before it.
         searched: how many different networks are covered: each wiring of each choice of values that
-            the pieces last for, by `dialgen.parts.networks.networks_of`.
+            the pieces last for, by `dialgen.parts.stock.networks.networks_of`.
         most_parts: the most parts that they have.
     """
 

@@ -11,7 +11,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from dialgen.errors import InputError
-from dialgen.parts.situation import TOUCH_DC_V, Situation
+from dialgen.parts.caution.situation import TOUCH_DC_V, Situation
 
 USUAL_RATINGS_V = {0.25: 250.0, 0.5: 350.0}
 """The voltage that small film resistors stand, by their watts.  Common practice, from memory."""

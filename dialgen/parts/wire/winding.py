@@ -6,8 +6,8 @@ import math
 from dataclasses import dataclass
 
 from dialgen.errors import InputError
-from dialgen.parts.cooling import rise_in_air_k, rise_of_bobbin_k
-from dialgen.parts.wire import Wire
+from dialgen.parts.wire.cooling import rise_in_air_k, rise_of_bobbin_k
+from dialgen.parts.wire.spool import Wire
 
 _LONG_MM, _THICK_MM = 500.0, 0.6
 _SPARE = 1.03
@@ -74,7 +74,7 @@ class Winding:
 
     @property
     def rise_k(self) -> float:
-        """How much warmer than the air it gets in the end: an estimate, see `dialgen.parts.cooling`."""
+        """How much warmer than the air it gets in the end: an estimate, see `dialgen.parts.wire.cooling`."""
         if self.coiled:
             return rise_of_bobbin_k(self.watts, self.room_cm3)
         return rise_in_air_k(self.surface_w_per_cm2 * 1e4, self.wire.perimeter_mm / math.pi)

@@ -14,8 +14,8 @@ from types import MappingProxyType
 import numpy as np
 from numpy.typing import NDArray
 
-from dialgen.parts.drawer import Lot
-from dialgen.parts.networks import Network, Single, in_parallel, in_series
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.networks import Network, Single, in_parallel, in_series
 
 Floats = NDArray[np.float64]
 Places = NDArray[np.intp]

@@ -14,9 +14,20 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from dialgen.parts.drawer import Lot
-from dialgen.parts.networks import Network
-from dialgen.parts.shelves import KINDS, SERIES, SINGLE, Floats, Leaves, Places, Shelves, joined, runs, wired
+from dialgen.parts.stock.drawer import Lot
+from dialgen.parts.stock.networks import Network
+from dialgen.parts.stock.shelves import (
+    KINDS,
+    SERIES,
+    SINGLE,
+    Floats,
+    Leaves,
+    Places,
+    Shelves,
+    joined,
+    runs,
+    wired,
+)
 
 _AT_ONCE = 300_000
 _ROUNDING = 1e-9

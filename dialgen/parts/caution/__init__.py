@@ -1,0 +1,1 @@
+"""What to beware of, by what the circuit is."""

@@ -60,6 +60,7 @@ class Part:
         built: the value measured on the part that was made, if the file gives it.
         given: whether the file states it, so that there is nothing to buy or to wind for the design.
         sums: the parts it stands for as a whole, such as the total of a tapped shunt.
+        adjustable: whether it is a potentiometer, that is set and not made to a value.
     """
 
     name: str
@@ -67,6 +68,12 @@ class Part:
     built: float | None = None
     given: bool = False
     sums: tuple[str, ...] = ()
+    adjustable: bool = False
+
+    @property
+    def is_made(self) -> bool:
+        """Whether a resistor of this value is to be bought, found or wound."""
+        return not (self.given or self.sums or self.adjustable) and 0 < self.ohms < math.inf
 
 
 @dataclass(frozen=True, slots=True, kw_only=True, eq=False)
@@ -77,11 +84,14 @@ class Case:
         name: the range as it is written, "40 A" or "×10".
         signal: in the unit of the design.
         work: how the circuit works with these ohms at such a signal.
+        judged_at: where full deflection itself is set with an adjuster, the signal at which errors are
+            looked for; None is at full deflection.
     """
 
     name: str
     signal: float
     work: Callable[[Ohms, float], Working]
+    judged_at: float | None = None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

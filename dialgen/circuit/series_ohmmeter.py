@@ -65,12 +65,18 @@ def series_design(kind: str, chain: Chain, half_ohm: float, times: Sequence[floa
         unit="Ω",
         ohms=ohms,
         parts=tuple(
-            Part(name=name, ohms=value)
+            Part(name=name, ohms=value, adjustable=name == ZERO)
             for name, value in ohms.items()
             if name != COIL and 0 < value < math.inf
         ),
         cases=tuple(
-            Case(name=range_name(k), signal=0.0, work=_worker(chain, share, switched.get(k))) for k in times
+            Case(
+                name=range_name(k),
+                signal=0.0,
+                work=_worker(chain, share, switched.get(k)),
+                judged_at=halves[k],
+            )
+            for k in times
         ),
         facts=(*_current_facts(chain, halves), *_cell_facts(chain, halves, found)),
     )

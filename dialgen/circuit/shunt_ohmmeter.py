@@ -151,11 +151,11 @@ def shunt_design(kind: str, made: Fed) -> Design:
         unit="Ω",
         ohms=ohms,
         parts=tuple(
-            Part(name=name, ohms=value)
+            Part(name=name, ohms=value, adjustable=name == FULL)
             for name, value in ohms.items()
             if name != COIL and 0 < value < math.inf
         ),
-        cases=(Case(name=OPEN, signal=math.inf, work=_worker(made, share)),),
+        cases=(Case(name=OPEN, signal=math.inf, work=_worker(made, share), judged_at=made.half_ohm),),
         facts=(*_current_facts(made), *_cell_facts(made, found)),
     )
 

@@ -6,7 +6,7 @@ import math
 from collections.abc import Iterator, Sequence
 
 from dialgen.circuit.design import Fact
-from dialgen.cli.columns import columns, wrapped
+from dialgen.cli.columns import columns, table, wrapped
 from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed, Together
 from dialgen.parts.bill import Bill
 from dialgen.parts.caution.cautions import CAUTIONS
@@ -36,7 +36,8 @@ def closing_lines(bills: Sequence[Bill]) -> Iterator[str]:
     assessments = [bill.assessment for bill in bills if bill.assessment and bill.assessment.parts]
     if assessments:
         yield "How to read it"
-        for note in _notes(assessments, ohms=any(bill.design.unit == "Ω" for bill in bills)):
+        cases = [case for bill in bills for case in bill.design.cases]
+        for note in _notes(assessments, adjusted=any(case.judged_at is not None for case in cases)):
             yield from wrapped(note, "- ")
         yield ""
     yield "Cautions"
@@ -46,7 +47,7 @@ def closing_lines(bills: Sequence[Bill]) -> Iterator[str]:
             yield from wrapped(f"{caution.text} ({caution.source})", "- ")
 
 
-def _notes(assessments: Sequence[Assessment], *, ohms: bool) -> Iterator[str]:
+def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str]:
     margin = plain_number(assessments[0].bench.margin)
     yield (
         "Current, voltage and power are at full scale, of several ranges where each is worst; to buy is a "
@@ -56,13 +57,17 @@ def _notes(assessments: Sequence[Assessment], *, ohms: bool) -> Iterator[str]:
         "Heat is that of coil and resistors together. Drift is what the coil's copper does, 0.393 % per "
         "kelvin (IEC 60028), against resistors of 0.001 %; magnet and springs are not counted."
     )
-    yield (
-        "Below each nearest value (IEC 60063) stands the error at full scale with it alone, then that with "
-        "all of them, and what their tolerance does to full scale: at worst, and likely (root of the sum of "
-        "squares)."
-    )
-    if ohms:
-        yield "In an ohmmeter these errors are those before the zero is set again."
+    if any(part.fits for assessment in assessments for part in assessment.parts):
+        yield (
+            "Below each nearest value (IEC 60063) stands the error at full scale with it alone, then that "
+            "with all of them, and what their tolerance does to full scale: at worst, and likely (root of the "
+            "sum of squares)."
+        )
+    if adjusted:
+        yield (
+            "In an ohmmeter errors are those at half scale once the zero is set, in percent of the whole "
+            "deflection; so is its drift."
+        )
 
 
 def percent(value: float) -> str:
@@ -81,7 +86,7 @@ def _parts(bill: Bill) -> Iterator[str]:
         return
     times = plain_number(assessment.bench.overload)
     heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "to buy")
-    yield from columns([heads, *(row for part in assessment.parts for row in _part_rows(part))])
+    yield from table(heads, [row for part in assessment.parts for row in _part_rows(part)])
 
 
 def _part_rows(assessed: PartAssessed) -> Iterator[tuple[str, ...]]:
@@ -123,7 +128,7 @@ def _ranges(bill: Bill) -> Iterator[str]:
         )
         for case, drift in zip(assessment.cases, assessment.drifts, strict=True)
     ]
-    yield from columns([heads, *rows])
+    yield from table(heads, rows)
 
 
 def _drop(bill: Bill, case: CaseAssessed) -> str:
@@ -271,8 +276,8 @@ def _facts(bill: Bill) -> Iterator[str]:
 def _fact(fact: Fact) -> str:
     if not math.isfinite(fact.value):
         return fact.note
-    whole = plain_number(float(f"{fact.value:.5g}"))
-    value = engineered(fact.value, fact.unit) if fact.unit in _PREFIXED else f"{whole} {fact.unit}".strip()
+    whole = plain_number(float(f"{fact.value:.3g}"))
+    value = engineered(fact.value, fact.unit, 4) if fact.unit in _PREFIXED else f"{whole} {fact.unit}".strip()
     return f"{value}, {fact.note}" if fact.note else value
 
 

@@ -22,6 +22,12 @@ def columns(rows: Sequence[Sequence[str]], left: int = 1, gap: str = "  ") -> li
     ]
 
 
+def table(heads: Sequence[str], rows: Sequence[Sequence[str]], left: int = 1) -> list[str]:
+    """Return lines as `columns` does, with heads above, and without columns that no row has anything in."""
+    filled = [i for i in range(len(heads)) if i < left or any(row[i] for row in rows)]
+    return columns([[row[i] for i in filled] for row in (heads, *rows)], left)
+
+
 def wrapped(text: str, first: str = "", rest: str = "  ") -> list[str]:
     """Return a text in lines of readable width, the first and the others behind their own beginning."""
     # A number stays with its unit.

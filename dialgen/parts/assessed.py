@@ -166,7 +166,7 @@ def _part(part: Part, ranges: Sequence[_Range], judged: Sequence[_Judged], bench
         overload=_carried(names, worst.overload) if worst and worst.overload else None,
         rating_w=rating_w(full.watts, bench.margin),
         sensitivity=None if part.sums else largest([_sensitivity(part, each.at) for each in having]),
-        fits=tuple(each.fit(part.name) for each in judged) if _is_bought(part) else (),
+        fits=tuple(each.fit(part.name) for each in judged) if part.is_made else (),
     )
 
 
@@ -176,10 +176,6 @@ def _carried(names: Sequence[str], working: Working) -> Carried:
         return Carried(watts=sum(load.watts for load in loads))
     load = loads[0]
     return Carried(watts=load.watts, current_a=abs(load.current_a), voltage_v=abs(load.voltage_v))
-
-
-def _is_bought(part: Part) -> bool:
-    return not part.sums and not part.given and 0 < part.ohms < math.inf
 
 
 def _sensitivity(part: Part, at: Worked) -> float:
@@ -227,12 +223,12 @@ def _judge(design: Design, ranges: Sequence[_Range], series: Series, tolerance_p
         series=series,
         tolerance_percent=tolerance_percent,
         ranges=ranges,
-        nearest_ohm={part.name: nearest(part.ohms, series.name) for part in singles if _is_bought(part)},
+        nearest_ohm={part.name: nearest(part.ohms, series.name) for part in singles if part.is_made},
         spreads=[
             {
                 part.name: _spread_percent(part, each.at, tolerance_percent)
                 for part in singles
-                if each.at.has(part.name)
+                if each.at.has(part.name) and not part.adjustable
             }
             for each in ranges
         ],

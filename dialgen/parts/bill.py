@@ -6,7 +6,7 @@ import math
 from collections.abc import Callable
 from dataclasses import dataclass, field
 
-from dialgen.circuit.design import Design, Part
+from dialgen.circuit.design import Design
 from dialgen.errors import InputError
 from dialgen.parts.assessed import Assessment, PartAssessed, assess
 from dialgen.parts.bench import Bench
@@ -99,7 +99,7 @@ def bill(
     if situation.beyond_help:
         return Bill(design=design, assessment=None, cautions=heeded)
     assessment = assess(design, drawer.bench)
-    made = [part for part in assessment.parts if _is_made(part.part)]
+    made = [part for part in assessment.parts if part.part.is_made]
     return Bill(
         design=design,
         assessment=assessment,
@@ -121,11 +121,6 @@ def bill(
         swamping=_swamping(reswamped, drawer.bench),
         cautions=heeded,
     )
-
-
-def _is_made(part: Part) -> bool:
-    """Return whether a part is to be bought, found or wound: not given, not a whole of others, not a wire."""
-    return not part.given and not part.sums and 0 < part.ohms < math.inf
 
 
 def _splits(part: PartAssessed, situation: Situation, rating_v: float) -> list[Split]:

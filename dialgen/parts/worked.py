@@ -30,14 +30,28 @@ class Worked:
     def error_percent(self, changed: Ohms) -> float:
         """Return by how many percent the pointer goes farther at full scale than it does as designed.
 
-        Of full deflection, where as designed it does not go from rest: a bridge balanced there.
+        Of full deflection, where as designed it does not go from rest: a bridge balanced there.  Of an
+        ohmmeter, whose full deflection is set with an adjuster, by how many percent of it the pointer
+        stands too far at half scale, once that is set.
 
         Args:
             changed: the resistances that are not as designed, by name.
         """
-        drive = self.case.work({**self.ohms, **changed}, self.case.signal).drive
+        ohms = {**self.ohms, **changed}
+        if self.case.judged_at is not None:
+            return (
+                self._share(ohms, self.case.judged_at) - self._share(self.ohms, self.case.judged_at)
+            ) * 100.0
+        drive = self.case.work(ohms, self.case.signal).drive
         whole = self.full.drive if abs(self.full.drive) > _RESTING else 1.0
         return (drive - self.full.drive) / whole * 100.0
+
+    def _share(self, ohms: Ohms, signal: float) -> float:
+        """Return the drive at a signal as a share of that at full scale with the same ohms.
+
+        What little the adjuster changes of the inner resistance when it is set again is left out.
+        """
+        return self.case.work(ohms, signal).drive / self.case.work(ohms, self.case.signal).drive
 
 
 def worked(design: Design) -> tuple[Worked, ...]:

@@ -15,7 +15,7 @@ if TYPE_CHECKING:
     from dialgen.api import Face
 
 __all__ = ["__version__", "load"]
-__version__ = "0.2.0"
+__version__ = "0.3.0"
 
 
 def load(path: str | PathLike[str]) -> Face:

@@ -6,7 +6,7 @@ import errno
 import os
 import shutil
 from collections.abc import Callable, Iterable, Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import cached_property
 from os import PathLike, fspath
 from pathlib import Path
@@ -177,11 +177,15 @@ class Face:
         """Return the picture of one of `circuits` as a display list."""
         from dialgen.schematic import draw
 
-        movement = self.dial.file.movement
+        movement, name = self.dial.file.movement, self.dial.file.dial.name
         coil = ((movement.current, "A"), (movement.resistance, "Ω"))
+        design = circuit.design
+        if movement.kind == "moving iron":
+            # It deflects one way whatever the current's, so its terminals have no poles.
+            design = replace(design, alternating=True)
         return draw(
-            circuit.design,
-            title=self.dial.file.dial.name or "",
+            design,
+            title=f"{name}: {design.kind}" if name else design.kind,
             coil_text=" ".join(engineered(value, unit) for value, unit in coil if value is not None),
         )
 

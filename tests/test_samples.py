@@ -7,9 +7,10 @@ from itertools import zip_longest
 from pathlib import Path
 
 import pytest
-from redraw_samples import COMMAND, RESOLUTION_DPI, SAMPLES, dial_files, redraw
+from redraw_samples import COMMAND, RESOLUTION_DPI, SAMPLES, SCHEMATICS, dial_files, redraw
 
 import dialgen
+from dialgen.renderers import render
 
 FILES = dial_files()
 NAMES = [path.stem for path in FILES]
@@ -72,11 +73,21 @@ def test_every_format_is_kept_and_small(path: Path) -> None:
 
 
 def test_nothing_else_lies_among_the_samples() -> None:
-    """Every sample has a folder of its own name with its dial file, readings and three drawings, no more."""
+    """Every sample has a folder of its own name with its dial file, readings and drawings, no more."""
     for folder in SAMPLES.iterdir():
         names = {item.name for item in folder.iterdir()}
         wanted = {f"{folder.name}{suffix}" for suffix in (".toml", ".svg", ".pdf", ".png")}
+        if folder.name in SCHEMATICS:
+            wanted |= {f"{folder.name}-circuit.svg", f"{folder.name}-circuit.png"}
         assert wanted <= names <= wanted | {f"{folder.name}.csv"}
+
+
+@pytest.mark.parametrize("name", SCHEMATICS)
+def test_kept_schematic_is_what_the_code_draws(name: str) -> None:
+    """The schematic in the repository is the one that today's code draws of the dial file beside it."""
+    face = dialgen.load(SAMPLES / name / f"{name}.toml")
+    drawing = face.schematic(face.circuits[SCHEMATICS[name] - 1])
+    _check_kept(SAMPLES / name / f"{name}-circuit.svg", render(drawing, ".svg").decode())
 
 
 def test_comparison_can_fail(tmp_path: Path) -> None:
@@ -99,8 +110,9 @@ def test_redrawing_writes_the_three_drawings(tmp_path: Path) -> None:
     """The redraw command writes SVG, PDF and PNG beside a dial file, the PNG at 300 dpi."""
     pytest.importorskip("cairo")
     image = pytest.importorskip("PIL.Image")
-    copy = tmp_path / FILES[1].name
-    copy.write_bytes(FILES[1].read_bytes())
+    original = SAMPLES / "bench-ohmmeter" / "bench-ohmmeter.toml"
+    copy = tmp_path / original.name
+    copy.write_bytes(original.read_bytes())
     written = redraw(copy)
     assert sorted(path.name for path in tmp_path.iterdir()) == sorted([copy.name, *(p.name for p in written)])
     with image.open(copy.with_suffix(".png")) as picture:

@@ -60,8 +60,8 @@ def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str
     if any(part.fits for assessment in assessments for part in assessment.parts):
         yield (
             "Below each nearest value (IEC 60063) stands the error at full scale with it alone, then that "
-            "with all of them, and what their tolerance does to full scale: at worst, and likely (root of the "
-            "sum of squares)."
+            "with all of them, and what their tolerance does to full scale: at worst, and likely (root of "
+            "the sum of squares)."
         )
     if adjusted:
         yield (

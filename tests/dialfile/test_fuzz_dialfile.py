@@ -15,6 +15,7 @@ from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from dialgen import api
+from dialgen.cli.bill_text import bill_lines
 from dialgen.dialfile import Source, parse
 from dialgen.errors import DialFileError, DialgenError, NoSuchValue
 
@@ -113,6 +114,26 @@ _LAWS = (
     | st.fixed_dictionaries({"kind": st.just("power"), "exponent": _ENDS})
     | st.fixed_dictionaries({"kind": st.just("formula"), "signal": st.sampled_from(_FORMULAS)})
     | st.fixed_dictionaries({"kind": st.sampled_from(["table", "observed"]), "points": _POINTS})
+    | st.fixed_dictionaries(
+        {"kind": st.just("thermocouple"), "type": st.sampled_from(list("BEJKNRST"))},
+        optional={"reference": st.sampled_from(["0 degC", "77 degF", "1500 degC", "0 K"])},
+    )
+    | st.sampled_from(["pt100", "nernst"])
+    | st.fixed_dictionaries(
+        {
+            "kind": st.just("thermistor"),
+            "r25": st.sampled_from(["10 kohm", "1e-9 ohm", "1e15 ohm"]),
+            "beta": st.sampled_from([3950, 1e-9, 1e6, -100]),
+        }
+    )
+)
+_DIODES = st.sampled_from(["silicon", "germanium", "schottky", "copper oxide", "ideal"]) | st.sampled_from(
+    [
+        {"drop": "0.7 V"},
+        {"drop": "1e-12 V"},
+        {"saturation": "1 pA", "ideality": 1},
+        {"saturation": "1 A", "ideality": 100, "resistance": "1 Mohm"},
+    ]
 )
 _CIRCUITS = (
     st.fixed_dictionaries({"kind": st.just("direct")}, optional={"full": _ENDS, "rest": _ENDS})
@@ -134,6 +155,44 @@ _CIRCUITS = (
         {
             "kind": st.sampled_from(["series ohmmeter", "shunt ohmmeter"]),
             "half": st.sampled_from(["30 ohm", "1e-15 ohm", "1e15 ohm"]),
+        },
+        optional={
+            "battery": st.sampled_from(["1.5 V", "1e-9 V", "1e9 V"]),
+            "worn": st.sampled_from(["1.2 V", "1e-12 V"]),
+        },
+    )
+    | st.fixed_dictionaries(
+        {
+            "kind": st.just("universal shunt"),
+            "ranges": st.sampled_from([["1 A", "5 A"], ["10 mA", "50 A", "1e15 A"], ["40 A", "1 A"]]),
+        },
+        optional={"range": st.sampled_from(["5 A", "40 A"]), "swamp": st.sampled_from(["1 ohm", "1e15 ohm"])},
+    )
+    | st.fixed_dictionaries(
+        {"kind": st.just("current transformer"), "ratio": st.sampled_from(["200/5", "1e-6/1e6", "4/500"])}
+    )
+    | st.fixed_dictionaries(
+        {"kind": st.just("rectifier")},
+        optional={
+            "range": st.sampled_from(["10 V", "1 mV", "1e9 V"]),
+            "diode": _DIODES,
+            "coil_shunt": st.sampled_from(["100 ohm", "1e-12 ohm"]),
+            "built": st.sampled_from(["9 kohm", "1e-9 ohm"]),
+        },
+    )
+    | st.fixed_dictionaries(
+        {
+            "kind": st.just("rectifier"),
+            "rectifier": st.sampled_from(["half bridge", "half wave"]),
+            "diode": _DIODES,
+        },
+        optional={"legs": st.sampled_from(["1 kohm", "1e15 ohm", "1e-12 ohm"])},
+    )
+    | st.fixed_dictionaries(
+        {
+            "kind": st.just("bridge"),
+            "supply": st.sampled_from(["1 V", "-1 V", "1e15 V"]),
+            "arms": st.sampled_from([["220 ohm", "220 ohm", "100 ohm"], ["1e-9 ohm", "1e15 ohm", "1 ohm"]]),
         }
     )
 )
@@ -160,7 +219,7 @@ def _scales(draw: st.DrawFn) -> dict[str, object]:
         "law": _LAWS,
         "circuit": _CIRCUITS,
     }
-    units = st.sampled_from(["A", "mA", "V", "kV", "ohm", "dB", "", "W"])
+    units = st.sampled_from(["A", "mA", "V", "kV", "ohm", "dB", "", "W", "degC", "degF", "K", "pH"])
     scale = draw(st.fixed_dictionaries({"unit": units}, optional=optional))
     return {"from": start, "to": end, **draw(_LINES), **scale}
 
@@ -218,6 +277,24 @@ def _load_and_draw(text: bytes) -> None:
             assert angles in (sorted(angles), sorted(angles, reverse=True))
         for number in range(1, len(face.scales) + 1):
             _ask(face, number)
+        _bill(face)
+
+
+def _bill(face: api.Face) -> None:
+    """Work out the circuits: figures come out finite or as nothing, or the file is refused with a place."""
+    try:
+        bills = [face.bill(circuit) for circuit in face.circuits]
+    except DialFileError as error:
+        assert all(fault.line >= 1 and "; " in fault.message for fault in error.faults)  # noqa: PT017
+        return
+    for bill in bills:
+        assert bill.cautions
+        for part in bill.assessment.parts if bill.assessment else ():
+            assert math.isfinite(part.full.watts)
+            assert part.rating_w >= 2 * part.full.watts * (1 - 1e-6)
+        words = "\n".join(bill_lines(bill))
+        assert "nan" not in words
+        assert "inf" not in words.replace("infinit", "")
 
 
 def _ask(face: api.Face, scale: int) -> None:

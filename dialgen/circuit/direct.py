@@ -3,12 +3,14 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
-from dialgen.circuit.design import COIL, Design
+from dialgen.circuit.design import COIL, Case, Design, Load, Ohms, Working
 from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
+from dialgen.quantity import engineered
 from dialgen.stage import Affine, Stage
 
 FACE_VALUE = "a bare value of the scale"
@@ -46,8 +48,36 @@ class Direct(Circuit):
         return Affine(1.0 / width, -rest_signal / width)
 
     def design(self, terminals: Terminals) -> Design:
-        """Return a design without parts: there is nothing to build."""
-        full = terminals.full_value if self.full is None else self.full
-        coil = terminals.coil
-        ohms = {} if coil.resistance is None else {COIL: coil.resistance}
-        return Design(kind=self.kind, range=terminals.signal(full), unit=terminals.unit or "", ohms=ohms)
+        """Return a design without parts: there is nothing to build.
+
+        Its one case is the bare coil on amperes or volts, where its resistance is known.
+        """
+        full = terminals.signal(terminals.full_value if self.full is None else self.full)
+        unit, coil_ohm = terminals.unit or "", terminals.coil.resistance
+        bare = unit in _CURRENT_A and coil_ohm is not None and 0 < full < math.inf
+        return Design(
+            kind=self.kind,
+            range=full,
+            unit=unit,
+            ohms={} if coil_ohm is None else {COIL: coil_ohm},
+            cases=(Case(name=engineered(full, unit), signal=full, work=_worker(unit, full, coil_ohm or 0.0)),)
+            if bare
+            else (),
+        )
+
+
+_CURRENT_A: Mapping[str, Callable[[float, float], float]] = {
+    "A": lambda signal, ohms: signal,
+    "V": lambda signal, ohms: signal / ohms,
+}
+"""The coil's current by the unit of the signal, of signal and resistance."""
+
+
+def _worker(unit: str, full: float, coil_ohm: float) -> Callable[[Ohms, float], Working]:
+    full_a = _CURRENT_A[unit](full, coil_ohm)
+
+    def work(ohms: Ohms, signal: float) -> Working:
+        load = Load(_CURRENT_A[unit](signal, ohms[COIL]), ohms[COIL])
+        return Working(load.current_a / full_a, {COIL: load}, load.voltage_v)
+
+    return work

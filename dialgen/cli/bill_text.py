@@ -82,7 +82,10 @@ def percent(value: float) -> str:
 
 def _parts(bill: Bill) -> Iterator[str]:
     assessment = bill.assessment
-    if assessment is None or not assessment.parts:
+    if assessment is None:
+        return
+    if not assessment.parts:
+        yield "Nothing to buy or to make."
         return
     times = plain_number(assessment.bench.overload)
     heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "to buy")

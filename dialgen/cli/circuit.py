@@ -164,7 +164,8 @@ def _title(designed: Designed) -> str:
     from dialgen.quantity import engineered
 
     design = designed.design
-    size = "" if design.range is None else f" for {engineered(design.range, design.unit).rstrip()}"
+    told = design.range is not None and design.unit in ("A", "V", "Ω")
+    size = f" for {engineered(design.range or 0.0, design.unit)}" if told else ""
     serves = (f"scale {scale}" + (f" row {also + 1}" if also else "") for scale, also in designed.serves)
     return f"{design.kind}{size} ({', '.join(serves)})"
 

@@ -62,3 +62,21 @@ def test_an_observed_scale_is_designed_by_its_stated_range_alone():
     with pytest.raises(Refused, match="give range") as refusal:
         circuits(seen + 'circuit = "multiplier"')
     assert refusal.value.errors[0].keys[0] == ("scale", 0, "circuit", "range")
+
+
+def test_a_bare_voltmeter_drifts_with_its_copper_and_a_bare_ammeter_does_not():
+    """Volts across a copper coil drive less current by 0.393 % per kelvin (IEC 60028); amperes do not."""
+    (volts,) = circuits('unit = "mV"\nfrom = 0\nto = 75')
+    (amperes,) = circuits('unit = "mA"\nfrom = 0\nto = 1')
+    for found, drive in ((volts, 1 / 1.00393), (amperes, 1.0)):
+        case = found.design.cases[0]
+        assert case.work({"coil": 75 * 1.00393}, case.signal).drive == pytest.approx(drive, rel=1e-12)
+        assert case.work(found.design.ohms, case.signal).drop_v == pytest.approx(0.075, rel=1e-12)
+
+
+def test_swamping_a_bought_shunt_is_worked_for_a_shunt_of_more_drop():
+    """With a bought shunt another swamp asks for another shunt, Im·(Rm + swamp) at its range."""
+    (found,) = circuits(SCALE + 'circuit = { kind = "shunt", rated = "40 A/75 mV", built = "1.9 mohm" }')
+    design = found.reswamped(225.0)
+    assert design.parts[0].ohms == pytest.approx(1e-3 * 300.0 / (40.0 - 1e-3), rel=1e-12)
+    assert design.cases[0].work(design.ohms, 40.0).drop_v == pytest.approx(0.3, rel=1e-9)

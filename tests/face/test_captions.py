@@ -112,6 +112,12 @@ def test_further_rows_say_the_value_times_their_factor() -> None:
     assert [row.unit for row in rows] == ["A", "A", "kV"]
 
 
+def test_a_row_is_written_in_the_unit_it_names() -> None:
+    """40 A in a row times 1000 of mA is lettered 40 000 mA, not folded back to 40 A."""
+    (_, row) = captions(scale(also=[{"times": 1000, "unit": "mA"}]), Look(), 40.0)
+    assert (row.text(40.0).replace("\N{NARROW NO-BREAK SPACE}", " "), row.unit) == ("40 000", "mA")
+
+
 def test_tenths_come_out_exact() -> None:
     """3 times 0.1 is lettered 0.3."""
     (_, row) = captions(scale(also=[{"times": 0.1}]), Look(), 40.0)

@@ -48,14 +48,20 @@ def captions(scale: Scale, look: Look, largest: float) -> tuple[Caption, ...]:
         look: how numbers are written.
         largest: how large the values of the scale are.
     """
-    rows = [(1.0, scale.unit), *((row.times, row.unit or scale.unit) for row in scale.also)]
-    return tuple(_caption(scale, look, times, unit, largest) for times, unit in rows)
+    foldable = largest if look.fold else None
+    # A row that names its unit is written in it, however many digits that takes.
+    rows = (
+        _caption(scale, look, row.times, row.unit or scale.unit, None if row.unit else foldable)
+        for row in scale.also
+    )
+    return (_caption(scale, look, 1.0, scale.unit, foldable), *rows)
 
 
-def _caption(scale: Scale, look: Look, times: float, unit: str, largest: float) -> Caption:
+def _caption(scale: Scale, look: Look, times: float, unit: str, folded_for: float | None) -> Caption:
+    """Return how a row is written, its prefix folded so that values as large as ``folded_for`` stay short."""
     folded, printed = 1.0, shown_unit(unit)
-    if look.fold:
-        folded, printed = folded_unit(unit, largest * times)
+    if folded_for is not None:
+        folded, printed = folded_unit(unit, folded_for * times)
     return Caption(
         times=times * folded,
         unit=printed,

@@ -10,6 +10,7 @@ from typing import Annotated, ClassVar
 import numpy as np
 
 from dialgen.circuit.design import COIL, Case, Design, Fact, Load, Ohms, Part, Working
+from dialgen.circuit.names import ARM, BALANCE, SUPPLY
 from dialgen.circuit.network import Branch, Solution, solve
 from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
@@ -17,7 +18,7 @@ from dialgen.quantity import OHM_ABOVE, VOLT, Amount, engineered, shown
 from dialgen.stage import POSITIVE, Array, Span, Stage
 
 ARMS = "the three arms of a bridge"
-ARM_NAMES = ("arm R1", "arm R2", "arm R3")
+ARM_NAMES = (f"{ARM} R1", f"{ARM} R2", f"{ARM} R3")
 _EXAMPLE = '["100 ohm", "1 kohm", "1 kohm"], R1 above the sensor, R2 above R3'
 
 
@@ -111,8 +112,8 @@ class Bridge(Circuit):
         sensor = max((_sensor(x, ohms, supply_v) for x in places), key=lambda load: load.watts)
         at = f"at {engineered(sensor.ohms, 'Ω')}"
         return (
-            Fact(name="supply", value=supply_v, unit="V", note="off balance the deflection follows it"),
-            Fact(name="balance", value=self._balance_ohm, unit="Ω", note="R1·R3/R2, pointer at rest"),
+            Fact(name=SUPPLY, value=supply_v, unit="V", note="off balance the deflection follows it"),
+            Fact(name=BALANCE, value=self._balance_ohm, unit="Ω", note="R1·R3/R2, pointer at rest"),
             *_full_facts(case, ohms, supply_v),
             Fact(
                 name="sensor current",
@@ -154,7 +155,7 @@ def _lead_facts(case: Case, ohms: Ohms) -> tuple[Fact, ...]:
 def _solved(ohms: Ohms, sensor_ohm: float, supply_v: float) -> Solution:
     return solve(
         (
-            Branch("supply", "minus", "plus", 0.0, emf_v=supply_v),
+            Branch(SUPPLY, "minus", "plus", 0.0, emf_v=supply_v),
             Branch(ARM_NAMES[0], "plus", "sensed", ohms[ARM_NAMES[0]]),
             Branch(ARM_NAMES[1], "plus", "fixed", ohms[ARM_NAMES[1]]),
             Branch(ARM_NAMES[2], "fixed", "minus", ohms[ARM_NAMES[2]]),

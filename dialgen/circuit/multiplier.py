@@ -12,6 +12,7 @@ from typing import Annotated, ClassVar
 
 from dialgen.circuit.built import BUILT_EACH
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
+from dialgen.circuit.names import LINE, MULTIPLIER, SECTION, SUPPRESS, SWAMP
 from dialgen.circuit.network import Branch, solve
 from dialgen.circuit.ranges import VOLT_RANGES, check_ranges, chosen
 from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
@@ -19,7 +20,6 @@ from dialgen.errors import InputError
 from dialgen.quantity import OHM, VOLT, VOLT_ABOVE, Amount, engineered
 from dialgen.stage import Affine, Stage
 
-MULTIPLIER, SWAMP, LINE, SUPPRESS = "multiplier", "swamp", "line", "suppressed zero"
 _ROUNDING = 1e-12
 
 
@@ -117,7 +117,7 @@ class Multiplier(Circuit):
 
     def _names(self, ranges_v: Sequence[float]) -> list[str]:
         if self.chain:
-            return [f"section {i}" for i, _ in enumerate(ranges_v, 1)]
+            return [f"{SECTION} {i}" for i, _ in enumerate(ranges_v, 1)]
         return [f"{MULTIPLIER} {engineered(v, 'V')}" for v in ranges_v] if self.ranges else [MULTIPLIER]
 
     def _known(self, terminals: Terminals) -> Mapping[str, float]:
@@ -134,9 +134,9 @@ class Multiplier(Circuit):
         ohms = (range_v - self._suppress_v) / coil_a - known_ohm
         if ohms < -_ROUNDING * known_ohm:
             raise InputError(
-                f"a range of {range_v:g} V leaves {range_v - self._suppress_v:.4g} V, but the coil and "
-                f"what is in series need {known_ohm * coil_a:.4g} V; "
-                "take a larger range or a more sensitive movement",
+                f"a range of {engineered(range_v, 'V')} leaves "
+                f"{engineered(range_v - self._suppress_v, 'V')}, but the coil and what is in series need "
+                f"{engineered(known_ohm * coil_a, 'V')}; take a larger range or a more sensitive movement",
                 ("range",),
                 RESISTANCE_KEY,
             )

@@ -11,6 +11,7 @@ import numpy as np
 from dialgen.circuit.cell import cell_of, check_cell, undesigned
 from dialgen.circuit.chain import Chain
 from dialgen.circuit.design import COIL, Design
+from dialgen.circuit.ranges import MOST_RANGES
 from dialgen.circuit.series_ohmmeter import range_name, series_design
 from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
@@ -19,7 +20,6 @@ from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered, read_num
 from dialgen.stage import Array, Span, Stage
 
 TIMES = "the ranges of one ohms scale, one or a list"
-_MOST_RANGES = 12
 _LEAST_TIMES, _MOST_TIMES = 1e-3, 1e6
 _ROUND = 1e-9
 
@@ -34,10 +34,8 @@ def read_times(given: object) -> tuple[float, ...]:
     ((1.0, 10.0, 100.0), (10.0,))
     """
     listed = given if isinstance(given, list) else [given]
-    if not 1 <= len(listed) <= _MOST_RANGES:
-        raise ValueError(
-            f"{len(listed)} ranges on one scale; write 1 to {_MOST_RANGES}, such as [1, 10, 100]"
-        )
+    if not 1 <= len(listed) <= MOST_RANGES:
+        raise ValueError(f"{len(listed)} ranges on one scale; write 1 to {MOST_RANGES}, such as [1, 10, 100]")
     found = [read_number(each, "times") for each in listed]
     for times in found:
         if not _LEAST_TIMES <= times <= _MOST_TIMES:

@@ -13,14 +13,16 @@ from dialgen.circuit.built import BUILT
 from dialgen.circuit.conduction import Curve
 from dialgen.circuit.design import COIL, Case, Design, Fact, Part
 from dialgen.circuit.diodes import DIODE, SILICON, Diode
+from dialgen.circuit.names import COIL_SHUNT, LEG, MULTIPLIER
 from dialgen.circuit.rectified import RectifierWork
-from dialgen.circuit.rectifying import COIL_SHUNT, CONNECTIONS, LEGS, MULTIPLIER, coil_with_shunt
+from dialgen.circuit.rectifying import CONNECTIONS, coil_with_shunt
 from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
 from dialgen.errors import InputError, Remark
 from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered
 from dialgen.roots import bracketed_roots
 from dialgen.stage import Array, Span, Stage
 
+_LEGS = (f"{LEG} 1", f"{LEG} 2")
 _PURPOSE = "a rectifier instrument"
 _ROUNDING = 1e-12
 _BEYOND = 10.0
@@ -102,7 +104,7 @@ class Rectifier(Circuit):
         ohms = self._ohms(terminals)
         range_v, coil_a = self._range_v(terminals), terminals.coil.current_a(_PURPOSE)
         worker = RectifierWork(CONNECTIONS[self.rectifier], self.diode.junction, coil_a)
-        given = tuple(name for name in (COIL_SHUNT, *LEGS) if name in ohms)
+        given = tuple(name for name in (COIL_SHUNT, *_LEGS) if name in ohms)
         first_v = self._stage(terminals, ohms[MULTIPLIER]).inverse(np.array([_FIRST_MOVE]))
         return Design(
             kind=self.kind,
@@ -226,7 +228,7 @@ class Rectifier(Circuit):
         if self.coil_shunt:
             ohms[COIL_SHUNT] = self.coil_shunt.value
         if self.legs:
-            ohms |= dict.fromkeys(LEGS, self.legs.value)
+            ohms |= dict.fromkeys(_LEGS, self.legs.value)
         return ohms
 
     def _diode_facts(self) -> tuple[Fact, ...]:

@@ -25,10 +25,11 @@ from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 
 from dialgen.circuit.design import Ohms
+from dialgen.circuit.names import MULTIPLIER
 from dialgen.circuit.network import Branch, Feed, Solution, solve
 from dialgen.stage import Array
 
-MULTIPLIER, COIL_SHUNT, LEGS, SOURCE = "multiplier", "coil shunt", ("leg 1", "leg 2"), "source"
+SOURCE = "source"
 
 
 @dataclass(frozen=True, slots=True)

@@ -16,10 +16,10 @@ from collections.abc import Callable, Sequence
 from dialgen.circuit.cell import Adjuster, life_facts, travel_facts
 from dialgen.circuit.chain import Chain
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
+from dialgen.circuit.names import BATTERY, SERIES, SHUNT, ZERO
 from dialgen.circuit.network import Branch, solve
 from dialgen.quantity import plain_number
 
-SERIES, SHUNT, ZERO = "series resistor", "shunt", "zero adjuster"
 _ROUND = 1e-9
 _OWN = "the cell's own resistance counts as part of it (common practice)"
 
@@ -93,7 +93,7 @@ def _current_facts(chain: Chain, halves: dict[float, float]) -> tuple[Fact, ...]
         for k, half_ohm in halves.items()
     )
     return (
-        Fact(name="battery", value=chain.cell.new_v, unit="V", note="new"),
+        Fact(name=BATTERY, value=chain.cell.new_v, unit="V", note="new"),
         *shorts,
         Fact(name="voltage at open terminals", value=chain.cell.new_v, unit="V", note="no current flows"),
     )
@@ -151,7 +151,7 @@ def _worker(chain: Chain, share: float, switched: str | None) -> Callable[[Ohms,
         zero_ohm = share * ohms[ZERO]
         solved = solve(
             (
-                Branch("battery", "minus", "plus", 0.0, emf_v=chain.cell.new_v),
+                Branch(BATTERY, "minus", "plus", 0.0, emf_v=chain.cell.new_v),
                 Branch(SERIES, "plus", "set" if chain.across else "limited", ohms[SERIES]),
                 Branch(COIL, "set", "probe", ohms[COIL]),
                 Branch(SHUNT, "set", "shunted" if chain.across else "probe", ohms[SHUNT]),

@@ -10,6 +10,7 @@ from typing import Annotated, ClassVar
 
 from dialgen.circuit.built import BUILT_ABOVE
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
+from dialgen.circuit.names import LEADS, SHUNT, SWAMP
 from dialgen.circuit.network import Branch, Feed, solve
 from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
 from dialgen.errors import InputError
@@ -17,7 +18,6 @@ from dialgen.quantity import AMPERE, OHM, VOLT_ABOVE, Amount, engineered, shown
 from dialgen.stage import Affine, Stage
 
 RATED = 'a bought shunt, "100 A/75 mV"'
-SHUNT, SWAMP, LEADS = "shunt", "swamp", "leads"
 _EQUAL = 1e-12
 _NEAR_MATCH = 0.005
 
@@ -108,8 +108,9 @@ class Shunt(Circuit):
         range_a = terminals.range(self.range.value if self.range else None)
         if range_a < coil_a * (1 - _EQUAL):
             raise InputError(
-                f"a range of {range_a:g} A is below the movement's own {coil_a:g} A; "
-                "a shunt only widens the range: take a larger range or a more sensitive movement",
+                f"a range of {engineered(range_a, 'A')} is below the movement's own "
+                f"{engineered(coil_a, 'A')}; a shunt only widens the range: take a larger range or a more "
+                "sensitive movement",
                 ("range",),
                 CURRENT_KEY,
             )
@@ -139,8 +140,10 @@ class Shunt(Circuit):
             return 0.0
         if swamp_ohm < 0:
             raise InputError(
-                f"at {range_a:g} A this shunt drops {rated.resistance_ohm * range_a:.6g} V, less than the "
-                f"{coil_a * known_ohm:.6g} V that coil and leads need; take a shunt with more drop",
+                f"at {engineered(range_a, 'A')} this shunt drops "
+                f"{engineered(rated.resistance_ohm * range_a, 'V', 6)}, less than the "
+                f"{engineered(coil_a * known_ohm, 'V', 6)} that coil and leads need; "
+                "take a shunt with more drop",
                 ("rated",),
                 ("range",),
             )

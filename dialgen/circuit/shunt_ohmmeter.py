@@ -13,12 +13,12 @@ from dataclasses import dataclass
 
 from dialgen.circuit.cell import Adjuster, Cell, adjuster, life_facts, travel_facts
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
+from dialgen.circuit.names import BATTERY, FEED, FULL, SERIES, SHUNT
 from dialgen.circuit.network import Branch, solve
 from dialgen.circuit.terminals import RESISTANCE_KEY
 from dialgen.errors import InputError
 from dialgen.quantity import engineered
 
-FEED, FULL, SERIES, SHUNT = "feed resistor", "full-scale adjuster", "series resistor", "shunt"
 OPEN = "open terminals"
 _ROUND = 1e-9
 
@@ -163,7 +163,7 @@ def shunt_design(kind: str, made: Fed) -> Design:
 def _current_facts(made: Fed) -> tuple[Fact, ...]:
     short_a = made.cell.new_v / made.feed_ohm(made.cell.new_v)
     return (
-        Fact(name="battery", value=made.cell.new_v, unit="V", note="new"),
+        Fact(name=BATTERY, value=made.cell.new_v, unit="V", note="new"),
         Fact(name="test current", value=short_a, unit="A", note="through the unknown at zero ohms"),
         Fact(name="voltage at open terminals", value=made.branch_v, unit="V"),
         Fact(
@@ -204,7 +204,7 @@ def _worker(made: Fed, share: float) -> Callable[[Ohms, float], Working]:
     def work(ohms: Ohms, signal_ohm: float) -> Working:
         solved = solve(
             (
-                Branch("battery", "minus", "plus", 0.0, emf_v=made.cell.new_v),
+                Branch(BATTERY, "minus", "plus", 0.0, emf_v=made.cell.new_v),
                 Branch(FEED, "plus", "fed", ohms[FEED]),
                 Branch(FULL, "fed", "probe", share * ohms[FULL]),
                 Branch(SERIES, "probe", "coil", ohms[SERIES]),

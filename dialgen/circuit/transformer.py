@@ -11,6 +11,7 @@ import numpy as np
 
 from dialgen.circuit.built import BUILT_ABOVE
 from dialgen.circuit.design import Case, Design, Fact, Ohms, Working
+from dialgen.circuit.names import SECONDARY
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
@@ -18,6 +19,7 @@ from dialgen.quantity import AMPERE, OHM, Amount, bare_number, engineered, shown
 from dialgen.stage import Affine, Stage
 
 RATIO = 'the ratio of a current transformer, "200/5"'
+_LEAST_A, _MOST_A = 1e-6, 1e6
 
 
 @dataclass(frozen=True, slots=True)
@@ -44,12 +46,13 @@ def read_ratio(text: object) -> Ratio:
     """
     parts = re.split(r"\s*/\s*", text) if isinstance(text, str) else []
     numbers = [bare_number(re.sub(r"\s*A$", "", part)) for part in parts]
-    if len(numbers) != 2 or any(number is None or not 1e-6 <= number <= 1e6 for number in numbers):
+    amperes = [number for number in numbers if number is not None and _LEAST_A <= number <= _MOST_A]
+    if len(parts) != 2 or len(amperes) != 2:
         raise ValueError(
             f"{shown(text)} is not a transformer's ratio; write primary over secondary amperes, "
             'for example "200/5"'
         )
-    return Ratio(numbers[0] or 0.0, numbers[1] or 0.0)
+    return Ratio(*amperes)
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -99,7 +102,7 @@ class CurrentTransformer(Circuit):
             cases=(Case(name=engineered(range_a, "A"), signal=range_a, work=self._stepped(case.work)),),
             facts=(
                 *secondary.facts,
-                Fact(name="secondary at full scale", value=case.signal, unit="A"),
+                Fact(name=SECONDARY, value=case.signal, unit="A"),
                 Fact(
                     name="burden",
                     value=burden_va,

@@ -9,6 +9,7 @@ from typing import Annotated, ClassVar
 
 from dialgen.circuit.built import BUILT_EACH
 from dialgen.circuit.design import COIL, Case, Design, Ohms, Part, Working
+from dialgen.circuit.names import SECTION, SWAMP, TOTAL
 from dialgen.circuit.network import Branch, Feed, solve
 from dialgen.circuit.ranges import AMPERE_RANGES, check_ranges, chosen
 from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
@@ -16,7 +17,6 @@ from dialgen.errors import InputError
 from dialgen.quantity import AMPERE, OHM, Amount, engineered
 from dialgen.stage import Affine, Stage
 
-SWAMP, TOTAL = "swamp", "total"
 _EQUAL = 1e-12
 
 
@@ -66,7 +66,7 @@ class UniversalShunt(Circuit):
         """Return the sections from the tap of the largest range outwards, then their total."""
         coil_a = terminals.coil.current_a("a universal shunt")
         sections_ohm = self._sections_ohm(terminals)
-        names = [f"section {i}" for i, _ in enumerate(sections_ohm, 1)]
+        names = [f"{SECTION} {i}" for i, _ in enumerate(sections_ohm, 1)]
         built: list[float | None] = [each.value for each in self.built] or [None] * len(names)
         sections = [
             Part(name=name, ohms=ohms, built=made)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dialgen.circuit.names import LEADS, SECONDARY, SECTION, SHUNT, SWAMP, TOTAL
 from dialgen.quantity import engineered
 from dialgen.schematic.blocks import Across, Block, Ends, Series, ladder
 from dialgen.schematic.fourterminal import four_terminal
@@ -21,10 +22,8 @@ def direct(plan: Plan) -> Pieces:
 
 def shunt(plan: Plan) -> Pieces:
     """Return the shunt across the movement's branch; a large one with four terminals."""
-    shunts, branch = plan.items("shunt"), _branch(plan)
-    large = abs(plan.design.range or 0.0) >= _FOUR_TERMINALS_FROM_A or any(
-        p.given for p in plan.named("shunt")
-    )
+    shunts, branch = plan.items(SHUNT), _branch(plan)
+    large = abs(plan.design.range or 0.0) >= _FOUR_TERMINALS_FROM_A or any(p.given for p in plan.named(SHUNT))
     if large and len(shunts) == 1:
         return four_terminal(plan, shunts[0], branch)
     return ladder(
@@ -34,26 +33,25 @@ def shunt(plan: Plan) -> Pieces:
 
 def universal_shunt(plan: Plan) -> Pieces:
     """Return the string of sections with a terminal for each range, the smallest range at its head."""
-    sections = plan.items("section")[::-1]
+    sections = plan.items(SECTION)[::-1]
     rising = sorted(plan.design.cases, key=lambda case: case.signal)
-    totals = plan.named("total")
+    (total,) = plan.named(TOTAL)
     string = Tapped(
         tuple(sections),
         tuple(plan.at_plus(case.name) for case in rising),
         plan.lower,
-        (plan.label(totals[0]), len(sections)) if totals else None,
+        (plan.label(total), len(sections)),
     )
     return ladder([string, *_series(_branch(plan)), Across((plan.movement(),))])
 
 
 def current_transformer(plan: Plan) -> Pieces:
     """Return the transformer with its secondary earthed, and what is across it."""
-    secondary = plan.fact("secondary at full scale")
-    text = engineered(secondary.value, secondary.unit) if secondary else ""
+    text = engineered(plan.known(SECONDARY), "A")
     return ladder(
         [
             Transformer(plan.upper, plan.lower, text),
-            *_across(plan.items("shunt")),
+            *_across(plan.items(SHUNT)),
             *_series(_branch(plan)),
             Across((plan.movement(),)),
         ]
@@ -62,7 +60,7 @@ def current_transformer(plan: Plan) -> Pieces:
 
 def _branch(plan: Plan) -> list[Item]:
     """Return what is in series with the coil."""
-    return [*plan.items("swamp"), *plan.wire_items("leads")]
+    return [*plan.items(SWAMP), *plan.wire_items(LEADS)]
 
 
 def _series(items: list[Item]) -> list[Block]:

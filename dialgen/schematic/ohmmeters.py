@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import replace
 
 from dialgen.circuit.design import Part
+from dialgen.circuit.names import ARM, BALANCE, BATTERY, FEED, FULL, SERIES, SHUNT, SUPPLY, ZERO
 from dialgen.quantity import engineered
 from dialgen.schematic.blocks import Across, Block, Ends, Series, ladder
 from dialgen.schematic.diamonds import wheatstone
@@ -24,12 +25,12 @@ def series_ohmmeter(plan: Plan) -> Pieces:
 
     The cell drives current out of the lower terminal, so that one is positive.
     """
-    across = [part for part in plan.named("shunt") if part.name == "shunt"]
-    ranged = [part for part in plan.named("shunt") if part.name != "shunt"]
-    zero = plan.items("zero adjuster", kind=Kind.ADJUSTABLE)
+    across = [part for part in plan.named(SHUNT) if part.name == SHUNT]
+    ranged = [part for part in plan.named(SHUNT) if part.name != SHUNT]
+    zero = plan.items(ZERO)
     in_shunt = zero if _zero_is_across(plan) else []
     column = (*map(plan.item, across), *in_shunt)
-    in_series = [*_at_least(plan, "series resistor"), *([] if in_shunt else zero)]
+    in_series = [*_at_least(plan, SERIES), *([] if in_shunt else zero)]
     return ladder(
         [
             Ends(MINUS, PLUS, _PLAIN_MM, _UNKNOWN),
@@ -44,8 +45,8 @@ def series_ohmmeter(plan: Plan) -> Pieces:
 
 def shunt_ohmmeter(plan: Plan) -> Pieces:
     """Return the movement's branch across the test terminals, and the cell that feeds it at the right."""
-    series, shunts = plan.items("series resistor"), plan.items("shunt")
-    feed = [*plan.items("full-scale adjuster", kind=Kind.ADJUSTABLE), *_at_least(plan, "feed resistor")]
+    series, shunts = plan.items(SERIES), plan.items(SHUNT)
+    feed = [*plan.items(FULL), *_at_least(plan, FEED)]
     return ladder(
         [
             Ends(PLUS, MINUS, _PLAIN_MM, _UNKNOWN),
@@ -59,18 +60,15 @@ def shunt_ohmmeter(plan: Plan) -> Pieces:
 
 def bridge(plan: Plan) -> Pieces:
     """Return the bridge, its sensor at the right below R1, R2 and R3 at the side of the supply."""
-    first, second, third = plan.items("arm")
-    balance = plan.fact("balance")
-    values = (f"balance {engineered(balance.value, 'Ω')}",) if balance else ()
-    sensor = Item(Kind.SENSOR, Label("sensor", values), "sensor")
-    supply = plan.fact("supply")
-    volts = supply.value if supply else 0.0
-    label = Label("supply", (engineered(abs(volts), "V"),) if supply else ())
+    first, second, third = plan.items(ARM)
+    balance_ohm, supply_v = plan.known(BALANCE), plan.known(SUPPLY)
+    sensor = Item(Kind.SENSOR, Label("sensor", (f"balance {engineered(balance_ohm, 'Ω')}",)), "sensor")
+    label = Label("supply", (engineered(abs(supply_v), "V"),))
     # Clockwise from the left corner: R2 to the top, R1 to the right, the sensor to the foot, R3 back.
     return wheatstone(
         (second, first, sensor, third),
         replace(plan.movement(), turned=True),
-        Item(Kind.CELL, label, "supply", turned=volts < 0),
+        Item(Kind.CELL, label, "supply", turned=supply_v < 0),
     )
 
 
@@ -82,14 +80,12 @@ def _at_least(plan: Plan, name: str) -> list[Item]:
 def _zero_is_across(plan: Plan) -> bool:
     """Tell where the zero adjuster is: in series it carries all that the series resistor does."""
     current_a = plan.currents_a()
-    return current_a.get("zero adjuster", 0.0) < _ALL * current_a.get("series resistor", 0.0)
+    return current_a.get(ZERO, 0.0) < _ALL * current_a.get(SERIES, 0.0)
 
 
 def _cell(plan: Plan, turned: bool = False) -> Item:
     """Return the battery with its voltage, where the design tells it."""
-    fact = plan.fact("battery")
-    if fact is None and plan.design.kind == "series ohmmeter":
-        fact = plan.fact("voltage at open terminals")
+    fact = plan.fact(BATTERY)
     values = (engineered(fact.value, fact.unit),) if fact else ()
     return Item(Kind.CELL, Label("battery", values), "battery", turned)
 
@@ -99,8 +95,6 @@ def _ranges(plan: Plan, shunts: list[Part]) -> list[Block]:
     if not shunts:
         return []
     names = [case.name for case in sorted(plan.design.cases, key=lambda case: float(case.name.lstrip("×")))]
-    by_range = {part.name.removeprefix("shunt "): plan.item(part) for part in shunts}
-    positions = [Position(name, by_range.pop(name, None)) for name in names]
-    positions += [Position(name, item) for name, item in by_range.items()]
-    shown = plan.design.cases[0].name if plan.design.cases else ""
-    return [SwitchedAcross(tuple(positions), names.index(shown) if shown in names else 0)]
+    by_range = {part.name.removeprefix(f"{SHUNT} "): plan.item(part) for part in shunts}
+    positions = tuple(Position(name, by_range.get(name)) for name in names)
+    return [SwitchedAcross(positions, names.index(plan.design.cases[0].name))]

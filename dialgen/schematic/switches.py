@@ -34,6 +34,9 @@ from dialgen.schematic.placing import (
 _ARM_MM = (9.0, 5.0)
 """How far a switch's pivot stands from the contact it is on, along the contacts' rows and across them."""
 
+_CONTACT_MM = 13.0
+"""How far below the upper rail the contacts of a switch across the rails are."""
+
 
 @dataclass(frozen=True, slots=True)
 class Switched:
@@ -54,7 +57,7 @@ class Switched:
     @property
     def depth_mm(self) -> float:
         """Room for all rows, and for the lower terminal below them."""
-        return row_pitch_mm(self.items) * (len(self.items) - 1) + row_pitch_mm(self.items)
+        return row_pitch_mm(self.items) * len(self.items)
 
     def lay(self, x: float, depth_mm: float, last: bool) -> tuple[Pieces, float]:
         """Set terminals, arm, contacts, rows and the bus behind them."""
@@ -129,10 +132,6 @@ class SwitchedAcross:
             *rails(x, right, depth_mm),
         )
         return tuple(pieces), right
-
-
-_CONTACT_MM = 13.0
-"""How far below the upper rail the contacts are."""
 
 
 def _contact_text(text: str, x: float) -> Pieces:

@@ -45,8 +45,8 @@ class Transformer:
         extent = EXTENTS[Kind.WINDING]
         winding_x, core_x = bar_x + 9.0, bar_x + 4.5
         high, low = middle + extent.length_mm / 2, middle - extent.length_mm / 2
-        text = tuple(part for part in ("secondary", self.secondary, "at full scale") if self.secondary)
-        right = winding_x + max(GAP_MM + max(map(width_mm, text), default=0.0), 6.0) + PAD_MM
+        text = ("secondary", self.secondary, "at full scale")
+        right = winding_x + GAP_MM + max(map(width_mm, text)) + PAD_MM
         earth_x = winding_x + 5.0
         ground = earth_x, -depth_mm - LEAD_MM
         pieces: list[Piece] = [

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dialgen.circuit.names import LINE, MULTIPLIER, SECTION, SUPPRESS, SWAMP
 from dialgen.quantity import engineered
 from dialgen.schematic.blocks import Across, Block, Ends, Series, ladder
 from dialgen.schematic.pieces import Item, Kind, Label, Pieces
@@ -12,14 +13,13 @@ from dialgen.schematic.wording import Plan
 
 def multiplier(plan: Plan) -> Pieces:
     """Return the multiplier between the upper terminal and the movement, which is at the earthy end."""
-    if plan.named("section"):
+    if plan.named(SECTION):
         return _chain(plan)
-    resistors = plan.items("multiplier")
+    resistors = plan.items(MULTIPLIER)
     head: list[Block]
     if len(resistors) > 1:
         names = [item.part for item in resistors]
-        shown = f"multiplier {plan.design.cases[0].name}" if plan.design.cases else names[0]
-        chosen = names.index(shown) if shown in names else 0
+        chosen = names.index(f"{MULTIPLIER} {plan.design.cases[0].name}")
         head = [Switched(tuple(resistors), chosen, plan.at_plus(""), plan.lower)]
     else:
         head = [Ends(plan.upper, plan.lower), *map(Series, resistors)]
@@ -28,7 +28,7 @@ def multiplier(plan: Plan) -> Pieces:
 
 def _chain(plan: Plan) -> Pieces:
     """Return sections, what is in series and the movement in one string, the largest range at its head."""
-    sections = plan.items("section")[::-1]
+    sections = plan.items(SECTION)[::-1]
     falling = sorted(plan.design.cases, key=lambda case: -case.signal)
     behind = _behind(plan)
     string = Tapped(
@@ -41,12 +41,12 @@ def _chain(plan: Plan) -> Pieces:
 
 def _behind(plan: Plan) -> list[Item]:
     """Return what is in series with the coil besides its multiplier."""
-    return [*plan.wire_items("line"), *plan.items("swamp"), *suppressor(plan)]
+    return [*plan.wire_items(LINE), *plan.items(SWAMP), *_suppressor(plan)]
 
 
-def suppressor(plan: Plan) -> list[Item]:
+def _suppressor(plan: Plan) -> list[Item]:
     """Return the zener diode of a suppressed zero, which conducts against its arrow."""
-    fact = plan.fact("suppressed zero")
+    fact = plan.fact(SUPPRESS)
     if not fact:
         return []
     label = Label("zener", (engineered(fact.value, fact.unit),))

@@ -34,8 +34,12 @@ class Plan:
         ]
 
     def fact(self, name: str) -> Fact | None:
-        """Return the fact of that name."""
+        """Return the fact of that name, if there is one."""
         return next((fact for fact in self.design.facts if fact.name == name), None)
+
+    def known(self, name: str) -> float:
+        """Return the value of a fact that every design of its kind has."""
+        return next(fact.value for fact in self.design.facts if fact.name == name)
 
     def currents_a(self) -> Mapping[str, float]:
         """Return what every part carries at full deflection of the first range, in amperes."""
@@ -49,13 +53,14 @@ class Plan:
         """Return a part's name, its value and, where it was measured otherwise, its value as built."""
         return Label(part.name, tuple(self._values(part)))
 
-    def item(self, part: Part, kind: Kind = Kind.RESISTOR) -> Item:
+    def item(self, part: Part) -> Item:
         """Return a part as it stands in the picture."""
+        kind = Kind.ADJUSTABLE if part.adjustable else Kind.RESISTOR
         return Item(kind, self.label(part), part.name)
 
-    def items(self, *starts: str, kind: Kind = Kind.RESISTOR) -> list[Item]:
+    def items(self, *starts: str) -> list[Item]:
         """Return the parts of those names as they stand in the picture."""
-        return [self.item(part, kind) for part in self.named(*starts)]
+        return [self.item(part) for part in self.named(*starts)]
 
     def wire_items(self, name: str) -> list[Item]:
         """Return what a wire's own resistance is drawn as: nothing where it has none."""

@@ -13,10 +13,8 @@ import numpy as np
 import pytest
 from hypothesis import assume, given, settings
 from hypothesis import strategies as st
-from scipy import constants
-from scipy.integrate import quad
 from scipy.optimize import brentq, fsolve
-from scipy.special import wrightomega
+from sine_loops import VT, knee, log_floats, loop_current, quarter_mean
 
 from dialgen.circuit.design import COIL
 from dialgen.circuit.diodes import TYPICAL, read_diode
@@ -29,10 +27,6 @@ from dialgen.dialfile import Source, parse
 from dialgen.dialfile.kinds import read_kind
 from dialgen.errors import InputError, Refused
 from dialgen.quantity import Amount
-
-VT = constants.k * 298.15 / constants.e
-IDEAL = read_diode("ideal")
-FULL_WAVE, HALF_WAVE = 2 / math.pi * math.sqrt(2), math.sqrt(2) / math.pi
 
 
 def terminals(coil_a=1e-3, coil_ohm=100.0, full=3.0):
@@ -200,11 +194,6 @@ class Drawn:
         return self.inner_ohm + self.leg_ohm / 2 + multiplier_ohm / (4 * k), 1 / (2 * k), 1
 
 
-def log_floats(low, high):
-    """Numbers spread evenly over the decades."""
-    return st.floats(math.log10(low), math.log10(high)).map(lambda x: 10.0**x)
-
-
 @st.composite
 def drawn(draw):
     """A circuit of the trade's sizes that can be built."""
@@ -225,26 +214,6 @@ def drawn(draw):
     return made
 
 
-def current(volts, ohms, name, count):
-    """The current of ohms and count typical diodes in series, by Wright's omega function."""
-    diode = TYPICAL[name]
-    whole_ohm, width_v = ohms + count * diode.resistance_ohm, count * diode.ideality * VT
-    a = whole_ohm * diode.saturation_a / width_v
-    return diode.saturation_a * (wrightomega(volts / width_v + a + math.log(a)) / a - 1.0)
-
-
-def quarter_mean(function, peak_v, knee_v):
-    """The mean over a quarter of the cycle of a function of the sine's value, with breaks at the knee."""
-    breaks = [math.asin(r) for s in (0.25, 0.5, 0.75, 1.0, 1.25, 2.0) if (r := s * knee_v / peak_v) < 0.999]
-    return (
-        sum(
-            quad(lambda t: function(peak_v * math.sin(t)), low, high, epsabs=0, epsrel=1e-12, limit=200)[0]
-            for low, high in pairwise([0.0, *breaks, math.pi / 2])
-        )
-        * 2 / math.pi
-    )  # fmt: skip
-
-
 @pytest.mark.filterwarnings("ignore::scipy.integrate.IntegrationWarning")
 @settings(max_examples=80, deadline=None)
 @given(drawn(), log_floats(1e-3, 1e3))
@@ -259,8 +228,8 @@ def test_the_mean_coil_current_is_scipys_quadrature(made, signal_v):
     found = drive(circuit, [signal_v, made.range_v], coil)
     for each_v, got in zip((signal_v, made.range_v), found, strict=True):
         peak_v = math.sqrt(2) * factor * each_v
-        knee_v = count * diode.ideality * VT * math.log1p(peak_v / (ohms * diode.saturation_a))
-        mean_a = quarter_mean(lambda v: current(v, ohms, made.diode, count), peak_v, knee_v)
+        knee_v = knee(diode, ohms, peak_v, count)
+        mean_a = quarter_mean(lambda v: loop_current(v, ohms, diode, count), peak_v, knee_v)
         assert got == pytest.approx(mean_a * pulses * share / made.coil_a, abs=1e-9)
     assert found[1] == pytest.approx(1.0, abs=1e-12)
 
@@ -405,10 +374,10 @@ def test_heat_in_series_is_scipys_quadrature_of_the_square(made, share):
     assume(by_pass_ohm > 1.0)
     peak_v = math.sqrt(2) * signal_v
     diode = TYPICAL[made.diode]
-    knee_v = count * diode.ideality * VT * math.log1p(peak_v / (ohms * diode.saturation_a))
+    knee_v = knee(diode, ohms, peak_v, count)
 
     def through(v):
-        return current(abs(v), ohms if v > 0 else by_pass_ohm, made.diode, count)
+        return loop_current(abs(v), ohms if v > 0 else by_pass_ohm, diode, count)
 
     def coil_through(v):
         return through(v) * made.inner_ohm / made.coil_ohm if v > 0 or made.connection == "bridge" else 0.0

@@ -71,6 +71,10 @@ TABLE = {
         ),
         ("secondary open", "primary dead"),
     ),
+    "a moving coil on a transformer": (
+        Situation(kind="current transformer", takes="A", range=200.0, alternating=True),
+        ("secondary open", "primary dead", "moving coil on AC"),
+    ),
     "a moving iron with a shunt on a transformer": (
         Situation(
             kind="current transformer",

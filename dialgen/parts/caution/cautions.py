@@ -10,6 +10,10 @@ import math
 from collections.abc import Callable
 from dataclasses import dataclass
 
+from dialgen.circuit.multiplier import Multiplier
+from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.shunt import Shunt
+from dialgen.circuit.transformer import CurrentTransformer
 from dialgen.errors import InputError
 from dialgen.parts.caution.situation import TOUCH_DC_V, Situation
 
@@ -18,7 +22,7 @@ USUAL_RATINGS_V = {0.25: 250.0, 0.5: 350.0}
 
 _MAINS_V = 100.0
 _HEAVY_A, _WIRED_A = 10.0, 0.1
-_BEHIND_RESISTORS = ("multiplier", "rectifier")
+_BEHIND_RESISTORS = (Multiplier.kind, Rectifier.kind)
 _PRACTICE = "common practice"
 _LIMITS = "common practice; limits of IEC 60364-4-41, from memory"
 _EQUAL = 1e-9
@@ -82,7 +86,7 @@ CAUTIONS: tuple[Caution, ...] = (
         text="Never open the secondary of a current transformer while current flows in the primary: its "
         "voltage can kill. Short the secondary and earth one side of it before you work on the meter.",
         source="UFC 3-560-01 (2006) §9-5.2",
-        applies=lambda s: s.kind == "current transformer",
+        applies=lambda s: s.kind == CurrentTransformer.kind,
     ),
     Caution(
         id="touch",
@@ -96,7 +100,7 @@ CAUTIONS: tuple[Caution, ...] = (
         text="Fit or change a current transformer only with its primary conductor dead. Take one whose "
         "insulation is made for the voltage of that conductor.",
         source=_PRACTICE,
-        applies=lambda s: s.kind == "current transformer",
+        applies=lambda s: s.kind == CurrentTransformer.kind,
     ),
     Caution(
         id="ohmmeter on live circuit",
@@ -150,14 +154,14 @@ CAUTIONS: tuple[Caution, ...] = (
         text="An ammeter has the full voltage of its line on its terminals, zero screw and plate. Above 50 V "
         "AC or 120 V DC treat them all as live.",
         source=_LIMITS,
-        applies=lambda s: s.takes == "A" and s.kind != "current transformer" and s.range >= _WIRED_A,
+        applies=lambda s: s.takes == "A" and s.kind != CurrentTransformer.kind and s.range >= _WIRED_A,
     ),
     Caution(
         id="shunt before leads",
         text="Bolt the shunt in before you connect the movement to it, and take the movement off first. "
         "A movement without its shunt takes the whole current and burns.",
         source=_PRACTICE,
-        applies=lambda s: s.kind == "shunt" and s.shunt_a > 0,
+        applies=lambda s: s.kind == Shunt.kind and s.shunt_a > 0,
     ),
     Caution(
         id="sense fuse",
@@ -172,6 +176,13 @@ CAUTIONS: tuple[Caution, ...] = (
         "burns. Give the shunt free air, and keep what can melt or catch fire away from it.",
         source=_PRACTICE,
         applies=lambda s: s.shunt_a > _HEAVY_A,
+    ),
+    Caution(
+        id="moving coil on AC",
+        text="A moving coil shows nothing on AC, and its coil can burn while the pointer stays at rest. Behind "
+        "a current transformer take a moving iron, or a rectifier made for it.",
+        source=_PRACTICE,
+        applies=lambda s: s.kind == "current transformer" and s.movement == "moving coil",
     ),
     Caution(
         id="moving iron with shunt",

@@ -6,15 +6,16 @@ import math
 from dataclasses import dataclass
 
 from dialgen.circuit.design import COIL, Case, Design, Ohms
-from dialgen.circuit.multiplier import SUPPRESS
-from dialgen.circuit.shunt import SHUNT
+from dialgen.circuit.direct import Direct
+from dialgen.circuit.names import SHUNT, SUPPRESS
+from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
 
 MOST_HELPED_V = 1000.0
 """Above this the program prints no design help."""
 TOUCH_AC_V, TOUCH_DC_V = 50.0, 120.0
 """The limits of extra-low voltage: IEC 60364-4-41, from memory."""
 
-_OHMMETERS = ("series ohmmeter", "shunt ohmmeter")
+_OHMMETERS = (SeriesOhmmeter.kind, ShuntOhmmeter.kind)
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -98,7 +99,7 @@ def _alternating(design: Design, movement: str) -> bool | None:
     """Return what the circuit can take; behind a bare coil a moving coil shows direct current alone."""
     if design.alternating:
         return True
-    built_for_dc = design.kind != "direct" and movement == "moving coil"
+    built_for_dc = design.kind != Direct.kind and movement == "moving coil"
     suppressed = any(fact.name == SUPPRESS for fact in design.facts)
     return False if built_for_dc or suppressed else None
 

@@ -17,7 +17,6 @@ from numpy.typing import ArrayLike
 
 from dialgen import dialfile
 from dialgen.dial import Chain, Dial, attempt
-from dialgen.dial.designs import Designed, designs
 from dialgen.dialfile import Source
 from dialgen.drawing import Drawing, Purpose
 from dialgen.errors import DialFileError, Fault, Finding, InputError, OutputError, Refused, Remark
@@ -35,7 +34,9 @@ from dialgen.renderers import Options, render
 from dialgen.stage import Array
 
 if TYPE_CHECKING:
-    from dialgen.parts.bill import Bill, Drawer
+    from dialgen.dial.designs import Designed
+    from dialgen.parts.bench import Bench
+    from dialgen.parts.bill import Bill
 
 DEFAULT_MARGIN_MM = 3.0
 
@@ -122,32 +123,34 @@ class Face:
         Raises:
             DialFileError: circuits that cannot be designed, with their places.
         """
+        from dialgen.dial.designs import designs
+
         try:
             return designs(self.dial)
         except Refused as refused:
             raise self.source.refusal(self.source.fault_of(e) for e in refused.errors) from None
 
-    def drawer(self, instead: Mapping[str, object] | None = None) -> Drawer:
-        """Return the maker's drawer as the file has it, with some of its keys said instead.
+    def bench(self, instead: Mapping[str, object] | None = None) -> Bench:
+        """Return the maker's bench as the file's [parts] have it, with some of its keys said instead.
 
         Raises:
             InputError: one of ``instead`` is wrong.
         """
-        from dialgen.dialfile.parts import drawer
+        from dialgen.dialfile.parts import bench_of
 
-        return drawer(self.dial.file.parts, instead or {})
+        return bench_of(self.dial.file.parts, instead or {})
 
     def bill(
         self,
         circuit: Designed,
-        drawer: Drawer | None = None,
+        bench: Bench | None = None,
         progress: Callable[[str], Callable[[int, int], None]] | None = None,
     ) -> Bill:
         """Return what the bench is told of one of `circuits`: parts, heat, drift, cautions.
 
         Args:
             circuit: which one.
-            drawer: what the maker has; the file's own where it is left out.
+            bench: what the maker has; the file's own where it is left out.
             progress: given a part's name, what is told how far the search for it in the drawer is.
 
         Raises:
@@ -157,7 +160,7 @@ class Face:
 
         movement = self.dial.file.movement.kind
         return bill(
-            circuit.design, drawer or self.drawer(), movement, reswamped=circuit.reswamped, progress=progress
+            circuit.design, bench or self.bench(), movement, reswamped=circuit.reswamped, progress=progress
         )
 
     def old_face(self, circuit: Designed) -> tuple[tuple[float, float], ...]:

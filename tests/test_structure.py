@@ -12,7 +12,7 @@ import pytest
 PACKAGE = Path(__file__).parents[1] / "dialgen"
 
 FLOORS = (
-    ("errors", "quantity", "drawing", "stage", "roots"),
+    ("errors", "quantity", "drawing", "stage", "roots", "lazy"),
     ("lettering", "geometry", "circuit", "renderers", "templates"),
     ("ink", "looks", "symbols", "parts"),
     ("dialfile", "schematic"),

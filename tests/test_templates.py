@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import json
 import re
 import subprocess
 import sys
@@ -17,7 +18,27 @@ ROOT = Path(__file__).parents[1]
 FOLDER = ROOT / "templates"
 NAMES = sorted(path.stem for path in FOLDER.glob("*.toml"))
 WANTED = {"square-panel", "wide-angle", "centre-zero", "edgewise", "ohms", "decibel"}
-HAZARDS = {"ohms": "dead", "square-panel": "shunt", "centre-zero": "battery", "wide-angle": "multiplier"}
+CIRCUITS = {
+    "universal-shunt": "universal shunt",
+    "ac-volts": "rectifier",
+    "pyrometer": "multiplier",
+    "resistance-thermometer": "bridge",
+    "current-transformer": "current transformer",
+    "ohms": "series ohmmeter",
+}
+HAZARDS = {
+    "ohms": "dead",
+    "square-panel": "shunt",
+    "centre-zero": "battery",
+    "wide-angle": "multiplier",
+    "several-scales": "multiplier",
+    "moving-iron": "mains",
+    "power": "mains",
+    "universal-shunt": "switch off",
+    "ac-volts": "isolating transformer",
+    "pyrometer": "elements",
+    "current-transformer": "never open the secondary",
+}
 
 
 def _run(*words: str, folder: Path = ROOT) -> subprocess.CompletedProcess[str]:
@@ -34,6 +55,14 @@ def _run(*words: str, folder: Path = ROOT) -> subprocess.CompletedProcess[str]:
 def test_the_six_kinds_asked_for_are_there() -> None:
     """Square panel, wide angle, centre zero, edgewise, ohms and decibel each have a template."""
     assert set(NAMES) >= WANTED
+
+
+@pytest.mark.parametrize("name", CIRCUITS)
+def test_the_circuit_of_a_template_is_designed_without_a_remark(name: str) -> None:
+    """``dialgen circuit`` works out the kind of circuit that the template is for, and prints no warning."""
+    done = _run("circuit", f"templates/{name}.toml", "--json")
+    assert (done.returncode, done.stderr) == (0, "")
+    assert json.loads(done.stdout)["circuits"][0]["kind"] == CIRCUITS[name]
 
 
 def test_templates_are_found_in_a_checkout() -> None:

@@ -14,30 +14,11 @@ from dialgen.circuit.names import ARM, BALANCE, SUPPLY
 from dialgen.circuit.network import Branch, Solution, solve
 from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import OHM_ABOVE, VOLT, Amount, engineered, shown
+from dialgen.quantity import OHM_ABOVE, VOLT, Amount, Listed, engineered
 from dialgen.stage import POSITIVE, Array, Span, Stage
 
-ARMS = "the three arms of a bridge"
 ARM_NAMES = (f"{ARM} R1", f"{ARM} R2", f"{ARM} R3")
-_EXAMPLE = '["100 ohm", "1 kohm", "1 kohm"], R1 above the sensor, R2 above R3'
-
-
-def read_arms(given: object) -> tuple[Amount, Amount, Amount]:
-    """Return R1, R2 and R3.
-
-    Raises:
-        ValueError: not a list of three resistances above zero; says which one is wrong.
-    """
-    if not isinstance(given, list) or len(given) != len(ARM_NAMES):
-        raise ValueError(f"the arms are a list of three, not {shown(given)}; write for example {_EXAMPLE}")
-    found = []
-    for name, each in zip(ARM_NAMES, given, strict=True):
-        try:
-            found.append(OHM_ABOVE.read(each))
-        except ValueError as error:
-            raise ValueError(f"{name}: {error}") from None
-    first, second, third = found
-    return first, second, third
+ARMS = Listed(OHM_ABOVE.read, 3, 3, '["100 ohm", "1 kohm", "1 kohm"], R1 above the sensor, R2 above R3')
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -2,12 +2,15 @@
 
 from __future__ import annotations
 
-from dialgen.quantity import AMPERE, OHM, OHM_ABOVE, VOLT_ABOVE, Amount, shown
+from dialgen.errors import InputError
+from dialgen.quantity import OHM, OHM_ABOVE, Amount, Listed, Measure, Written
 
-BUILT = "a resistance as built"
-BUILT_ABOVE = "a resistance above nothing as built"
-BUILT_EACH = "resistances as built, one or a list"
-_EXAMPLE = 'built = "1.885 mohm", or { volts = "73.1 mV", amps = "38.42 A" }'
+_EXAMPLE = '"1.885 mohm", or { volts = "73.1 mV", amps = "38.42 A" }'
+_MOST = 40
+_READING = {
+    "volts": Measure("voltage", ("V",), "73.1 mV", above=0.0),
+    "amps": Measure("current", ("A",), "38.42 A", above=0.0),
+}
 
 
 def read_built(given: object) -> Amount:
@@ -17,16 +20,24 @@ def read_built(given: object) -> Amount:
     that neither leads nor contacts count (common practice below an ohm).
 
     Raises:
-        ValueError: it is neither, or its keys are not volts and amps.
+        ValueError: it is neither; an InputError with the key, where one of the reading is wrong.
 
     >>> read_built({"volts": "73.1 mV", "amps": "38.42 A"}).value
     0.0019026548672566372
     """
     if not isinstance(given, dict):
         return OHM.read(given)
-    if set(given) != {"volts", "amps"}:
-        raise ValueError(f"a four-wire reading is volts and amps, nothing else; write {_EXAMPLE}")
-    return Amount(VOLT_ABOVE.read(given["volts"]).value / AMPERE.read(given["amps"]).value, "Ω")
+    if strange := [key for key in given if key not in _READING]:
+        raise InputError(f"not a key of a four-wire reading; write built = {_EXAMPLE}", (strange[0],))
+    if missing := [key for key in _READING if key not in given]:
+        raise InputError(f"a four-wire reading has volts and amps, {missing[0]} is missing; write {_EXAMPLE}")
+    found = {}
+    for key, measure in _READING.items():
+        try:
+            found[key] = measure.read(given[key]).value
+        except ValueError as error:
+            raise InputError(str(error), (key,)) from None
+    return Amount(found["volts"] / found["amps"], "Ω")
 
 
 def read_built_above(given: object) -> Amount:
@@ -34,20 +45,6 @@ def read_built_above(given: object) -> Amount:
     return OHM_ABOVE.read(given) if isinstance(given, str) else read_built(given)
 
 
-def read_built_each(given: object) -> tuple[Amount, ...]:
-    """Return one or several measured resistances.
-
-    Raises:
-        ValueError: as `read_built` does, with the place in the list.
-    """
-    if not isinstance(given, list):
-        return (read_built(given),)
-    found = []
-    for number, each in enumerate(given, 1):
-        try:
-            found.append(read_built(each))
-        except ValueError as error:
-            raise ValueError(f"number {number}: {error}") from None
-    if not found:
-        raise ValueError(f"{shown(given)} has no resistance in it; write for example {_EXAMPLE}")
-    return tuple(found)
+BUILT = Written(read_built, '"9.5 kohm"')
+BUILT_ABOVE = Written(read_built_above, '"1.885 mohm"')
+BUILT_EACH = Listed(read_built, 1, _MOST, '["1.9 mohm", "7.5 mohm"]', alone=True)

@@ -7,9 +7,7 @@ from dataclasses import dataclass
 
 from dialgen.circuit.conduction import Ideal, Junction, Threshold
 from dialgen.circuit.junction import Exponential
-from dialgen.quantity import AMPERE, OHM, Measure, engineered, read_number, shown
-
-DIODE = "a diode: typical, ideal, or by its figures"
+from dialgen.quantity import AMPERE, OHM, Measure, Written, engineered, read_number, shown
 
 TYPICAL: Mapping[str, Exponential] = {
     "silicon": Exponential(2.5e-9, 1.75, 0.6),
@@ -71,6 +69,9 @@ def read_diode(given: object) -> Diode:
     if given not in _NAMED:
         raise ValueError(f"{shown(given)} is not a diode known here; write for example {_EXAMPLE}")
     return _NAMED[given]
+
+
+DIODE = Written(read_diode, '"silicon"')
 
 
 def _by_drop(given: Mapping[str, object]) -> Junction:

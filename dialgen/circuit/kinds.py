@@ -2,28 +2,19 @@
 
 from __future__ import annotations
 
-from typing import Any
+from dialgen.lazy import LoadedOnUse
 
-from dialgen.circuit.bridge import Bridge
-from dialgen.circuit.direct import Direct
-from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
-from dialgen.circuit.rectifier import Rectifier
-from dialgen.circuit.shunt import Shunt
-from dialgen.circuit.transformer import CurrentTransformer
-from dialgen.circuit.universal import UniversalShunt
-
-CIRCUITS: dict[str, type[Any]] = {
-    circuit.kind: circuit
-    for circuit in (
-        Direct,
-        Shunt,
-        UniversalShunt,
-        CurrentTransformer,
-        Multiplier,
-        Rectifier,
-        SeriesOhmmeter,
-        ShuntOhmmeter,
-        Bridge,
-    )
-}
+CIRCUITS = LoadedOnUse(
+    "dialgen.circuit",
+    {
+        "direct": "direct:Direct",
+        "shunt": "shunt:Shunt",
+        "universal shunt": "universal:UniversalShunt",
+        "current transformer": "transformer:CurrentTransformer",
+        "multiplier": "multiplier:Multiplier",
+        "rectifier": "rectifier:Rectifier",
+        "series ohmmeter": "ohmmeter:SeriesOhmmeter",
+        "shunt ohmmeter": "ohmmeter:ShuntOhmmeter",
+        "bridge": "bridge:Bridge",
+    },
+)

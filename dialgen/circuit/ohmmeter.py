@@ -16,36 +16,21 @@ from dialgen.circuit.series_ohmmeter import range_name, series_design
 from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered, read_number, shown
+from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, Listed, Number, engineered
 from dialgen.stage import Array, Span, Stage
 
-TIMES = "the ranges of one ohms scale, one or a list"
-_LEAST_TIMES, _MOST_TIMES = 1e-3, 1e6
 _ROUND = 1e-9
 
 
-def read_times(given: object) -> tuple[float, ...]:
-    """Return what the scale's readings are multiplied by on each range: ×1 first, then ascending.
+def _in_order(times: tuple[float, ...]) -> tuple[float, ...]:
+    """Return the ranges with ×1 first, then ascending."""
+    if len(set(times)) < len(times):
+        raise ValueError("a range is there twice; list each once, such as [1, 10, 100]")
+    return tuple(sorted(times, key=lambda each: (each != 1.0, each)))
 
-    Raises:
-        ValueError: not a number or a list of different numbers above zero.
 
-    >>> read_times([100, 10, 1]), read_times(10)
-    ((1.0, 10.0, 100.0), (10.0,))
-    """
-    listed = given if isinstance(given, list) else [given]
-    if not 1 <= len(listed) <= MOST_RANGES:
-        raise ValueError(f"{len(listed)} ranges on one scale; write 1 to {MOST_RANGES}, such as [1, 10, 100]")
-    found = [read_number(each, "times") for each in listed]
-    for times in found:
-        if not _LEAST_TIMES <= times <= _MOST_TIMES:
-            raise ValueError(
-                f"a range of {times:g} times the scale is out of bounds; "
-                f"write {_LEAST_TIMES:g} to {_MOST_TIMES:g}, such as [1, 10, 100]"
-            )
-    if len(set(found)) < len(found):
-        raise ValueError(f"{shown(given)} has a range twice; list each once")
-    return tuple(sorted(found, key=lambda times: (times != 1.0, times)))
+TIMES = Listed(Number("times", 1e-3, 1e6).read, 1, MOST_RANGES, "[1, 10, 100]", alone=True, then=_in_order)
+"""What the scale's readings are multiplied by on each range."""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

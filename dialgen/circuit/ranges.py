@@ -6,36 +6,15 @@ from collections.abc import Sequence
 from itertools import pairwise
 
 from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, VOLT_ABOVE, Amount, Measure, engineered, shown
+from dialgen.quantity import Amount, Listed, Measure, engineered
 
-AMPERE_RANGES = "several ranges in amperes"
-VOLT_RANGES = "several ranges in volts"
-MOST_RANGES = 12
+MOST_RANGES = 40
 _EQUAL = 1e-9
 
-
-def read_current_ranges(given: object) -> tuple[Amount, ...]:
-    """Return a list of currents; raises ValueError with the place of the one that is wrong."""
-    return _read(given, AMPERE, '["1 A", "5 A", "10 A"]')
-
-
-def read_voltage_ranges(given: object) -> tuple[Amount, ...]:
-    """Return a list of voltages; raises ValueError with the place of the one that is wrong."""
-    return _read(given, VOLT_ABOVE, '["10 V", "50 V", "250 V"]')
-
-
-def _read(given: object, measure: Measure, example: str) -> tuple[Amount, ...]:
-    if not isinstance(given, list) or not 1 < len(given) <= MOST_RANGES:
-        raise ValueError(
-            f"this is a list of 2 to {MOST_RANGES} ranges, not {shown(given)}; write for example {example}"
-        )
-    found = []
-    for number, each in enumerate(given, 1):
-        try:
-            found.append(measure.read(each))
-        except ValueError as error:
-            raise ValueError(f"range {number}: {error}") from None
-    return tuple(found)
+_CURRENT = Measure("range", ("A",), "5 A", above=0.0)
+_VOLTAGE = Measure("range", ("V",), "50 V", above=0.0)
+AMPERE_RANGES = Listed(_CURRENT.read, 1, MOST_RANGES, '["1 A", "5 A", "10 A"]')
+VOLT_RANGES = Listed(_VOLTAGE.read, 1, MOST_RANGES, '["10 V", "50 V", "250 V"]')
 
 
 def check_ranges(ranges: Sequence[Amount]) -> None:

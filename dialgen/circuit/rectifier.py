@@ -129,7 +129,7 @@ class Rectifier(Circuit):
             alternating=True,
         )
 
-    def remarks(self) -> tuple[Remark, ...]:
+    def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
         """Return that a typical diode was assumed, and below what voltage a threshold diode is dead."""
         texts = []
         if self.diode.typical:

@@ -14,10 +14,9 @@ from dialgen.circuit.names import LEADS, SHUNT, SWAMP
 from dialgen.circuit.network import Branch, Feed, solve
 from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, VOLT_ABOVE, Amount, engineered, shown
+from dialgen.quantity import AMPERE, OHM, VOLT_ABOVE, Amount, Written, engineered, shown
 from dialgen.stage import Affine, Stage
 
-RATED = 'a bought shunt, "100 A/75 mV"'
 _EQUAL = 1e-12
 _NEAR_MATCH = 0.005
 
@@ -48,6 +47,9 @@ def read_rating(text: object) -> Rating:
         raise ValueError(f'{shown(text)} is not a shunt\'s rating; write for example "100 A/75 mV"')
     current, drop = AMPERE.read(parts[0]), VOLT_ABOVE.read(parts[1])
     return Rating(current_a=current.value, drop_v=drop.value)
+
+
+RATED = Written(read_rating, '"100 A/75 mV"')
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -99,6 +99,9 @@ class Circuit(Protocol):
         """Return its parts and how it works with any values of them; raises as `stage` does."""
         ...
 
-    def remarks(self) -> tuple[Remark, ...]:
-        """Return what was assumed; keys are relative to the circuit's table."""
+    def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
+        """Return what was assumed or is out of the way, of a circuit that can be built.
+
+        Keys are relative to the circuit's table.
+        """
         return ()

@@ -15,10 +15,9 @@ from dialgen.circuit.names import SECONDARY
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.terminals import Circuit, Terminals
 from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, Amount, bare_number, engineered, shown
+from dialgen.quantity import AMPERE, OHM, Amount, Written, bare_number, engineered, shown
 from dialgen.stage import Affine, Stage
 
-RATIO = 'the ratio of a current transformer, "200/5"'
 _LEAST_A, _MOST_A = 1e-6, 1e6
 
 
@@ -53,6 +52,9 @@ def read_ratio(text: object) -> Ratio:
             'for example "200/5"'
         )
     return Ratio(*amperes)
+
+
+RATIO = Written(read_ratio, '"200/5"')
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -6,20 +6,14 @@ import math
 from collections.abc import Iterator, Sequence
 
 from dialgen.circuit.design import Fact
-from dialgen.cli.columns import columns, table, wrapped
+from dialgen.cli.bill_making import MAKING
+from dialgen.cli.columns import columns, figure, percent, table, wrapped
 from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed, Together
 from dialgen.parts.bill import Bill
 from dialgen.parts.caution.cautions import CAUTIONS
-from dialgen.parts.drift import NoSwamping, Swamping
-from dialgen.parts.stock.search import Candidate, Search
-from dialgen.parts.wire.workshop import advice, objections, summary
 from dialgen.quantity import engineered, plain_number
 
 _EXACT_DIGITS = 7
-_SHOWN_CANDIDATES = 5
-_FAR = 0.2
-"""A network farther off than this share is of no use, nor are the next ones."""
-_ROUNDING = 1e-6
 _PREFIXED = ("A", "V", "Ω", "W", "VA", "Ω/V")
 
 
@@ -70,16 +64,6 @@ def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str
         )
 
 
-def percent(value: float) -> str:
-    """Return a signed percentage of three figures.
-
-    >>> percent(0.0), percent(-1.2345), percent(12.345)
-    ('0 %', '−1.23 %', '+12.3 %')
-    """
-    rounded = float(f"{value:.3g}") if abs(value) >= 5e-7 else 0.0
-    return ("+" if rounded > 0 else "") + f"{plain_number(rounded)} %"
-
-
 def _parts(bill: Bill) -> Iterator[str]:
     assessment = bill.assessment
     if assessment is None:
@@ -101,7 +85,7 @@ def _part_rows(assessed: PartAssessed) -> Iterator[tuple[str, ...]]:
         _amount(full.voltage_v, "V"),
         engineered(full.watts, "W", 3),
         _watts(assessed.overload),
-        engineered(assessed.rating_w, "W", 3) if assessed.rating_w else "",
+        "" if part.sums else engineered(assessed.rating_w, "W", 3),
     )
     if part.built is not None:
         yield ("  as built", engineered(part.built, "Ω", _EXACT_DIGITS), *[""] * 5)
@@ -169,104 +153,9 @@ def _all_together(together: Sequence[Together], *, alone: bool) -> Iterator[tupl
     if not alone:
         yield ("all fitted", *(percent(each.error_percent) for each in together))
     yield ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in together))
-    yield ("" if alone else "  at worst", *(f"±{_figure(each.worst_percent)} %" for each in together))
+    yield ("" if alone else "  at worst", *(f"±{figure(each.worst_percent)} %" for each in together))
     if not alone:
-        yield ("  likely", *(f"±{_figure(each.likely_percent)} %" for each in together))
-
-
-def _figure(value: float) -> str:
-    return plain_number(float(f"{value:.2g}"))
-
-
-def _trims(bill: Bill) -> Iterator[str]:
-    for trim in bill.trims:
-        off, reads = percent(trim.off_percent), percent(trim.reading_percent)
-        yield from wrapped(
-            f"{trim.part} as built: {off} off, which alone reads {reads} at full scale. The marks follow it. "
-            f"To keep a face drawn for the exact value: {trim.advice}."
-        )
-
-
-def _splits(bill: Bill) -> Iterator[str]:
-    for split in bill.splits:
-        yield from wrapped(
-            f"{split.part}: make it of {split.count} times {engineered(split.ohms, 'Ω')} in series, so that "
-            f"each has at most {engineered(split.voltage_v, 'V', 3)} at the peak."
-        )
-
-
-def _swamping(bill: Bill) -> Iterator[str]:
-    match bill.swamping:
-        case Swamping() as found:
-            yield from wrapped(f"Swamping: {_swamped(found)}.")
-        case NoSwamping() as found:
-            mend = (
-                f"; a range {_figure(found.range_factor)} times as large would have the wanted drift"
-                if found.range_factor
-                else ""
-            )
-            yield from wrapped(
-                "Swamping does not help: range and movement fix the whole resistance, of which "
-                f"{_figure(100 * found.copper_share)} % is copper{mend}."
-            )
-
-
-def _swamped(found: Swamping) -> str:
-    before, after = percent(found.before_percent_per_k), percent(found.percent_per_k)
-    if found.swamp_ohm == 0:
-        return f"not needed, the drift is {before} per kelvin without"
-    share = percent(100 * found.drive).lstrip("+")
-    short = (
-        f"; full scale then drives only {share} of the movement: take a shunt of more drop"
-        if found.drive < 1 - _ROUNDING
-        else ""
-    )
-    return (
-        f'swamp = "{engineered(found.swamp_ohm, "ohm", 4)}" brings the drift from {before} to {after} per '
-        f"kelvin, and the drop from {engineered(found.before_drop_v, 'V', 4)} to "
-        f"{engineered(found.drop_v, 'V', 4)}{short}"
-    )
-
-
-def _searches(bill: Bill) -> Iterator[str]:
-    for name, found in bill.searches:
-        yield from _search(name, found)
-
-
-def _search(name: str, found: Search) -> Iterator[str]:
-    count = f"{found.searched:,}".replace(",", " ")
-    yield f"{name} from the drawer: {count} networks of up to {found.most_parts} parts searched"
-    best = found.candidates[: 1 if abs(found.candidates[0].error) > _FAR else _SHOWN_CANDIDATES]
-    near = len(best) > 1
-    rows: list[tuple[str, ...]] = [("  network", "value", "error", "parts", "worst part")]
-    for head, listed in (
-        ("", best),
-        ("  with fewer parts", [each for each in found.simpler if each not in best and near]),
-        ("  the best value, with less heat in one part", found.cooler if near else ()),
-    ):
-        if head and listed:
-            rows.append((head, "", "", "", ""))
-        rows += [_candidate(each) for each in listed]
-    yield from columns(rows)
-    if not near:
-        yield "  Nothing in the drawer comes near."
-
-
-def _candidate(found: Candidate) -> tuple[str, ...]:
-    return (
-        f"  {found.drawing}",
-        engineered(found.ohms, "Ω", 6),
-        percent(100 * found.error),
-        str(found.parts),
-        f"{_figure(100 * found.share)} % of the power",
-    )
-
-
-def _windings(bill: Bill) -> Iterator[str]:
-    for name, winding in bill.windings:
-        yield from wrapped(f"{name} made at home: {summary(winding)}.", rest="")
-        for text in (*objections(winding), *advice(winding)):
-            yield from wrapped(text, "- ")
+        yield ("  likely", *(f"±{figure(each.likely_percent)} %" for each in together))
 
 
 def _facts(bill: Bill) -> Iterator[str]:
@@ -284,36 +173,4 @@ def _fact(fact: Fact) -> str:
     return f"{value}, {fact.note}" if fact.note else value
 
 
-_SECTIONS = (
-    _parts,
-    _ranges,
-    _facts,
-    _bought,
-    _trims,
-    _splits,
-    _swamping,
-    _searches,
-    _windings,
-)
-
-
-def old_face_lines(unit: str, rows: Sequence[tuple[float, float]]) -> Iterator[str]:
-    """Yield what a face drawn for the designed circuit shows at its numbered marks, as it was built."""
-    yield "On a face drawn for the exact values, as built:"
-    heads = (f"applied {unit}".rstrip(), "indicated", "error", "of full scale")
-    top = max(abs(value) for value, _ in rows)
-    yield from columns(
-        [
-            heads,
-            *(
-                (
-                    plain_number(value),
-                    plain_number(float(f"{shown:.5g}")),
-                    plain_number(float(f"{shown - value:.3g}")),
-                    percent(100 * (shown - value) / top),
-                )
-                for value, shown in rows
-            ),
-        ],
-        left=0,
-    )
+_SECTIONS = (_parts, _ranges, _facts, _bought, *MAKING)

@@ -14,7 +14,8 @@ from dialgen.cli.report import say, say_warnings
 if TYPE_CHECKING:
     from dialgen.api import Face
     from dialgen.dial.designs import Designed
-    from dialgen.parts.bill import Bill, Drawer
+    from dialgen.parts.bench import Bench
+    from dialgen.parts.bill import Bill
 
 _EPILOG = """\b
 Examples:
@@ -45,6 +46,7 @@ Examples:
 @click.option("--tolerance", type=float, help="The parts' tolerance in percent; the series' own if left out.")
 @click.option("--margin", type=float, help="How many times its dissipation a part is rated for; 2.")
 @click.option("--overload", type=float, help="The overload to look at, times full scale; 1.2.")
+@click.option("--voltage", help='What one resistor stands, as "350 V"; 250 V.')
 @click.option("--drift", type=float, help="The largest drift wanted, percent per kelvin: finds the swamping.")
 def command(
     file: str | None,
@@ -59,11 +61,12 @@ def command(
     margin: float | None,
     overload: float | None,
     drift: float | None,
+    voltage: str | None,
 ) -> None:
     """Print the range circuits of dial file FILE: parts to buy or to make, their heat, what they do.
 
     The options say what a [parts] table in the file says, and go before it: stock, wire, series,
-    tolerance, margin, overload, drift.  A drawer of more than twelve values is searched for networks
+    tolerance, margin, overload, drift, voltage.  A drawer of more than twelve values is searched for networks
     of up to six parts, a smaller one of up to eight.
     """
     if kinds:
@@ -75,7 +78,7 @@ def command(
 
     face = api.load(file)
     say_warnings(face.dial_warnings())
-    drawer = _drawer(
+    bench = _bench(
         face,
         {
             "stock": list(stock),
@@ -85,12 +88,13 @@ def command(
             "margin": margin,
             "overload": overload,
             "drift": drift,
+            "voltage": voltage,
         },
     )
     chosen = _chosen(face, only)
     if outputs:
         _draw(face, chosen, outputs)
-    bills = [(each, face.bill(each, drawer, _progress)) for each in chosen]
+    bills = [(each, face.bill(each, bench, _progress)) for each in chosen]
     if as_json:
         from dialgen.cli.bill_json import circuit_json
 
@@ -110,10 +114,10 @@ def _chosen(face: Face, only: int | None) -> tuple[Designed, ...]:
     return found[only - 1 : only]
 
 
-def _drawer(face: Face, given: dict[str, object]) -> Drawer:
-    """Return the drawer of the file, with what the options say instead."""
+def _bench(face: Face, given: dict[str, object]) -> Bench:
+    """Return the bench of the file, with what the options say instead."""
     options = {name: value for name, value in given.items() if value not in (None, [])}
-    return face.drawer(options)
+    return face.bench(options)
 
 
 def _progress(part: str) -> Callable[[int, int], None]:
@@ -146,7 +150,8 @@ def _draw(face: Face, chosen: tuple[Designed, ...], outputs: tuple[str, ...]) ->
 
 
 def _lines(face: Face, bills: Sequence[tuple[Designed, Bill]]) -> Iterator[str]:
-    from dialgen.cli.bill_text import bill_lines, closing_lines, old_face_lines
+    from dialgen.cli.bill_making import old_face_lines
+    from dialgen.cli.bill_text import bill_lines, closing_lines
     from dialgen.quantity import shown_unit
 
     for designed, bill in bills:
@@ -155,7 +160,8 @@ def _lines(face: Face, bills: Sequence[tuple[Designed, Bill]]) -> Iterator[str]:
         rows = face.old_face(designed) if bill.assessment else ()
         if rows:
             yield ""
-            yield from old_face_lines(shown_unit(face.dial.file.scale[designed.scale - 1].unit), rows)
+            spec = face.dial.file.scale[designed.scale - 1]
+            yield from old_face_lines(shown_unit(spec.unit), max(abs(spec.start), abs(spec.end)), rows)
         yield ""
     yield from closing_lines([bill for _, bill in bills])
 

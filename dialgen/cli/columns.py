@@ -6,6 +6,8 @@ import re
 import textwrap
 from collections.abc import Sequence
 
+from dialgen.quantity import plain_number
+
 WIDTH = 100
 _AMOUNT = re.compile(r"(\d) ((?:[pnµmkMG]?(?:A|V|W|Ω|VA|m)|mm|K|%|°C)(?!\w))")
 
@@ -41,3 +43,18 @@ def wrapped(text: str, first: str = "", rest: str = "  ") -> list[str]:
         break_on_hyphens=False,
     )
     return [line.replace("\u00a0", " ") for line in lines]
+
+
+def percent(value: float) -> str:
+    """Return a signed percentage of three figures.
+
+    >>> percent(0.0), percent(-1.2345), percent(12.345)
+    ('0 %', '−1.23 %', '+12.3 %')
+    """
+    rounded = float(f"{value:.3g}") if abs(value) >= 5e-7 else 0.0
+    return ("+" if rounded > 0 else "") + f"{plain_number(rounded)} %"
+
+
+def figure(value: float) -> str:
+    """Return a number of two figures."""
+    return plain_number(float(f"{value:.2g}"))

@@ -27,7 +27,8 @@ class Designed:
             number, and that of its further row, 0 for the scale itself.
         wiring: the scale's way through it; None where the finished circuit was observed.
         design: its parts.
-        reswamped: the design with another swamping resistor, in ohms; None where it takes none.
+        reswamped: the design with another swamping resistor, in ohms, and with a shunt made for it;
+            None where it takes none.
     """
 
     key: Key
@@ -50,7 +51,8 @@ class Designed:
 def designs(dial: Dial) -> tuple[Designed, ...]:
     """Return the circuits of a dial in the order of its scales, each once.
 
-    One of the same kind and parts as one before is that one: several ranges of one tapped shunt.
+    What is described alike and designed for the same signal is one; so are the ranges of one that
+    has several.
 
     Raises:
         Refused: circuits that cannot be designed, each with its keys.
@@ -64,12 +66,19 @@ def designs(dial: Dial) -> tuple[Designed, ...]:
             except InputError as error:
                 errors.append(_placed(error, key))
             else:
-                what = (made.design.kind, made.design.parts or key)
+                what = _sameness(circuit, made.design)
                 first = found.get(what)
                 found[what] = replace(first, serves=(*first.serves, *made.serves)) if first else made
     if errors:
         raise Refused(errors)
     return tuple(found.values())
+
+
+def _sameness(circuit: Circuit, design: Design) -> tuple[object, ...]:
+    """Return what two places in a file have in common if one circuit stands for both."""
+    described: Any = circuit
+    alike = replace(described, range=None) if hasattr(circuit, "range") else circuit
+    return alike, design.unit, None if getattr(circuit, "ranges", ()) else design.range
 
 
 def _circuits(dial: Dial, scale: ScaleDial) -> Iterator[tuple[int, Key, Circuit, Terminals, Wiring | None]]:

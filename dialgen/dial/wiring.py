@@ -136,7 +136,7 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         circuit=circuit,
         circuit_key=circuit_key,
         remarks=(
-            *_assumed(circuit, circuit_key or key),
+            *_circuit_remarks(circuit, terminals, circuit_key or key),
             *_own_current(circuit, terminals, _under(circuit_key, key, "full")),
             *past_points(law, scale, key),
         ),
@@ -227,8 +227,8 @@ def _under(circuit_key: Key | None, key: Key, name: str) -> Key:
     return (*circuit_key, name) if circuit_key else (*key, {"full": "to", "rest": "from"}.get(name, name))
 
 
-def _assumed(circuit: Circuit, key: Key) -> tuple[Remark, ...]:
-    return tuple(replace(remark, key=(*key, *remark.key)) for remark in circuit.remarks())
+def _circuit_remarks(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Remark, ...]:
+    return tuple(replace(remark, key=(*key, *remark.key)) for remark in circuit.remarks(terminals))
 
 
 def _own_current(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Remark, ...]:

@@ -21,7 +21,9 @@ from dialgen.quantity import (
     SIGNAL,
     VOLT,
     Amount,
+    Listed,
     Measure,
+    Number,
     read_length,
     read_number,
     shown,
@@ -42,16 +44,7 @@ Reader = Callable[[Any], Value]
 
 def number(name: str, least: float, most: float) -> Reader:
     """Return a reader of bare numbers within bounds."""
-
-    def read(given: object) -> float:
-        value = read_number(given, name)
-        if not least <= value <= most:
-            raise ValueError(
-                f"{name} of {value:g} is out of bounds; write a number from {least:g} to {most:g}"
-            )
-        return value
-
-    return read
+    return Number(name, least, most).read
 
 
 def positive(name: str) -> Reader:
@@ -175,6 +168,22 @@ def points(first: Reader, second: Reader, example: str, least: int = 2) -> Reade
         return each(given, read_point)
 
     return read_points
+
+
+def list_of(listed: Listed) -> Reader:
+    """Return a reader of a list whose every value is read alike, an error at its own place."""
+
+    def read(given: object) -> tuple[Value, ...]:
+        if listed.alone and not isinstance(given, list):
+            return listed.then((listed.read(given),))
+        if not isinstance(given, list):
+            raise ValueError(f"this is a list, not {shown(given)}; write for example {listed.example}")
+        if not listed.least <= len(given) <= listed.most:
+            count = f"{listed.least} to {listed.most}" if listed.most > listed.least else f"{listed.least}"
+            raise ValueError(f"{len(given)} of them; give {count}, such as {listed.example}")
+        return listed.then(each(given, listed.read))
+
+    return read
 
 
 def one_of(*words: str) -> Reader:

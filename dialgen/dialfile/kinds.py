@@ -3,62 +3,36 @@
 from __future__ import annotations
 
 import dataclasses
+from collections.abc import Mapping
 from functools import cache
 from typing import Annotated, Any, Literal, get_args, get_origin, get_type_hints
 
 from pydantic import BaseModel, ConfigDict, Field, PlainValidator, ValidationError, create_model
 
-from dialgen.circuit.bridge import ARMS, read_arms
-from dialgen.circuit.built import (
-    BUILT,
-    BUILT_ABOVE,
-    BUILT_EACH,
-    read_built,
-    read_built_above,
-    read_built_each,
-)
-from dialgen.circuit.diodes import DIODE, read_diode
 from dialgen.circuit.direct import FACE_END, FACE_VALUE
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.circuit.ohmmeter import TIMES, read_times
-from dialgen.circuit.ranges import AMPERE_RANGES, VOLT_RANGES, read_current_ranges, read_voltage_ranges
-from dialgen.circuit.shunt import RATED, read_rating
-from dialgen.circuit.transformer import RATIO, read_ratio
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Flaws, nearest_key
 from dialgen.errors import InputError
-from dialgen.geometry.points import FACE_POINTS, SIGNAL_POINTS
-from dialgen.geometry.thermistor import BETA, CALIBRATION, COEFFICIENT
-from dialgen.quantity import OHM_ABOVE, TEMPERATURE, Measure, shown
+from dialgen.geometry.points import CALIBRATION, FACE_POINTS, SIGNAL_POINTS
+from dialgen.quantity import OHM_ABOVE, TEMPERATURE, Listed, Measure, Number, Written, shown
 
 _MOST = 1e6
 _NOTES: dict[object, fields.Reader] = {
     FACE_VALUE: fields.face_value,
     FACE_END: fields.face_end,
-    RATED: read_rating,
-    RATIO: read_ratio,
-    DIODE: read_diode,
-    BUILT: read_built,
-    BUILT_ABOVE: read_built_above,
-    BUILT_EACH: read_built_each,
-    AMPERE_RANGES: read_current_ranges,
-    VOLT_RANGES: read_voltage_ranges,
-    TIMES: read_times,
-    ARMS: read_arms,
     SIGNAL_POINTS: fields.points(fields.face_value, fields.signal, '[[0, "0 mV"], [100, "12 mV"]]'),
     FACE_POINTS: fields.points(
         fields.face_end, fields.number("a position", -_MOST, _MOST), "[[0, -44], [10, -20.5]]"
     ),
-    BETA: fields.number("beta in kelvin", 1.0, _MOST),
-    COEFFICIENT: fields.number("a coefficient of Steinhart and Hart", -1.0, 1.0),
     CALIBRATION: fields.points(
         TEMPERATURE.read, OHM_ABOVE.read, '[["0 degC", "32.65 kohm"], ["25 degC", ...], ...]', least=0
     ),
 }
-"""Readers for the notes that laws and circuits put on their fields; a `Measure` reads itself."""
+"""Readers for the notes that are no more than a name, as they read values of the face."""
 
 
-def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
+def read_kind(given: object, table: Mapping[str, type[Any]], noun: str) -> fields.Value:
     """Return the law or circuit that ``given`` names: its kind alone, or a table with its keys.
 
     Raises:
@@ -76,11 +50,12 @@ def read_kind(given: object, table: dict[str, type], noun: str) -> fields.Value:
     if not isinstance(kind, str) or kind not in table:
         raise InputError(_no_such_kind(kind, table, noun), ("kind",))
     keys = {k: v for k, v in given.items() if k != "kind"}
-    model = model_of(table[kind])
+    made: Any = table[kind]
+    model = model_of(made)
     try:
-        return _made(table[kind], model.model_validate(keys))
+        return _made(made, model.model_validate(keys))
     except ValidationError as error:
-        raise Flaws(model, error, _crossed(table[kind], model, keys)) from None
+        raise Flaws(model, error, _crossed(made, model, keys)) from None
 
 
 @cache
@@ -88,12 +63,12 @@ def model_of(kind: type) -> type[BaseModel]:
     """Return the pydantic model with the fields of a law or circuit; unknown keys are refused."""
     hints = get_type_hints(kind, include_extras=True)
     made: dict[str, Any] = {
-        f.name: (_field(f.name, hints[f.name]), _default(f)) for f in dataclasses.fields(kind)
+        f.name: (_field(f.name, hints[f.name]), _default(f, hints[f.name])) for f in dataclasses.fields(kind)
     }
     return create_model(kind.__name__, __config__=ConfigDict(extra="forbid", frozen=True), **made)
 
 
-def _kind_elsewhere(given: dict[str, Any], table: dict[str, type]) -> str | None:
+def _kind_elsewhere(given: dict[str, Any], table: Mapping[str, type[Any]]) -> str | None:
     """Return the key under which the kind stands by mistake, if one does."""
     return next((k for k, v in given.items() if nearest_key(k, ["kind"]) and v in list(table)), None)
 
@@ -124,7 +99,7 @@ def _crossed(kind: type, model: type[BaseModel], keys: dict[str, Any]) -> list[I
     return []
 
 
-def _no_such_kind(kind: object, table: dict[str, type], noun: str) -> str:
+def _no_such_kind(kind: object, table: Mapping[str, type[Any]], noun: str) -> str:
     known = ", ".join(f'"{k}"' for k in table)
     if kind is None:
         return f"the {noun} has no kind; add kind = with one of {known}"
@@ -144,7 +119,9 @@ def _field(name: str, hint: object) -> fields.Value:
 def _reader(name: str, hint: object) -> fields.Reader:
     if get_origin(hint) is Annotated:
         note = get_args(hint)[1]
-        return note.read if isinstance(note, Measure) else _NOTES[note]
+        if isinstance(note, Listed):
+            return fields.list_of(note)
+        return note.read if isinstance(note, (Measure, Number, Written)) else _NOTES[note]
     if get_origin(hint) is Literal:
         return fields.one_of(*get_args(hint))
     if hint is bool:
@@ -156,7 +133,17 @@ def _reader(name: str, hint: object) -> fields.Reader:
     raise TypeError(f"no reader for the field {name} of type {hint}; annotate it with a note that has one")
 
 
-def _default(field: dataclasses.Field[Any]) -> fields.Value:
+def _default(field: dataclasses.Field[Any], hint: object) -> fields.Value:
     if field.default is not dataclasses.MISSING:
         return Field(default=field.default)
-    return Field(description=f"{field.name} = ...")
+    return Field(description=f"{field.name} = {_example(hint)}")
+
+
+def _example(hint: object) -> str:
+    """Return what may stand behind a key's equals sign."""
+    if get_origin(hint) is Literal:
+        return f'"{get_args(hint)[0]}"'
+    note = get_args(hint)[1] if get_origin(hint) is Annotated else None
+    if isinstance(note, Measure):
+        return f'"{note.example}"'
+    return note.example if isinstance(note, (Listed, Number, Written)) else "..."

@@ -3,34 +3,22 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-from typing import Annotated, Any
+from typing import Annotated
 
 from pydantic import PlainValidator, ValidationError
 
 from dialgen.dialfile import fields
-from dialgen.dialfile.base import Table, each
+from dialgen.dialfile.base import Table
 from dialgen.errors import InputError
-from dialgen.parts.bench import Bench
-from dialgen.parts.bill import Drawer
-from dialgen.parts.caution.cautions import USUAL_RATINGS_V
+from dialgen.parts.bench import OVERLOAD, Bench
 from dialgen.parts.preferred import SERIES
-from dialgen.parts.ratings import MARGIN
+from dialgen.parts.ratings import MARGIN, USUAL_RATINGS_V
 from dialgen.parts.stock.drawer import Lot, read_stock
 from dialgen.parts.wire.spool import Wire, read_wire
-from dialgen.quantity import VOLT_ABOVE, shown
+from dialgen.quantity import VOLT_ABOVE, Listed
 
-_MOST_LOTS, _MOST_WIRES = 200, 12
-
-
-def _list_of(read: fields.Reader, most: int, example: str) -> fields.Reader:
-    def read_list(given: object) -> tuple[Any, ...]:
-        if not isinstance(given, list) or not 0 < len(given) <= most:
-            raise ValueError(
-                f"this is a list of 1 to {most} entries, not {shown(given)}; write for example {example}"
-            )
-        return each(given, read)
-
-    return read_list
+_STOCK = Listed(read_stock, 1, 200, '["3.3 ohm x12", "10 ohm x5"]')
+_WIRE = Listed(read_wire, 1, 12, '["manganin 0.5 mm", "constantan AWG 24"]')
 
 
 def _volts(given: object) -> float:
@@ -42,11 +30,11 @@ class Parts(Table):
 
     stock: Annotated[
         tuple[Lot, ...],
-        PlainValidator(_list_of(read_stock, _MOST_LOTS, '["3.3 ohm x12", "10 ohm x5"]')),
+        PlainValidator(fields.list_of(_STOCK)),
     ] = ()
     wire: Annotated[
         tuple[Wire, ...],
-        PlainValidator(_list_of(read_wire, _MOST_WIRES, '["manganin 0.5 mm", "constantan AWG 24"]')),
+        PlainValidator(fields.list_of(_WIRE)),
     ] = ()
     series: Annotated[str | None, PlainValidator(fields.one_of(*SERIES))] = None
     """The E series that parts are bought in; None shows all."""
@@ -54,31 +42,29 @@ class Parts(Table):
     """Percent, of every part; None takes each series' own."""
     margin: Annotated[float, PlainValidator(fields.number("a margin", 1.0, 100.0))] = MARGIN
     """How many times its dissipation a resistor is rated for."""
-    overload: Annotated[float, PlainValidator(fields.number("an overload", 1.0, 100.0))] = 1.2
+    overload: Annotated[float, PlainValidator(fields.number("an overload", 1.0, 100.0))] = OVERLOAD
     """Times full scale."""
     drift: Annotated[float | None, PlainValidator(fields.number("a drift", 1e-4, 10.0))] = None
     """The largest wanted, in percent for a kelvin, for the swamping resistor."""
     voltage: Annotated[float, PlainValidator(_volts)] = min(USUAL_RATINGS_V.values())
     """What one resistor stands."""
 
-    def drawer(self) -> Drawer:
+    def bench(self) -> Bench:
         """Return it as the bench asks for it."""
-        return Drawer(
-            bench=Bench(
-                tolerance_percent=self.tolerance,
-                margin=self.margin,
-                overload=self.overload,
-                series=self.series,
-                drift_wanted_percent_per_k=self.drift,
-            ),
+        return Bench(
+            tolerance_percent=self.tolerance,
+            margin=self.margin,
+            overload=self.overload,
+            series=self.series,
+            drift_wanted_percent_per_k=self.drift,
             lots=self.stock,
             wires=self.wire,
             voltage_v=self.voltage,
         )
 
 
-def drawer(parts: Parts | None, instead: Mapping[str, object]) -> Drawer:
-    """Return the drawer of a file, with some of its keys said instead.
+def bench_of(parts: Parts | None, instead: Mapping[str, object]) -> Bench:
+    """Return the bench of a file, with some of its keys said instead.
 
     Args:
         parts: the file's table, if it has one.
@@ -92,7 +78,7 @@ def drawer(parts: Parts | None, instead: Mapping[str, object]) -> Drawer:
     except ValidationError as error:
         raise InputError(_told(error)) from None
     changed = {name: getattr(said, name) for name in instead}
-    return (parts or Parts()).model_copy(update=changed).drawer()
+    return (parts or Parts()).model_copy(update=changed).bench()
 
 
 def _told(error: ValidationError) -> str:

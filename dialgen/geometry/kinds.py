@@ -2,19 +2,22 @@
 
 from __future__ import annotations
 
-from dialgen.geometry.formula import Formula
-from dialgen.geometry.laws import Decibel, Linear, Logarithmic, Power, Reflection
-from dialgen.geometry.nernst import Nernst
-from dialgen.geometry.points import Observed, Table
-from dialgen.geometry.pt100 import Pt100
-from dialgen.geometry.thermistor import Thermistor
-from dialgen.geometry.thermocouple import Thermocouple
+from dialgen.lazy import LoadedOnUse
 
-LAWS: dict[str, type] = {
-    law.kind: law
-    for law in (
-        *(Linear, Power, Decibel, Logarithmic, Reflection),
-        *(Thermocouple, Pt100, Thermistor, Nernst),
-        *(Table, Formula, Observed),
-    )
-}
+LAWS = LoadedOnUse(
+    "dialgen.geometry",
+    {
+        "linear": "laws:Linear",
+        "power": "laws:Power",
+        "decibel": "laws:Decibel",
+        "logarithmic": "laws:Logarithmic",
+        "reflection": "laws:Reflection",
+        "thermocouple": "thermocouple:Thermocouple",
+        "pt100": "pt100:Pt100",
+        "thermistor": "thermistor:Thermistor",
+        "nernst": "nernst:Nernst",
+        "table": "points:Table",
+        "formula": "formula:Formula",
+        "observed": "points:Observed",
+    },
+)

@@ -16,6 +16,7 @@ from dialgen.stage import Array, Span, Stage
 
 SIGNAL_POINTS = "points of [value, signal]"
 FACE_POINTS = "points of [value, position]"
+CALIBRATION = "points of [temperature, resistance]"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
 from dialgen.errors import InputError
+from dialgen.geometry.points import CALIBRATION
 from dialgen.geometry.steinhart_hart import (
     HOTTEST_C,
     FallingResistance,
@@ -16,12 +17,11 @@ from dialgen.geometry.steinhart_hart import (
     through_points,
 )
 from dialgen.geometry.temperature import on_face
-from dialgen.quantity import OHM_ABOVE, Amount
+from dialgen.quantity import OHM_ABOVE, Amount, Number
 from dialgen.stage import Span, Stage
 
-BETA = "beta in kelvin"
-COEFFICIENT = "a coefficient of Steinhart and Hart"
-CALIBRATION = "points of [temperature, resistance]"
+BETA = Number("beta in kelvin", 1.0, 1e6)
+COEFFICIENT = Number("a coefficient of Steinhart and Hart", -1.0, 1.0)
 
 _POINTS = 3
 _EXAMPLES = {

@@ -2,41 +2,21 @@
 
 from __future__ import annotations
 
-import math
 from collections.abc import Callable
-from dataclasses import dataclass, field
+from dataclasses import dataclass
 
 from dialgen.circuit.design import Design
 from dialgen.errors import InputError
 from dialgen.parts.assessed import Assessment, PartAssessed, assess
 from dialgen.parts.bench import Bench
-from dialgen.parts.caution.cautions import USUAL_RATINGS_V, Caution, cautions, split_count
+from dialgen.parts.caution.cautions import Caution, cautions, split_count
 from dialgen.parts.caution.situation import Situation, situation_of
 from dialgen.parts.drift import NoSwamping, Swamping, swamping
-from dialgen.parts.stock.drawer import Lot
 from dialgen.parts.stock.search import Progress, Search, search
 from dialgen.parts.trimming import Trim, trims
-from dialgen.parts.wire.spool import Wire
 from dialgen.parts.wire.winding import Winding, wound
 
 Reswamped = Callable[[float], Design]
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Drawer:
-    """What the maker has: how designs are judged, what lies in the drawer and on the spool.
-
-    Args:
-        bench: how a design is judged.
-        lots: resistors in the drawer.
-        wires: wires and strips to make parts of.
-        voltage_v: what one resistor stands, for the splitting of a multiplier.
-    """
-
-    bench: Bench = field(default_factory=Bench)
-    lots: tuple[Lot, ...] = ()
-    wires: tuple[Wire, ...] = ()
-    voltage_v: float = min(USUAL_RATINGS_V.values())
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -76,7 +56,7 @@ class Bill:
 
 def bill(
     design: Design,
-    drawer: Drawer,
+    bench: Bench,
     movement: str,
     *,
     reswamped: Reswamped | None = None,
@@ -86,7 +66,7 @@ def bill(
 
     Args:
         design: the circuit.
-        drawer: what the maker has.
+        bench: what the maker has.
         movement: the movement's kind.
         reswamped: the circuit designed with another swamping resistor, where it takes one.
         progress: given a part's name, what is told of the search for it in the drawer.
@@ -94,52 +74,52 @@ def bill(
     Raises:
         InputError: a wanted drift that no resistor brings; its key is "drift".
     """
-    situation = situation_of(design, movement)
+    situation = situation_of(design, movement, bench.voltage_v)
     heeded = cautions(situation)
     if situation.beyond_help:
         return Bill(design=design, assessment=None, cautions=heeded)
-    assessment = assess(design, drawer.bench)
+    assessment = assess(design, bench)
     made = [part for part in assessment.parts if part.part.is_made]
     return Bill(
         design=design,
         assessment=assessment,
         trims=trims(design),
-        splits=tuple(each for part in made for each in _splits(part, situation, drawer.voltage_v)),
+        splits=tuple(each for part in made for each in _splits(part, situation)),
         searches=tuple(
             (
                 each.part.name,
-                search(each.part.ohms, drawer.lots, progress=progress and progress(each.part.name)),
+                search(each.part.ohms, bench.lots, progress=progress and progress(each.part.name)),
             )
             for each in made
-            if drawer.lots
+            if bench.lots
         ),
         windings=tuple(
             (each.part.name, wound(each.part.ohms, abs(each.full.current_a or 0.0), wire))
             for each in made
-            for wire in drawer.wires
+            for wire in bench.wires
         ),
-        swamping=_swamping(reswamped, drawer.bench),
+        swamping=_swamping(design, reswamped, bench),
         cautions=heeded,
     )
 
 
-def _splits(part: PartAssessed, situation: Situation, rating_v: float) -> list[Split]:
+def _splits(part: PartAssessed, situation: Situation) -> list[Split]:
     if situation.takes != "V" or part.full.voltage_v is None:
         return []
-    peak_v = abs(part.full.voltage_v) * (1.0 if situation.alternating is False else math.sqrt(2))
+    peak_v = abs(part.full.voltage_v) * situation.peak_factor
     if situation.alternating:
         peak_v = max(peak_v, situation.resistor_peak_v)
-    count = split_count(peak_v, rating_v)
+    count = split_count(peak_v, situation.resistor_rating_v)
     if count == 1:
         return []
     return [Split(part=part.part.name, count=count, ohms=part.part.ohms / count, voltage_v=peak_v / count)]
 
 
-def _swamping(reswamped: Reswamped | None, bench: Bench) -> Swamping | NoSwamping | None:
+def _swamping(design: Design, reswamped: Reswamped | None, bench: Bench) -> Swamping | NoSwamping | None:
     wanted = bench.drift_wanted_percent_per_k
     if wanted is None or reswamped is None:
         return None
     try:
-        return swamping(reswamped, wanted, bench.materials)
+        return swamping(design, reswamped, wanted, bench.materials)
     except InputError as error:
         raise InputError(error.message, ("parts", "drift")) from None

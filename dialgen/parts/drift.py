@@ -80,11 +80,9 @@ class Swamping:
     Args:
         swamp_ohm: the resistor, 0 where the circuit is good enough without.
         percent_per_k: the drift with it, of the worst range.
-        before_percent_per_k: the drift without.
+        before_percent_per_k: the drift of the circuit as it is.
         drop_v: the voltage across the terminals at full scale with it, of the first range.
-        before_drop_v: that without.
-        drive: what the first range's full signal then drives; below 1 with a bought shunt, which must
-            be one of more drop.
+        before_drop_v: that of the circuit as it is.
     """
 
     swamp_ohm: float
@@ -92,7 +90,6 @@ class Swamping:
     before_percent_per_k: float
     drop_v: float
     before_drop_v: float
-    drive: float
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -102,25 +99,25 @@ class NoSwamping:
     Args:
         percent_per_k: the drift, as it is.
         copper_share: what share of the whole resistance is copper.
-        share_wanted: the largest share with the wanted drift, or None where no share has it, as the
-            other parts drift as much.
-        range_factor: how many times the range would have to be larger, with this movement.
-        coil_factor: by what the coil's resistance would have to be multiplied, at the same current.
+        range_factor: how many times the range would have to be larger, with this movement; None where
+            no range has the wanted drift, as the other parts drift as much.
     """
 
     percent_per_k: float
     copper_share: float
-    share_wanted: float | None
     range_factor: float | None
-    coil_factor: float | None
 
 
 def swamping(
-    redesign: Callable[[float], Design], wanted_percent_per_k: float, materials: Materials | None = None
+    design: Design,
+    redesign: Callable[[float], Design],
+    wanted_percent_per_k: float,
+    materials: Materials | None = None,
 ) -> Swamping | NoSwamping:
     """Return the smallest swamping resistor with which no range drifts more than is wanted.
 
     Args:
+        design: the circuit as it is.
         redesign: the circuit with a swamping resistor of so many ohms, all else designed anew.
         wanted_percent_per_k: the largest drift, either way.
         materials: what the parts are made of.
@@ -131,11 +128,11 @@ def swamping(
     if not wanted_percent_per_k > 0:
         raise InputError(f"a drift of {wanted_percent_per_k:g} %/K cannot be had; write for example 0.1")
     of = materials or Materials()
-    bare = redesign(0.0)
-    before = _worst(bare, of)
+    before = _worst(design, of)
     if abs(before) <= wanted_percent_per_k:
-        return _swamping(bare, bare, 0.0, of)
-    if not _moves(redesign, bare, before, of):
+        return _swamping(design, design, 0.0, of)
+    bare = redesign(0.0)
+    if not _moves(redesign, bare, of):
         return _no_swamping(before, wanted_percent_per_k, of)
 
     def sizes(ohms: Array) -> Array:
@@ -143,20 +140,20 @@ def swamping(
 
     high_ohm = _enough_ohm(sizes, bare.ohms[COIL], wanted_percent_per_k)
     found = bracketed_roots(sizes, np.array([0.0, high_ohm]), np.array([wanted_percent_per_k]))
-    return _swamping(redesign(float(found[0])), bare, float(found[0]), of)
+    return _swamping(redesign(float(found[0])), design, float(found[0]), of)
 
 
 def _worst(design: Design, materials: Materials) -> float:
     return largest([each.percent_per_k for each in drifts(design, materials)])
 
 
-def _moves(redesign: Callable[[float], Design], bare: Design, before: float, materials: Materials) -> bool:
+def _moves(redesign: Callable[[float], Design], bare: Design, materials: Materials) -> bool:
     """Return whether a little swamping lessens the drift; where there is no room for any, it does not."""
     try:
         after = _worst(redesign(_PROBE * bare.ohms[COIL]), materials)
     except InputError:
         return False
-    return abs(after) < abs(before) * (1.0 - _UNMOVED)
+    return abs(after) < abs(_worst(bare, materials)) * (1.0 - _UNMOVED)
 
 
 def _enough_ohm(sizes: Callable[[Array], Array], coil_ohm: float, wanted: float) -> float:
@@ -168,15 +165,14 @@ def _enough_ohm(sizes: Callable[[Array], Array], coil_ohm: float, wanted: float)
     raise InputError(f"no swamping resistor brings the drift to {wanted:g} %/K; ask for more")
 
 
-def _swamping(design: Design, bare: Design, swamp_ohm: float, materials: Materials) -> Swamping:
-    with_it, without = worked(design)[0], worked(bare)[0]
+def _swamping(swamped: Design, design: Design, swamp_ohm: float, materials: Materials) -> Swamping:
+    with_it, without = worked(swamped)[0], worked(design)[0]
     return Swamping(
         swamp_ohm=swamp_ohm,
-        percent_per_k=_worst(design, materials),
-        before_percent_per_k=_worst(bare, materials),
+        percent_per_k=_worst(swamped, materials),
+        before_percent_per_k=_worst(design, materials),
         drop_v=with_it.full.drop_v,
         before_drop_v=without.full.drop_v,
-        drive=with_it.full.drive,
     )
 
 
@@ -185,11 +181,8 @@ def _no_swamping(percent_per_k: float, wanted_percent_per_k: float, materials: M
     others, apart = materials.others_per_k, materials.copper_per_k - materials.others_per_k
     share = (abs(percent_per_k) / 100.0 - others) / apart
     wanted = (wanted_percent_per_k / 100.0 - others) / apart
-    possible = wanted > 0
     return NoSwamping(
         percent_per_k=percent_per_k,
         copper_share=share,
-        share_wanted=wanted if possible else None,
-        range_factor=share / wanted if possible else None,
-        coil_factor=wanted / share if possible else None,
+        range_factor=share / wanted if wanted > 0 else None,
     )

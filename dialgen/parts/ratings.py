@@ -8,6 +8,8 @@ SOLD_W = (0.125, 0.25, 0.5, 1.0)
 """Small ratings as they are sold (common practice)."""
 MARGIN = 2.0
 """A resistor is bought for at least twice what it dissipates (common practice)."""
+USUAL_RATINGS_V = {0.25: 250.0, 0.5: 350.0}
+"""The voltage that small film resistors stand, by their watts.  Common practice, from memory."""
 _FIGURES = 9
 
 

@@ -5,6 +5,7 @@ what a bare 50 meant.  Everything is read by hand and to the letter: the librari
 take "1,5 V" for 15 V and "4k7" for 4 of unit k7 without complaint.
 """
 
+from dialgen.quantity.notes import Listed, Number, Written
 from dialgen.quantity.reading import (
     AMPERE,
     ANY_CURRENT,
@@ -25,7 +26,29 @@ from dialgen.quantity.temperature import TEMPERATURE, ZERO_CELSIUS_K, meant_degr
 from dialgen.quantity.units import folded_unit, shown_unit, split_unit
 
 __all__ = [
-    "AMPERE", "ANY_CURRENT", "OHM", "OHM_ABOVE", "SIGNAL", "SIGNAL_ABOVE", "TEMPERATURE", "VOLT",
-    "VOLT_ABOVE", "ZERO_CELSIUS_K", "Amount", "Measure", "bare_number", "engineered", "folded_unit",
-    "meant_degree", "plain_number", "read_length", "read_number", "shown", "shown_unit", "split_unit",
+    "AMPERE",
+    "ANY_CURRENT",
+    "OHM",
+    "OHM_ABOVE",
+    "SIGNAL",
+    "SIGNAL_ABOVE",
+    "TEMPERATURE",
+    "VOLT",
+    "VOLT_ABOVE",
+    "ZERO_CELSIUS_K",
+    "Amount",
+    "Listed",
+    "Measure",
+    "Number",
+    "Written",
+    "bare_number",
+    "engineered",
+    "folded_unit",
+    "meant_degree",
+    "plain_number",
+    "read_length",
+    "read_number",
+    "shown",
+    "shown_unit",
+    "split_unit",
 ]  # fmt: skip

@@ -7,10 +7,11 @@ import pytest
 from hypothesis import assume, given
 from hypothesis import strategies as st
 
-from dialgen.circuit.bridge import ARM_NAMES, Bridge, read_arms
+from dialgen.circuit.bridge import ARM_NAMES, ARMS, Bridge
 from dialgen.circuit.design import COIL
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.circuit.terminals import Coil, Terminals
+from dialgen.dialfile.fields import list_of
 from dialgen.dialfile.kinds import read_kind
 from dialgen.errors import InputError
 from dialgen.quantity import Amount
@@ -193,7 +194,7 @@ def test_bridge_needs_the_coil(coil, missing):
 def test_arms_written_wrongly_are_refused(given):
     """Three resistances above zero, each with its unit."""
     with pytest.raises(ValueError, match=";"):
-        read_arms(given)
+        list_of(ARMS)(given)
 
 
 def test_dial_files_name_supply_and_arms():

@@ -16,8 +16,9 @@ from scipy.optimize import brentq
 from dialgen.circuit.cell import adjuster
 from dialgen.circuit.design import COIL
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter, read_times
+from dialgen.circuit.ohmmeter import TIMES, SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.terminals import Coil, Terminals
+from dialgen.dialfile.fields import list_of
 from dialgen.dialfile.kinds import read_kind
 from dialgen.errors import InputError
 from dialgen.quantity import Amount
@@ -145,7 +146,7 @@ def series_meters(draw):
     coil_v = draw(st.floats(0.01, 0.6)) * cell_v
     # What the coil takes of the chain's current with a new cell.
     taken = math.exp(draw(st.floats(math.log(1e-3), math.log(0.9))))
-    times = read_times(draw(ranges))
+    times = list_of(TIMES)(draw(ranges))
     zero = draw(st.sampled_from(["across", "series"]))
     half_ohm = taken * cell_v / coil_a / max(times)
     # The chain's current is (E - V)/Rs: with the worn cell the coil needs its own and a hundredth.
@@ -453,14 +454,14 @@ def test_a_design_needs_the_coil_but_a_face_does_not(circuit, coil, missing):
 )
 def test_ranges_are_a_number_or_a_list_with_the_scales_own_first(given, times):
     """However they are listed, the range that the scale shows comes first and the others ascend."""
-    assert read_times(given) == times
+    assert list_of(TIMES)(given) == times
 
 
 @pytest.mark.parametrize("given", [0, -1, "10", [], [1, 1], [1, "10"], True, math.inf, 1e9, [1] * 13, None])
 def test_ranges_written_wrongly_are_refused(given):
     """Ranges are different numbers above zero."""
     with pytest.raises(ValueError, match=";"):
-        read_times(given)
+        list_of(TIMES)(given)
 
 
 def test_dial_files_name_cell_zero_and_ranges():

@@ -11,9 +11,10 @@ from hypothesis import strategies as st
 from kirchhoff import coil_current
 
 from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.ranges import read_current_ranges
+from dialgen.circuit.ranges import AMPERE_RANGES
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.universal import UniversalShunt
+from dialgen.dialfile.fields import list_of
 from dialgen.errors import InputError
 from dialgen.quantity import Amount
 
@@ -189,4 +190,4 @@ def test_a_bad_set_of_ranges_is_refused_at_its_key(make, key, words):
 def test_what_is_not_a_list_of_ranges_is_refused(given_ranges):
     """A list of ranges has two to twelve currents with their units, and is told how to be written."""
     with pytest.raises(ValueError, match="; write for example"):
-        read_current_ranges(given_ranges)
+        list_of(AMPERE_RANGES)(given_ranges)

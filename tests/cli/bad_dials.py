@@ -806,3 +806,400 @@ _FACE = (
 
 FACE = [Bad(*row[:6], text=DRESSED, more=sum(row[6:]), files=_FOLDER) for row in _FACE]
 SENSE += FACE
+
+WIRED = """\
+dialgen = 1
+[movement]
+current = "1 mA"
+resistance = "30 ohm"
+rest = -44
+full = 44
+[circuit]
+kind = "universal shunt"
+ranges = ["1 A", "5 A", "10 A"]
+range = "5 A"
+swamp = "20 ohm"
+built = ["5 mohm", "5 mohm", "40 mohm"]
+[parts]
+stock = ["3.3 ohm x12", "10 ohm x5"]
+wire = ["manganin 0.5 mm"]
+series = "E24"
+tolerance = 1
+drift = 0.05
+voltage = "250 V"
+[[scale]]
+unit = "A"
+from = 0
+to = 5
+radius = 220
+[[scale]]
+unit = "A"
+from = 0
+to = 100
+circuit = { kind = "shunt", leads = "0.1 ohm", rated = "100 A/75 mV" }
+radius = 196
+[[scale]]
+unit = "A"
+from = 0
+to = 200
+circuit = { kind = "current transformer", ratio = "200/5" }
+radius = 172
+[[scale]]
+unit = "degC"
+from = 0
+to = 1000
+law = { kind = "thermocouple", type = "K", reference = "20 degC" }
+circuit = { kind = "multiplier", line = "2 ohm" }
+radius = 148
+[[scale]]
+unit = "V"
+from = 0
+to = 10
+circuit = { kind = "rectifier", rectifier = "half bridge", diode = "ideal", legs = "2 kohm" }
+radius = 124
+[[scale]]
+unit = "ohm"
+from = 0
+to = inf
+circuit = { kind = "series ohmmeter", half = "500 ohm", battery = "1.5 V", times = [1, 2] }
+radius = 100
+[[scale]]
+unit = "degC"
+from = 0
+to = 100
+law = "pt100"
+circuit = { kind = "bridge", supply = "600 mV", arms = ["100 ohm", "100 ohm", "100 ohm"] }
+radius = 76
+[[scale]]
+unit = "degC"
+from = 0
+to = 100
+law = { kind = "thermistor", r25 = "10 kohm", beta = 3950 }
+circuit = "direct"
+radius = 52
+[[scale]]
+unit = "pH"
+from = 0
+to = 14
+law = { kind = "nernst", temperature = "25 degC" }
+circuit = { kind = "direct", rest = 0 }
+radius = 28
+[plate]
+size = [500, 280]
+pivot = [250, 20]
+"""
+"""A good dial file with most kinds of circuit, the laws of all sensors and a maker's drawer."""
+
+_TAPS = WIRED[WIRED.index("ranges") : WIRED.index("[parts]")]
+
+_CIRCUIT = (
+    # circuits: shunts
+    ("ranges of a shunt by another name", 'ranges = ["1 A", "5 A", "10 A"]',
+     'ranges_ = ["1 A", "5 A", "10 A"]', "9:1", "circuit.ranges_", "did you mean ranges?"),
+    ("ranges not in a list", 'ranges = ["1 A", "5 A", "10 A"]', 'ranges = "10 A"', "9:1", "circuit.ranges",
+     'not "10 A"; write for example ["1 A", "5 A", "10 A"]'),
+    ("ranges out of order", 'ranges = ["1 A", "5 A", "10 A"]', 'ranges = ["1 A", "10 A", "5 A"]', "9:26",
+     "circuit.ranges[3]", "the ranges 10 A and 5 A are out of order; list each range once"),
+    ("ranges with one twice", 'ranges = ["1 A", "5 A", "10 A"]', 'ranges = ["1 A", "5 A", "5.0 A"]', "9:25",
+     "circuit.ranges[3]", "list each range once"),
+    ("smallest range the movement's own", _TAPS, 'ranges = ["1 mA", "5 A", "10 A"]\n', "9:1",
+     "circuit.ranges",
+     "the smallest range of 1 mA is not above the movement's own 1 mA; take larger ranges"),
+    ("range of none of the taps", 'range = "5 A"', 'range = "2 A"', "10:1", "circuit.range",
+     "2 A is not one of the ranges 1 A, 5 A, 10 A; give range, one of them"),
+    ("range a bare number", 'range = "5 A"', "range = 5", "10:1", "circuit.range",
+     "a current needs its unit, 5 has none"),
+    ("range left out and no tap for the end", 'ranges = ["1 A", "5 A", "10 A"]\nrange = "5 A"\n',
+     'ranges = ["1 A", "4 A", "10 A"]\n', "7:2", "circuit.range",
+     "5 A is not one of the ranges 1 A, 4 A, 10 A; give range"),
+    ("sections too few", 'built = ["5 mohm", "5 mohm", "40 mohm"]', 'built = ["5 mohm", "45 mohm"]', "12:1",
+     "circuit.built",
+     "2 sections as built, for 3 ranges; give one for each, from the tap of the largest range"),
+    ("section of nothing", 'built = ["5 mohm", "5 mohm", "40 mohm"]',
+     'built = ["5 mohm", "0 ohm", "40 mohm"]', "12:20", "circuit.built[2]",
+     "a section of 0 Ω makes two ranges one; measure it again"),
+    ("swamping of less than nothing", 'swamp = "20 ohm"', 'swamp = "-20 ohm"', "11:1", "circuit.swamp",
+     '"-20 ohm" is below 0'),
+    ("swamping a bare number", 'swamp = "20 ohm"', "swamp = 20", "11:1", "circuit.swamp",
+     'write for example "20 ohm"'),
+    ("sense leads of a universal shunt", 'swamp = "20 ohm"', 'leads = "0.1 ohm"', "11:1", "circuit.leads",
+     'it goes with kind = "shunt" or "current transformer"'),
+    ("ranges of a plain shunt", 'kind = "universal shunt"\nranges = ["1 A", "5 A", "10 A"]\n',
+     'kind = "shunt"\nranges = ["1 A", "5 A", "10 A"]\n', "9:1", "circuit.ranges",
+     'it goes with kind = "universal shunt"', 1),
+    ("kind half written", '"universal shunt"', '"universal"', "8:1", "circuit.kind",
+     'did you mean "universal shunt"?'),
+    ("kind in capitals", '"universal shunt"', '"Universal Shunt"', "8:1", "circuit.kind",
+     'did you mean "universal shunt"?'),
+    ("key of two circuits", 'rated = "100 A/75 mV"', 'rated = "100 A/75 mV", ratio = "200/5"', "29:71",
+     "scale[2].circuit.ratio", 'it goes with kind = "current transformer"'),
+    ("rating the wrong way round", 'rated = "100 A/75 mV"', 'rated = "75 mV/100 A"', "29:48",
+     "scale[2].circuit.rated", '"75 mV" is not in A'),
+    ("rating without units", 'rated = "100 A/75 mV"', 'rated = "100/75"', "29:48", "scale[2].circuit.rated",
+     '"100" has no unit'),
+    ("rating by its current alone", 'rated = "100 A/75 mV"', 'rated = "100 A"', "29:48",
+     "scale[2].circuit.rated", "\"100 A\" is not a shunt's rating; write for example \"100 A/75 mV\""),
+    ("rating with a comma between", 'rated = "100 A/75 mV"', 'rated = "100 A, 75 mV"', "29:48",
+     "scale[2].circuit.rated", 'write for example "100 A/75 mV"'),
+    ("rating of no drop", 'rated = "100 A/75 mV"', 'rated = "100 A/0 mV"', "29:48", "scale[2].circuit.rated",
+     '"0 mV" is not above 0'),
+    ("bought shunt with too little drop", 'rated = "100 A/75 mV"', 'rated = "100 A/25 mV"', "29:48",
+     "scale[2].circuit.rated",
+     "this shunt drops 25 mV, less than the 30.1 mV that coil and leads need; take a shunt with more"),
+    ("leads a bare number", 'leads = "0.1 ohm"', "leads = 0.1", "29:29", "scale[2].circuit.leads",
+     'write for example "0.1 ohm"'),
+    ("leads in metres", 'leads = "0.1 ohm"', 'leads = "2 m"', "29:29", "scale[2].circuit.leads",
+     '"2 m" is not in Ω'),
+    ("shunt below the movement", 'rated = "100 A/75 mV"', 'range = "0.5 mA"', "29:48",
+     "scale[2].circuit.range",
+     "a range of 500 µA is below the movement's own 1 mA; a shunt only widens the range"),
+    ("range beyond anything", 'rated = "100 A/75 mV"', 'range = "1e30 A"', "29:48", "scale[2].circuit.range",
+     "is beyond anything a meter has"),
+    ("four-wire reading of other keys", 'rated = "100 A/75 mV"',
+     'built = { voltage = "75 mV", current = "100 A" }', "29:48", "scale[2].circuit.built",
+     'a four-wire reading is volts and amps, nothing else; write built = "1.885 mohm", or {'),
+    ("four-wire reading without amperes", 'rated = "100 A/75 mV"', 'built = { volts = "75 mV" }', "29:48",
+     "scale[2].circuit.built", "a four-wire reading is volts and amps"),
+    ("four-wire reading crossed", 'rated = "100 A/75 mV"', 'built = { volts = "100 A", amps = "75 mV" }',
+     "29:48", "scale[2].circuit.built", '"100 A" is not in V'),
+    ("four-wire reading of no current", 'rated = "100 A/75 mV"', 'built = { volts = "75 mV", amps = "0 A" }',
+     "29:48", "scale[2].circuit.built", '"0 A" is not above 0'),
+    ("built shunt of nothing", 'rated = "100 A/75 mV"', 'built = "0 ohm"', "29:48", "scale[2].circuit.built",
+     '"0 ohm" is not above 0'),
+    ("built shunt a bare number", 'rated = "100 A/75 mV"', "built = 0.00075", "29:48",
+     "scale[2].circuit.built", "a resistance needs its unit, 0.00075 has none"),
+    # circuits: current transformers and multipliers
+    ("ratio a number", 'ratio = "200/5"', "ratio = 40", "35:43", "scale[3].circuit.ratio",
+     'write primary over secondary amperes, for example "200/5"'),
+    ("ratio with a colon", 'ratio = "200/5"', 'ratio = "200:5"', "35:43", "scale[3].circuit.ratio",
+     "\"200:5\" is not a transformer's ratio"),
+    ("ratio with nothing behind it", 'ratio = "200/5"', 'ratio = "200/0"', "35:43", "scale[3].circuit.ratio",
+     "\"200/0\" is not a transformer's ratio"),
+    ("ratio of less than nothing", 'ratio = "200/5"', 'ratio = "-200/5"', "35:43", "scale[3].circuit.ratio",
+     "\"-200/5\" is not a transformer's ratio"),
+    ("ratio left out", ', ratio = "200/5"', "", "35:1", "scale[3].circuit.ratio", "missing; add ratio = "),
+    ("transformer with a rating", 'ratio = "200/5"', 'ratio = "200/5", rated = "5 A/60 mV"', "35:60",
+     "scale[3].circuit.rated", 'it goes with kind = "shunt"'),
+    ("secondary below the movement", 'ratio = "200/5"', 'ratio = "200/5", range = "20 mA"', "35:60",
+     "scale[3].circuit.range",
+     "at 20 mA the secondary gives 500 µA, below the movement's own current; take a range of 40 mA"),
+    ("line of less than nothing", 'line = "2 ohm"', 'line = "-2 ohm"', "42:34", "scale[4].circuit.line",
+     '"-2 ohm" is below 0'),
+    ("suppressed by a current", 'line = "2 ohm"', 'suppress = "5 mA"', "42:34", "scale[4].circuit.suppress",
+     '"5 mA" is not in V'),
+    ("chain of one range", 'line = "2 ohm"', "chain = true", "42:34", "scale[4].circuit.chain",
+     "a chain has several ranges; give ranges = ["),
+    ("chain in quotes", 'line = "2 ohm"', 'ranges = ["40 mV", "1 V"], chain = "yes"', "42:61",
+     "scale[4].circuit.chain", 'this is true or false, not "yes"'),
+    ("resistors too few", 'line = "2 ohm"', 'ranges = ["40 mV", "1 V"], range = "40 mV", built = "10 ohm"',
+     "42:78", "scale[4].circuit.built", "for 2 ranges; give one for each range, the smallest range first"),
+    ("leads of a multiplier", 'line = "2 ohm"', 'leads = "2 ohm"', "42:34", "scale[4].circuit.leads",
+     'it goes with kind = "shunt"'),
+    # circuits: rectifiers
+    ("connection of another name", 'rectifier = "half bridge", diode = "ideal", legs = "2 kohm"',
+     'rectifier = "full wave"', "48:33", "scale[5].circuit.rectifier",
+     '"full wave" is not known here; write "bridge" or "half bridge" or "half wave"'),
+    ("half bridge without legs", ', legs = "2 kohm"', "", "48:1", "scale[5].circuit.legs",
+     'a half bridge has two equal resistors in place of two diodes; add legs = "2 kohm"'),
+    ("legs of nothing", ', legs = "2 kohm"', ', legs = "0 ohm"', "48:77", "scale[5].circuit.legs",
+     '"0 ohm" is not above 0'),
+    ("legs one by one", ', legs = "2 kohm"', ', legs = ["2 kohm", "2 kohm"]', "48:77",
+     "scale[5].circuit.legs", "a resistance is text with its unit, not ["),
+    ("legs of a bridge", 'rectifier = "half bridge"', 'rectifier = "bridge"', "48:72",
+     "scale[5].circuit.legs", 'a bridge has no legs; leave them out, or write rectifier = "half bridge"'),
+    ("diode a number", 'diode = "ideal"', "diode = 0.7", "48:60", "scale[5].circuit.diode",
+     "a diode is a name or a table, not 0.7; write for example diode = { saturation"),
+    ("diode a voltage", 'diode = "ideal"', 'diode = "0.7 V"', "48:60", "scale[5].circuit.diode",
+     'or { drop = "0.7 V" }, or one of "silicon", "germanium", "schottky", "copper oxide", "ideal"'),
+    ("diode without ideality", 'diode = "ideal"', 'diode = { saturation = "2.5 nA" }', "48:60",
+     "scale[5].circuit.diode", "this diode has no ideality; "),
+    ("diode with a key misspelt", 'diode = "ideal"',
+     'diode = { saturation = "2.5 nA", ideality = 1.75, resistence = "1 ohm" }', "48:60",
+     "scale[5].circuit.diode", "resistence is not a key of such a diode; "),
+    ("diode of two sorts", 'diode = "ideal"', 'diode = { drop = "0.7 V", ideality = 1.75 }', "48:60",
+     "scale[5].circuit.diode", "ideality is not a key of such a diode; "),
+    ("diode that drops a bare number", 'diode = "ideal"', "diode = { drop = 0.7 }", "48:60",
+     "scale[5].circuit.diode", "a voltage needs its unit, 0.7 has none"),
+    ("diode of no saturation", 'diode = "ideal"', 'diode = { saturation = "0 A", ideality = 1.75 }', "48:60",
+     "scale[5].circuit.diode", '"0 A" is not above 0'),
+    ("diode of ideality in per cent", 'diode = "ideal"', 'diode = { saturation = "2.5 nA", ideality = 175 }',
+     "48:60", "scale[5].circuit.diode", "ideality of 175 is out of bounds; a junction has 1 to 2"),
+    ("range eaten by the diodes", 'rectifier = "half bridge", diode = "ideal", legs = "2 kohm"',
+     'range = "1 V", diode = { drop = "0.7 V" }', "48:33", "scale[5].circuit.range",
+     "even without a multiplier, diodes and coil take so much; take a range of "),
+    ("coil shunt of nothing", ', legs = "2 kohm"', ', legs = "2 kohm", coil_shunt = "0 ohm"', "48:94",
+     "scale[5].circuit.coil_shunt", '"0 ohm" is not above 0'),
+    ("coil shunt in amperes", ', legs = "2 kohm"', ', legs = "2 kohm", coil_shunt = "1 mA"', "48:94",
+     "scale[5].circuit.coil_shunt", '"1 mA" is not in Ω'),
+    ("alternating volts below nothing", "from = 0\nto = 10\n", "from = -10\nto = 10\n", "46:1",
+     "scale[5].from", "-10 V is "),
+    ("swamping of a rectifier", ', legs = "2 kohm"', ', legs = "2 kohm", swamp = "5 ohm"', "48:94",
+     "scale[5].circuit.swamp", "not a key here; it goes with kind = "),
+    # circuits: ohmmeters and bridges
+    ("half left out", 'half = "500 ohm", ', "", "54:1", "scale[6].circuit.half", "missing; add half = "),
+    ("half of nothing", 'half = "500 ohm"', 'half = "0 ohm"', "54:39", "scale[6].circuit.half",
+     '"0 ohm" is not above 0'),
+    ("half a bare number", 'half = "500 ohm"', "half = 500", "54:39", "scale[6].circuit.half",
+     'write for example "500 ohm"'),
+    ("half beyond the battery", 'half = "500 ohm"', 'half = "2 kohm"', "54:39", "scale[6].circuit.half",
+     "1.5 V drives full deflection through at most 1.5 kΩ, not 4 kΩ; take a smaller half"),
+    ("battery in amperes", 'battery = "1.5 V"', 'battery = "1.5 A"', "54:57", "scale[6].circuit.battery",
+     '"1.5 A" is not in V'),
+    ("battery the wrong way round", 'battery = "1.5 V"', 'battery = "-1.5 V"', "54:57",
+     "scale[6].circuit.battery", '"-1.5 V" is not above 0'),
+    ("worn above new", "times = [1, 2]", 'worn = "1.6 V"', "54:76", "scale[6].circuit.worn",
+     "a worn cell of 1.6 V is not below the new one's 1.5 V; "),
+    ("worn beyond the adjuster", "times = [1, 2]", 'worn = "0.5 V"', "54:76", "scale[6].circuit.worn",
+     "at 500 mV the zero can no longer be set; change the cell at "),
+    ("worn without a battery", 'half = "500 ohm", battery = "1.5 V", times = [1, 2]',
+     'half = "500 ohm", worn = "1.2 V"', "54:57", "scale[6].circuit.worn",
+     'worn says how far the battery falls; add battery = "1.5 V"'),
+    ("zero by its ohms", "times = [1, 2]", 'zero = "5 kohm"', "54:76", "scale[6].circuit.zero",
+     '"5 kohm" is not known here; write "across" or "series"'),
+    ("times nothing", "times = [1, 2]", "times = 0", "54:76", "scale[6].circuit.times",
+     "a range of 0 times the scale is out of bounds; "),
+    ("times in quotes", "times = [1, 2]", 'times = ["x1", "x10"]', "54:76", "scale[6].circuit.times",
+     'times is a number, not "x1"'),
+    ("times one twice", "times = [1, 2]", "times = [1, 1]", "54:76", "scale[6].circuit.times",
+     "has a range twice; list each once"),
+    ("times of no end", "times = [1, 2]", "times = [1, inf]", "54:76", "scale[6].circuit.times",
+     "times must be finite, not inf"),
+    ("times beyond the battery", "times = [1, 2]", "times = [1, 10]", "54:76", "scale[6].circuit.times",
+     "not the 5 kΩ of ×10; leave that range out or take a battery of 5 V or more"),
+    ("built ohmmeter", "times = [1, 2]", 'built = "500 ohm"', "54:76", "scale[6].circuit.built",
+     "not a key here; it goes with kind = "),
+    ("arms of two", 'arms = ["100 ohm", "100 ohm", "100 ohm"]', 'arms = ["100 ohm", "100 ohm"]', "61:49",
+     "scale[7].circuit.arms", "the arms are a list of three, not ["),
+    ("bridge without a supply", 'supply = "600 mV", ', "", "61:1", "scale[7].circuit.supply",
+     "missing; add supply = "),
+    ("bridge on nothing", 'supply = "600 mV"', 'supply = "0 V"', "61:30", "scale[7].circuit.supply",
+     'a bridge on 0 V does not move whatever the sensor does; write supply = "1.5 V"'),
+    ("bridge with a range", 'arms = ["100 ohm", "100 ohm", "100 ohm"]',
+     'arms = ["100 ohm", "100 ohm", "100 ohm"], range = "1 V"', "61:91", "scale[7].circuit.range",
+     "not a key here; it goes with kind = "),
+    # laws of sensors
+    ("couple left out", 'type = "K", reference = "20 degC"', 'reference = "20 degC"', "41:1",
+     "scale[4].law.type", "missing; add type = "),
+    ("couple of no such letter", 'type = "K", reference = "20 degC"', 'type = "Z"', "41:32",
+     "scale[4].law.type", '"Z" is not known here; write "B" or "E"'),
+    ("couple of a small letter", 'type = "K", reference = "20 degC"', 'type = "k"', "41:32",
+     "scale[4].law.type", '"k" is not known here'),
+    ("couple with a key cut short", 'type = "K", reference = "20 degC"', 'type = "K", ref = "20 degC"',
+     "41:44", "scale[4].law.ref", "did you mean reference?"),
+    ("reference a bare number", 'type = "K", reference = "20 degC"', 'type = "K", reference = 20', "41:44",
+     "scale[4].law.reference", 'a temperature needs its unit, 20 has none; write for example "20 degC"'),
+    ("reference in coulombs", 'type = "K", reference = "20 degC"', 'type = "K", reference = "20 C"', "41:44",
+     "scale[4].law.reference", 'did you mean "20 degC"?'),
+    ("reference in volts", 'type = "K", reference = "20 degC"', 'type = "K", reference = "20 V"', "41:44",
+     "scale[4].law.reference", '"20 V" is not in °C, °F or K'),
+    ("reference beyond the couple", 'type = "K", reference = "20 degC"',
+     'type = "K", reference = "2000 degC"', "41:44", "scale[4].law.reference",
+     "a reference junction at 2000 °C is outside type K, -270 to 1372 °C; "),
+    ("reference below absolute zero", 'type = "K", reference = "20 degC"',
+     'type = "K", reference = "-300 degC"', "41:44", "scale[4].law.reference", "is not above absolute zero"),
+    ("couple beyond its range", "to = 1000", "to = 1400", "40:1", "scale[4].to",
+     "a type K thermocouple shows -270 to 1372 °C, and the scale ends at 1400; "),
+    ("couple whose voltage turns", 'type = "K", reference = "20 degC"', 'type = "B"', "39:1",
+     "scale[4].from", "whose EMF turns near 21 °C, shows 50 to 1820 °C, and the scale begins at 0; "),
+    ("temperatures in farads", 'unit = "degC"\nfrom = 0\nto = 1000', 'unit = "F"\nfrom = 0\nto = 1000',
+     "38:1", "scale[4].unit", 'not in "F"; write unit = "degF"'),
+    ("temperatures in coulombs", 'unit = "degC"\nfrom = 0\nto = 1000', 'unit = "C"\nfrom = 0\nto = 1000',
+     "38:1", "scale[4].unit", 'not in "C"; write unit = "degC"'),
+    ("temperatures of no unit", 'unit = "degC"\nfrom = 0\nto = 1000', 'unit = ""\nfrom = 0\nto = 1000',
+     "38:1", "scale[4].unit", 'not without a unit; write unit = "degC"'),
+    ("Pt100 of another resistance", '"pt100"', '"pt1000"', "60:1", "scale[7].law.kind",
+     '"pt1000" is not a kind of law; did you mean "pt100"?'),
+    ("Pt100 under a multiplier",
+     'kind = "bridge", supply = "600 mV", arms = ["100 ohm", "100 ohm", "100 ohm"]', 'kind = "multiplier"',
+     "60:1", "scale[7].law",
+     "the multiplier takes a voltage in V, but the scale's signal is a resistance in Ω; change"),
+    ("Pt100 too cold", 'from = 0\nto = 100\nlaw = "pt100"', 'from = -250\nto = 100\nlaw = "pt100"', "58:1",
+     "scale[7].from", "a Pt100 shows -200 to 850 °C, and the scale begins at -250; "),
+    ("thermistor without beta", 'r25 = "10 kohm", beta = 3950', 'r25 = "10 kohm"', "67:30",
+     "scale[8].law.r25", "no law follows from r25 without beta; add beta = 3950"),
+    ("thermistor of nothing", ', r25 = "10 kohm", beta = 3950', "", "67:1", "scale[8].law",
+     "give r25 and beta, or a, b and c, or three points"),
+    ("thermistor of two laws", 'r25 = "10 kohm", beta = 3950',
+     'r25 = "10 kohm", beta = 3950, a = 1e-3, b = 2e-4, c = 8e-8', "67:60", "scale[8].law.a",
+     "r25, beta, a, b and c are figures of 2 laws; keep r25 and beta, or a, b and c"),
+    ("beta with its unit", 'r25 = "10 kohm", beta = 3950', 'r25 = "10 kohm", beta = "3950 K"', "67:47",
+     "scale[8].law.beta", 'beta in kelvin is a number, not "3950 K"'),
+    ("beta of less than nothing", 'r25 = "10 kohm", beta = 3950', 'r25 = "10 kohm", beta = -3950', "67:47",
+     "scale[8].law.beta", "beta in kelvin of -3950 is out of bounds"),
+    ("coefficients without the third", 'r25 = "10 kohm", beta = 3950', "a = 1.129e-3, b = 2.341e-4", "67:30",
+     "scale[8].law.a", "no law follows from a and b without c; add c = "),
+    ("coefficients that rise", 'r25 = "10 kohm", beta = 3950', "a = 1.129e-3, b = -2.341e-4, c = 8.767e-8",
+     "67:30", "scale[8].law.a", "check signs and powers of ten"),
+    ("thermistor through two points", 'r25 = "10 kohm", beta = 3950',
+     'points = [["0 degC", "32.65 kohm"], ["25 degC", "10 kohm"]]', "67:30", "scale[8].law.points",
+     "a thermistor's law goes through three points, not 2; give three"),
+    ("thermistor that rises", 'r25 = "10 kohm", beta = 3950',
+     'points = [["0 degC", "3 kohm"], ["25 degC", "10 kohm"], ["50 degC", "36 kohm"]]', "67:30",
+     "scale[8].law.points", "the resistance does not fall from point to point as it warms; "),
+    ("thermistor through bare degrees", 'r25 = "10 kohm", beta = 3950',
+     'points = [[0, "32.65 kohm"], ["25 degC", "10 kohm"], ["50 degC", "3.6 kohm"]]', "67:40",
+     "scale[8].law.points[1]", "a temperature needs its unit, 0 has none"),
+    ("buffer at a bare temperature", 'temperature = "25 degC"', "temperature = 25", "74:26",
+     "scale[9].law.temperature", "a temperature needs its unit, 25 has none"),
+    ("buffer below absolute zero", 'temperature = "25 degC"', 'temperature = "-300 degC"', "74:26",
+     "scale[9].law.temperature", "is not above absolute zero"),
+    ("isopotential in quotes", 'temperature = "25 degC"', 'temperature = "25 degC", isopotential = "7"',
+     "74:51", "scale[9].law.isopotential", 'isopotential is a number, not "7"'),
+    ("slope of its own", 'temperature = "25 degC"', 'temperature = "25 degC", slope = 59', "74:51",
+     "scale[9].law.slope", "not a key here; the keys are temperature, isopotential"),
+    ("acid and alkali on one side", 'circuit = { kind = "direct", rest = 0 }', 'circuit = "direct"', "72:1",
+     "scale[9].from", "0 pH would stand at -132 degrees, beyond the stops"),
+    # the drawer
+    ("drawer twice", "[parts]", "[[parts]]", "13:3", "parts", "this is a table of keys, not [a table]"),
+    ("drawer by another name", "[parts]", "[part]", "13:2", "part", "did you mean parts?"),
+    ("stock not in a list", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stock = "10 ohm x5"', "14:1",
+     "parts.stock", 'write for example ["3.3 ohm x12", "10 ohm x5"]'),
+    ("stock of bare ohms", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stock = ["3.3 ohm x12", "10"]', "14:25",
+     "parts.stock[2]", '"10" has no unit'),
+    ("stock of a number", 'stock = ["3.3 ohm x12", "10 ohm x5"]', "stock = [10]", "14:10", "parts.stock[1]",
+     "a resistance needs its unit, 10 has none"),
+    ("stock of no pieces", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stock = ["10 ohm x0"]', "14:10",
+     "parts.stock[1]",
+     'has no count of pieces from 1 to 999999 after its x; write for example "3.3 ohm x12"'),
+    ("stock with the count first", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stock = ["5x 10 ohm"]', "14:10",
+     "parts.stock[1]", '"5x 10 ohm" has no count of pieces'),
+    ("stock with a comma", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stock = ["3,3 ohm x12"]', "14:10",
+     "parts.stock[1]", 'the decimal sign is a point: write "3.3 ohm"'),
+    ("stock of nothing", 'stock = ["3.3 ohm x12", "10 ohm x5"]', "stock = []", "14:1", "parts.stock",
+     "this is a list of 1 to 200 entries, not []"),
+    ("stock misspelt", 'stock = ["3.3 ohm x12", "10 ohm x5"]', 'stok = ["3.3 ohm x12", "10 ohm x5"]', "14:1",
+     "parts.stok", "did you mean stock?"),
+    ("wire without a size", 'wire = ["manganin 0.5 mm"]', 'wire = ["manganin"]', "15:9", "parts.wire[1]",
+     '"manganin" has no size with its unit; write for example "manganin 0.5 mm"'),
+    ("wire of a size alone", 'wire = ["manganin 0.5 mm"]', 'wire = ["0.5 mm"]', "15:9", "parts.wire[1]",
+     '"0.5 mm" names no metal; write one of manganin'),
+    ("wire of brass", 'wire = ["manganin 0.5 mm"]', 'wire = ["brass 0.5 mm"]', "15:9", "parts.wire[1]",
+     "the metals are manganin, constantan, nichrome or copper"),
+    ("wire of a metal misspelt", 'wire = ["manganin 0.5 mm"]', 'wire = ["nichrom 0.5 mm"]', "15:9",
+     "parts.wire[1]", "did you mean nichrome?"),
+    ("wire of no such gauge", 'wire = ["manganin 0.5 mm"]', 'wire = ["manganin AWG 99"]', "15:9",
+     "parts.wire[1]", 'AWG has no gauge 99; write "AWG 24", from 4/0 to 50'),
+    ("wire with a comma", 'wire = ["manganin 0.5 mm"]', 'wire = ["manganin 0,5 mm"]', "15:9",
+     "parts.wire[1]", "has a comma in a number; the decimal sign is a point"),
+    ("series of no such name", 'series = "E24"', 'series = "E25"', "16:1", "parts.series",
+     '"E25" is not known here; write "E6" or "E12" or "E24"'),
+    ("series by its number", 'series = "E24"', "series = 24", "16:1", "parts.series", "24 is not known here"),
+    ("tolerance with its sign", "tolerance = 1", 'tolerance = "5 %"', "17:1", "parts.tolerance",
+     'a tolerance is a number, not "5 %"'),
+    ("tolerance of nothing", "tolerance = 1", "tolerance = 0", "17:1", "parts.tolerance",
+     "a tolerance of 0 is out of bounds"),
+    ("margin below one", "tolerance = 1", "margin = 0.5", "17:1", "parts.margin",
+     "a margin of 0.5 is out of bounds; write a number from 1 to 100"),
+    ("overload in per cent", "tolerance = 1", "overload = 120", "17:1", "parts.overload",
+     "an overload of 120 is out of bounds"),
+    ("drift with its unit", "drift = 0.05", 'drift = "0.05 %/K"', "18:1", "parts.drift",
+     'a drift is a number, not "0.05 %/K"'),
+    ("drift of nothing", "drift = 0.05", "drift = 0", "18:1", "parts.drift", "a drift of 0 is out of bounds"),
+    ("voltage a bare number", 'voltage = "250 V"', "voltage = 250", "19:1", "parts.voltage",
+     'write for example "250 V"'),
+    ("rating of the drawer", 'voltage = "250 V"', 'rating = "0.25 W"', "19:1", "parts.rating",
+     "not a key here; the keys are stock, wire"),
+)  # fmt: skip
+
+CIRCUIT = [Bad(*row[:6], text=WIRED, more=sum(row[6:])) for row in _CIRCUIT]
+SENSE += CIRCUIT

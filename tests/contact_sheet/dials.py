@@ -48,6 +48,8 @@ def look(name: str, *keys: str) -> str:
 ROUND = "diameter = 90\npivot = [45, 45]"
 INWARD = 'marks = "inward"\nnumerals = "inside"'
 COIL = 'current = "1 mA"\nresistance = "75 ohm"'
+SCHOTTKY = '{ saturation = "200 nA", ideality = 1.05, resistance = "5 ohm" }'
+SILICON = '{ saturation = "2.5 nA", ideality = 1.75, resistance = "0.6 ohm" }'
 
 RANGES = [
     ("A", 0, 1),
@@ -273,6 +275,83 @@ DIALS = [
                 "", 0, 4, 44.0, 'numbered = [{ at = 0, label = "OFF" }, 1, 2, 3, { at = 4, label = "MAX" }]'
             )
         ],
+    ),
+    dial(
+        "AC volts to 3",
+        movement=COIL,
+        scales=[scale("V", 0, 3, 44.0, f'circuit = {{ kind = "rectifier", diode = {SCHOTTKY} }}')],
+        rest_of_file='[symbols]\nshow = ["auto"]',
+    ),
+    dial(
+        "AC volts to 10, graver",
+        movement=COIL,
+        scales=[scale("V", 0, 10, 44.0, f'circuit = {{ kind = "rectifier", diode = {SILICON} }}')],
+        rest_of_file='[symbols]\nshow = ["auto"]\n' + look("graver"),
+    ),
+    dial(
+        "type K, hall",
+        scales=[scale("degC", 0, 1200, 60.0, 'law = { kind = "thermocouple", type = "K" }')],
+        plate="size = [116, 86]\npivot = [58, 13]",
+        rest_of_file=look("hall"),
+    ),
+    dial(
+        "type J in Fahrenheit, bench",
+        scales=[
+            scale(
+                "degF",
+                32,
+                1400,
+                60.0,
+                'law = { kind = "thermocouple", type = "J" }',
+                "divisions = { every = 20 }",
+            )
+        ],
+        plate="size = [116, 86]\npivot = [58, 13]",
+        rest_of_file=look("bench"),
+    ),
+    dial(
+        "Pt100 in a bridge",
+        movement='current = "100 uA"\nresistance = "239 ohm"',
+        circuit='kind = "bridge"\nsupply = "2.5 V"\narms = ["2.7 kohm", "2.7 kohm", "100 ohm"]',
+        scales=[scale("degC", 0, 150, 44.0, 'law = "pt100"')],
+    ),
+    dial(
+        "thermistor in a bridge, parchment",
+        movement='current = "50 uA"\nresistance = "2.7 kohm"',
+        circuit='kind = "bridge"\nsupply = "-1.1 V"\narms = ["10 kohm", "10 kohm", "32.65 kohm"]',
+        scales=[scale("degC", 0, 60, 44.0, 'law = { kind = "thermistor", r25 = "10 kohm", beta = 3892 }')],
+        rest_of_file=look("parchment"),
+    ),
+    dial(
+        "pH, 7 in the middle",
+        rest=0,
+        full=45,
+        scales=[scale("pH", 0, 14, 44.0, 'law = "nernst"', 'circuit = { kind = "direct", full = 14 }')],
+    ),
+    dial(
+        "ohms of three ranges, bench",
+        movement='current = "50 uA"\nresistance = "1.8 kohm"',
+        circuit='kind = "series ohmmeter"\nhalf = "200 ohm"\nbattery = "1.5 V"\ntimes = [1, 10, 100]',
+        scales=[scale("ohm", 0, "inf", 60.0)],
+        plate="size = [120, 86]\npivot = [60, 13]",
+        rest_of_file=look("bench") + '\n[[text]]\nsay = "×1  ×10  ×100"\nheight = 2.4',
+    ),
+    dial(
+        "signal strength, night",
+        scales=[
+            scale(
+                "dB",
+                -54,
+                60,
+                44.0,
+                'law = { kind = "table", points = [[-54, 0], [-24, 0.28], [0, 0.5], [20, 0.68], [60, 1]] }',
+                'numbered = [{ at = -48, label = "S1" }, { at = -24, label = "5" }, { at = 0, label = "9" }, '
+                '{ at = 20, label = "+20" }, { at = 40, label = "+40" }, { at = 60, label = "+60" }]',
+                "divisions = [{ to = 0, every = 6 }, { to = 60, every = 10 }]",
+                "heavy = [0, 60]",
+            )
+        ],
+        rest_of_file=look("night"),
     ),
     dial(
         "comma, thousands",

@@ -17,9 +17,6 @@ from dialgen.circuit.transformer import CurrentTransformer
 from dialgen.errors import InputError
 from dialgen.parts.caution.situation import TOUCH_DC_V, Situation
 
-USUAL_RATINGS_V = {0.25: 250.0, 0.5: 350.0}
-"""The voltage that small film resistors stand, by their watts.  Common practice, from memory."""
-
 _MAINS_V = 100.0
 _HEAVY_A, _WIRED_A = 10.0, 0.1
 _BEHIND_RESISTORS = (Multiplier.kind, Rectifier.kind)
@@ -132,7 +129,7 @@ CAUTIONS: tuple[Caution, ...] = (
         applies=lambda s: (
             s.kind in _BEHIND_RESISTORS
             and not s.beyond_help
-            and split_count(s.resistor_peak_v, min(USUAL_RATINGS_V.values())) > 1
+            and split_count(s.resistor_peak_v, s.resistor_rating_v) > 1
         ),
     ),
     Caution(
@@ -179,10 +176,10 @@ CAUTIONS: tuple[Caution, ...] = (
     ),
     Caution(
         id="moving coil on AC",
-        text="A moving coil shows nothing on AC, and its coil can burn while the pointer stays at rest. Behind "
-        "a current transformer take a moving iron, or a rectifier made for it.",
+        text="A moving coil shows nothing on AC, and its coil can burn while the pointer stays at rest. "
+        "Behind a current transformer take a moving iron, or a rectifier made for it.",
         source=_PRACTICE,
-        applies=lambda s: s.kind == "current transformer" and s.movement == "moving coil",
+        applies=lambda s: s.kind == CurrentTransformer.kind and s.movement == "moving coil",
     ),
     Caution(
         id="moving iron with shunt",

@@ -9,6 +9,7 @@ from dialgen.circuit.design import COIL, Case, Design, Ohms
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.names import SHUNT, SUPPRESS
 from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.parts.ratings import USUAL_RATINGS_V
 
 MOST_HELPED_V = 1000.0
 """Above this the program prints no design help."""
@@ -30,6 +31,7 @@ class Situation:
         alternating: whether it takes alternating current; None where it may take either.
         movement: the movement's kind: moving coil, moving iron, or any other.
         resistor_peak_v: the highest peak voltage over one resistor.
+        resistor_rating_v: what one resistor stands.
         shunt_a: the largest current through a shunt, beside the coil.
         battery: whether it has a cell of its own.
         suppressed: whether its zero is suppressed by a voltage.
@@ -42,6 +44,7 @@ class Situation:
     alternating: bool | None = None
     movement: str = "moving coil"
     resistor_peak_v: float = 0.0
+    resistor_rating_v: float = min(USUAL_RATINGS_V.values())
     shunt_a: float = 0.0
     battery: bool = False
     suppressed: bool = False
@@ -62,6 +65,11 @@ class Situation:
         return self.alternating is not True
 
     @property
+    def peak_factor(self) -> float:
+        """The peak over the RMS, of a sine where alternating current cannot be ruled out."""
+        return math.sqrt(2) if self.may_be_ac else 1.0
+
+    @property
     def beyond_help(self) -> bool:
         """Whether it is above 1 kV, so that no design help is to be printed."""
         return self.volts > MOST_HELPED_V
@@ -77,7 +85,9 @@ class Situation:
         return self.dangerous and not self.beyond_help
 
 
-def situation_of(design: Design, movement: str) -> Situation:
+def situation_of(
+    design: Design, movement: str, resistor_rating_v: float = min(USUAL_RATINGS_V.values())
+) -> Situation:
     """Return what the cautions need to know of a design, as built, at the end of each of its ranges."""
     alternating = _alternating(design, movement)
     signals = [abs(case.signal) for case in design.cases] or [abs(design.range or 0.0)]
@@ -89,6 +99,7 @@ def situation_of(design: Design, movement: str) -> Situation:
         alternating=alternating,
         movement=movement,
         resistor_peak_v=_resistor_peak_v(design, alternating),
+        resistor_rating_v=resistor_rating_v,
         shunt_a=_largest_shunt_a(design),
         battery=design.kind in _OHMMETERS,
         suppressed=any(fact.name == SUPPRESS for fact in design.facts),

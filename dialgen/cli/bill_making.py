@@ -1,0 +1,141 @@
+"""What a bill tells of making its parts: as built, split, swamped, from the drawer and from wire."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterator, Sequence
+
+from dialgen.circuit.design import Design
+from dialgen.circuit.names import SHUNT
+from dialgen.cli.columns import columns, figure, percent, wrapped
+from dialgen.parts.bill import Bill
+from dialgen.parts.drift import NoSwamping, Swamping
+from dialgen.parts.stock.search import Candidate, Search
+from dialgen.parts.wire.workshop import advice, objections, summary
+from dialgen.quantity import engineered, plain_number
+
+_SHOWN_CANDIDATES = 5
+_FAR = 0.2
+"""A network farther off than this share is of no use, nor are the next ones."""
+
+
+def _trims(bill: Bill) -> Iterator[str]:
+    for trim in bill.trims:
+        off, reads = percent(trim.off_percent), percent(trim.reading_percent)
+        yield from wrapped(
+            f"{trim.part} as built: {off} off, which alone reads {reads} at full scale. The marks follow it. "
+            f"To keep a face drawn for the exact value: {trim.advice}."
+        )
+
+
+def _splits(bill: Bill) -> Iterator[str]:
+    for split in bill.splits:
+        yield from wrapped(
+            f"{split.part}: make it of {split.count} times {engineered(split.ohms, 'Ω')} in series, so that "
+            f"each has at most {engineered(split.voltage_v, 'V', 3)} at the peak."
+        )
+
+
+def _swamping(bill: Bill) -> Iterator[str]:
+    match bill.swamping:
+        case Swamping() as found:
+            yield from wrapped(f"Swamping: {_swamped(bill.design, found)}.")
+        case NoSwamping() as found:
+            mend = (
+                f"; a range {figure(found.range_factor)} times as large would have the wanted drift"
+                if found.range_factor
+                else ""
+            )
+            yield from wrapped(
+                "Swamping does not help: range and movement fix the whole resistance, of which "
+                f"{figure(100 * found.copper_share)} % is copper{mend}."
+            )
+
+
+def _swamped(design: Design, found: Swamping) -> str:
+    before, after = percent(found.before_percent_per_k), percent(found.percent_per_k)
+    if found.swamp_ohm == 0:
+        return f"not needed, the drift is {before} per kelvin as it is"
+    ohms, drop = engineered(found.swamp_ohm, "ohm", 4), engineered(found.drop_v, "V", 4)
+    if any(part.given for part in design.parts if part.name == SHUNT):
+        return (
+            f"the bought shunt leaves {before} per kelvin; {after} takes one that drops {drop} at full "
+            f'scale, with swamp = "{ohms}"'
+        )
+    return (
+        f'swamp = "{ohms}" brings the drift from {before} to {after} per kelvin, and the drop from '
+        f"{engineered(found.before_drop_v, 'V', 4)} to {drop}"
+    )
+
+
+def _searches(bill: Bill) -> Iterator[str]:
+    for name, found in bill.searches:
+        yield from _search(name, found)
+
+
+def _search(name: str, found: Search) -> Iterator[str]:
+    count = f"{found.searched:,}".replace(",", " ")
+    yield f"{name} from the drawer: {count} networks of up to {found.most_parts} parts searched"
+    best = found.candidates[: 1 if abs(found.candidates[0].error) > _FAR else _SHOWN_CANDIDATES]
+    near = len(best) > 1
+    rows: list[tuple[str, ...]] = [("  network", "value", "error", "parts", "worst part")]
+    for head, listed in (
+        ("", best),
+        ("  with fewer parts", [each for each in found.simpler if each not in best and near]),
+        ("  the best value, with less heat in one part", found.cooler if near else ()),
+    ):
+        if head and listed:
+            rows.append((head, "", "", "", ""))
+        rows += [_candidate(each) for each in listed]
+    yield from columns(rows)
+    if not near:
+        yield "  Nothing in the drawer comes near."
+
+
+def _candidate(found: Candidate) -> tuple[str, ...]:
+    return (
+        f"  {found.drawing}",
+        engineered(found.ohms, "Ω", 6),
+        percent(100 * found.error),
+        str(found.parts),
+        f"{figure(100 * found.share)} % of the power",
+    )
+
+
+def _windings(bill: Bill) -> Iterator[str]:
+    for name, winding in bill.windings:
+        yield from wrapped(f"{name} made at home: {summary(winding)}.", rest="")
+        for text in (*objections(winding), *advice(winding)):
+            yield from wrapped(text, "- ")
+
+
+def old_face_lines(unit: str, whole: float, rows: Sequence[tuple[float, float]]) -> Iterator[str]:
+    """Yield what a face drawn for the designed circuit shows at its numbered marks, as it was built.
+
+    Args:
+        unit: the scale's unit as it is printed.
+        whole: what errors are shares of, the larger of the scale's ends; infinite for none.
+        rows: applied and indicated values.
+    """
+    yield "On a face drawn for the exact values, as built:"
+    share = "of full scale" if math.isfinite(whole) else ""
+    heads = (f"applied {unit}".rstrip(), "indicated", "error", share)
+    yield from columns(
+        [
+            heads,
+            *(
+                (
+                    plain_number(value),
+                    plain_number(float(f"{shown:.5g}")),
+                    plain_number(float(f"{shown - value:.3g}")),
+                    percent(100 * (shown - value) / whole) if share else "",
+                )
+                for value, shown in rows
+            ),
+        ],
+        left=0,
+    )
+
+
+MAKING = (_trims, _splits, _swamping, _searches, _windings)
+"""The sections, in order."""

@@ -73,7 +73,7 @@ def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
     maker = _Maker(file.movement, stops, file.circuit, coil, file.scale[0], wirings.get(0))
     if 0 not in wirings and any(r.value is not None for r in file.movement.all_readings()):
         # Readings by value go through the first scale; without it the others are not made either.
-        return Dial(file, (), stops, ()), errors
+        return Dial(file, (), stops, ()), _each_once(errors)
     scales: list[ScaleDial] = []
     remarks: list[Remark] = []
     for i, wiring in wirings.items():
@@ -84,7 +84,19 @@ def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
         else:
             scales.append(made)
             remarks += more
-    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks))), errors
+    return Dial(file, tuple(scales), stops, tuple(dict.fromkeys(remarks))), _each_once(errors)
+
+
+def _each_once(errors: list[InputError]) -> list[InputError]:
+    """Return the errors without those that ask for a key of the movement that another has asked for."""
+    asked: set[tuple[Key, ...]] = set()
+    found = []
+    for error in errors:
+        of_movement = bool(error.keys) and error.keys[0][:1] == ("movement",)
+        if not (of_movement and error.keys in asked):
+            found.append(error)
+        asked.add(error.keys)
+    return found
 
 
 def _wiring(scale: Scale, index: int, shared: Circuit | None, coil: Coil) -> Wiring | None:

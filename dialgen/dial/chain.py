@@ -111,12 +111,14 @@ class Chain:
 
     @quietly
     def _forward(self, value: Array, count: int) -> Array:
-        step, size = value, 0.0
+        step: Array = value
+        size: float | Array | None = None
         for link in self.links[:count]:
             low, high = link.stage.domain
             if link.stage.domain is not EVERYWHERE and not _within(step, (low, high)):
-                # A hair beyond the domain is the rounding of the links before, as a drive of -1e-17.
-                hair = _GRAIN * size
+                # A hair beyond the domain is the rounding of the links before, as a drive of -1e-17; of
+                # a value itself, that of the way back to it from its angle.
+                hair = _GRAIN * (_finite_size(step) if size is None else size)
                 outside = ~((step >= low - hair) & (step <= high + hair))
                 if outside.any():
                     raise self._refusal(value, outside)
@@ -157,6 +159,10 @@ class Chain:
 
     def _named(self, value: float) -> str:
         return f"{value:.6g} {self.unit}".rstrip()
+
+
+def _finite_size(step: Array) -> Array:
+    return np.where(np.isfinite(step), np.abs(step), 0.0)
 
 
 def _within(step: Array, span: Span) -> bool:

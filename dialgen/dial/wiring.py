@@ -137,7 +137,7 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         circuit_key=circuit_key,
         remarks=(
             *_circuit_remarks(circuit, terminals, circuit_key or key),
-            *_own_current(circuit, terminals, _under(circuit_key, key, "full")),
+            *_own_current(circuit, terminals, _under(circuit_key, key, ("full",))),
             *past_points(law, scale, key),
         ),
     )
@@ -204,6 +204,8 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key) -> None
     names: dict[str, str] = {"A": "a current in A", "V": "a voltage in V", "Ω": "a resistance in Ω"}
     what = names.get(unit, f"in {unit}") if unit else "a pure number"
     letter = _UNIT_WORDS.get(unit.lower()) if plain else None
+    if letter and split_unit(letter)[1] != circuit.takes:
+        letter = None
     raise InputError(
         f"the {circuit.kind} takes {names.get(circuit.takes, circuit.takes)}, "
         f"but the scale's signal is {what}; "
@@ -217,14 +219,14 @@ def _placed(error: InputError, circuit_key: Key | None, key: Key) -> InputError:
 
     Where there is no table the circuit is direct, full and at rest at the scale's own ends.
     """
-    error.keys = tuple(
-        k if k[:1] == ("movement",) else _under(circuit_key, key, str(k[0])) for k in error.keys
-    )
+    error.keys = tuple(k if k[:1] == ("movement",) else _under(circuit_key, key, k) for k in error.keys)
     return error
 
 
-def _under(circuit_key: Key | None, key: Key, name: str) -> Key:
-    return (*circuit_key, name) if circuit_key else (*key, {"full": "to", "rest": "from"}.get(name, name))
+def _under(circuit_key: Key | None, key: Key, own: Key) -> Key:
+    if circuit_key:
+        return (*circuit_key, *own)
+    return (*key, {"full": "to", "rest": "from"}.get(str(own[0]), own[0]))
 
 
 def _circuit_remarks(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Remark, ...]:

@@ -121,7 +121,8 @@ def _suggestion(key: Key, meant: Key | None, model: type[BaseModel], root: type[
         return f"it goes with kind = {' or '.join(kinds)}"
     if homes := _homes(root).get(str(key[-1])):
         return f"it belongs in {' or '.join(homes)}"
-    return f"the keys are {', '.join(_known(model, key[:-1]))}"
+    known = _known(model, key[:-1])
+    return f"the keys are {', '.join(known)}" if known else "it has no keys; leave this one out"
 
 
 def _kinds_with(name: object, model: type[BaseModel]) -> list[str]:

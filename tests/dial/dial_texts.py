@@ -145,6 +145,69 @@ def ohmmeters(draw) -> Wired:
     return Wired(keys, 0.0, end, lambda v: v / (half + v) if math.isfinite(v) else 1.0, half)
 
 
+@st.composite
+def tapped(draw) -> Wired:
+    """Amperes at a tap of a universal shunt, or behind a current transformer with a shunt."""
+    top, wider = draw(sizes), 1.0 + draw(st.floats(0.1, 20.0))
+    if draw(st.booleans()):
+        # The whole ring of coil and shunt stays one, so the coil's share is tap over ring.
+        keys = f'circuit = {{ kind = "universal shunt", ranges = ["{top!r} A", "{top * wider!r} A"] }}'
+        return Wired(f'unit = "A"\n{_ends(0.0, top)}{keys}', 0.0, top, lambda v: v / top)
+    keys = 'circuit = { kind = "current transformer", ratio = "200/5" }'
+    return Wired(f'unit = "A"\n{_ends(0.0, top)}{keys}', 0.0, top, lambda v: v / top)
+
+
+@st.composite
+def bridges(draw) -> Wired:
+    """Ohms below R1, beside 100 Ω below R2, balanced at 100·R1/R2; Kirchhoff by Thevenin."""
+    first, second = draw(st.floats(80.0, 500.0)), draw(st.floats(80.0, 500.0))
+    rest = 100.0 * first / second
+    start, end = rest * draw(st.sampled_from((0.97, 1.0))), rest * draw(st.floats(1.2, 3.0))
+
+    def current(x: float, volts: float) -> float:
+        open_v = volts * (x / (first + x) - 100.0 / (second + 100.0))
+        return open_v / (first * x / (first + x) + second * 100.0 / (second + 100.0) + 75.0)
+
+    supply = 1e-3 / current(end, 1.0)
+    keys = (
+        f'circuit = {{ kind = "bridge", supply = "{supply!r} V", '
+        f'arms = ["{first!r} ohm", "{second!r} ohm", "100 ohm"] }}'
+    )
+    return Wired(
+        f'unit = "ohm"\n{_ends(start, end)}{keys}',
+        start,
+        end,
+        lambda v: current(v, supply) / 1e-3,
+        negative=start < rest,
+    )
+
+
+@st.composite
+def rectifiers(draw) -> Wired:
+    """Volts AC behind real diodes; behind ideal ones in proportion."""
+    top = draw(st.floats(3.0, 500.0))
+    form = draw(st.sampled_from(("bridge", "half wave", "half bridge")))
+    diode = draw(st.sampled_from(("silicon", "germanium", "schottky", "copper oxide", "ideal")))
+    legs = ', legs = "1 kohm"' if form == "half bridge" else ""
+    keys = f'circuit = {{ kind = "rectifier", rectifier = "{form}", diode = "{diode}"{legs} }}'
+    hand = (lambda v: v / top) if diode == "ideal" else None
+    return Wired(f'unit = "V"\n{_ends(0.0, top)}{keys}', 0.0, top, hand)
+
+
+@st.composite
+def sensors(draw) -> Wired:
+    """A temperature by a thermocouple behind a millivoltmeter, or by a Pt100 or a thermistor direct."""
+    start, end = draw(st.sampled_from(((0.0, 300.0), (20.0, 90.0), (60.0, 850.0))))
+    which = draw(st.sampled_from((*tuple("JKNTERS"), "pt100", "thermistor")))
+    if which == "T" and end > 400:
+        end = 400.0
+    law = {
+        "pt100": 'law = "pt100"',
+        "thermistor": 'law = { kind = "thermistor", r25 = "10 kohm", beta = 3950 }',
+    }.get(which, f'law = {{ kind = "thermocouple", type = "{which}" }}')
+    return Wired(f'unit = "degC"\n{_ends(start, end)}{law}', start, end, None)
+
+
 def _direct(keys: str, start: float, end: float, signal: Callable[[float], float], zero: float) -> Wired:
     full = signal(end)
     return Wired(
@@ -241,7 +304,12 @@ RESPONSES = [
 @st.composite
 def cases(draw) -> Case:
     """A whole dial: any law and circuit, response, readings, meters turned round, stops."""
-    wired = draw(st.one_of(shunts(), multipliers(), ohmmeters(), directs()))
+    wired = draw(
+        st.one_of(
+            *(shunts(), multipliers(), ohmmeters(), directs()),
+            *(tapped(), bridges(), rectifiers(), sensors()),
+        )
+    )
     rest, sweep = round(draw(st.floats(-150.0, 150.0)), 2), round(draw(st.floats(20.0, 200.0)), 2)
     turn = draw(st.sampled_from((1.0, -1.0)))
     full = rest + turn * sweep

@@ -498,3 +498,12 @@ def test_refusal_is_one_error_with_all_in_it():
     with pytest.raises(Refused) as caught:
         made('unit = "V"\nfrom = 0\nto = 7\ncircuit = { kind = "shunt" }')
     assert len(caught.value.errors) == len(str(caught.value).splitlines()) == 1
+
+
+def test_what_several_circuits_lack_is_asked_for_once() -> None:
+    """Two shunts behind a movement without current and resistance ask for these in one line, not two."""
+    second = '\n[[scale]]\nunit = "A"\nfrom = 0\nto = 5\nradius = 30\ncircuit = "shunt"'
+    found = refusals(
+        'unit = "A"\nfrom = 0\nto = 40\ncircuit = "shunt"' + second, "rest = -44.0\nfull = 44.0\n"
+    )
+    assert [key for _, key in found] == [("movement", "current")]

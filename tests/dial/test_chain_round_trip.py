@@ -11,7 +11,7 @@ from hypothesis import strategies as st
 
 from dialgen.errors import NoSuchValue
 
-many = settings(max_examples=40, suppress_health_check=[HealthCheck.too_slow], deadline=None)
+many = settings(max_examples=150, suppress_health_check=[HealthCheck.too_slow], deadline=None)
 fractions = st.lists(st.floats(0.0, 1.0), min_size=1, max_size=12)
 
 
@@ -226,3 +226,24 @@ def test_observed_drive_is_the_deflection():
     """On an observed scale the drive reported is the deflection."""
     dial = made('unit = "%"\nfrom = 0\nto = 10\nlaw = { kind = "observed", points = [[0, -44], [10, 22]] }')
     assert dial.scales[0].chain.drive(np.array([0.0, 10.0])) == pytest.approx([0.0, 0.75])
+
+
+@pytest.mark.parametrize(
+    ("keys", "end_deg"),
+    [
+        ('unit = "degC"\nfrom = -200\nto = 850\nlaw = "pt100"', -45.0),
+        ('unit = "degF"\nfrom = -328\nto = 1562\nlaw = "pt100"', -45.0),
+        ('unit = "K"\nfrom = 73.15\nto = 1123.15\nlaw = "pt100"', -45.0),
+        (
+            'unit = "K"\nfrom = 3.15\nto = 1200\nlaw = { kind = "thermocouple", type = "K" }\n'
+            'circuit = { kind = "direct", rest = 3.15 }',
+            -45.0,
+        ),
+    ],
+)
+def test_the_end_of_a_sensors_range_survives_the_way_back(keys: str, end_deg: float) -> None:
+    """A scale that begins where its sensor's standard does is read back there from its own angle."""
+    (scale,) = made(keys, "rest = -45\nfull = 45\n").scales
+    angles = scale.chain.angle(np.array([scale.spec.start, scale.spec.end]))
+    assert angles[0] == pytest.approx(end_deg)
+    assert scale.chain.angle(scale.chain.value(angles)) == pytest.approx(angles, abs=1e-9 * 90)

@@ -24,7 +24,7 @@ def circuit_json(bill: Bill) -> Fields:
         "kind": design.kind,
         "range": _number(design.range),
         "unit": design.unit,
-        "drop": _drop(design, cases[0]) if cases else None,
+        "drop": _drop(design, cases[design.shown]) if cases else None,
         "parts": [_part(part) for part in assessment.parts] if assessment else [],
         "cautions": [f"{each.text} ({each.source})" for each in bill.cautions],
         "ranges": [
@@ -59,7 +59,10 @@ def circuit_json(bill: Bill) -> Fields:
                 "off_percent": trim.off_percent,
                 "reading_percent": trim.reading_percent,
                 "parallel": _number(trim.parallel_ohm),
+                "parallel_watts": trim.parallel_w,
                 "series": _number(trim.series_ohm),
+                "filed_share": trim.filed_share,
+                "longer_share": trim.longer_share,
             }
             for trim in bill.trims
         ],
@@ -106,6 +109,7 @@ def _part(assessed: PartAssessed) -> Fields:
         "current": full.current_a,
         "voltage": full.voltage_v,
         "overload_watts": over.watts if over else None,
+        "sensitivity": assessed.sensitivity,
         "nearest": [
             {
                 "series": fit.series,
@@ -130,7 +134,12 @@ def _swamping(bill: Bill) -> Fields | None:
                 "before_drop": found.before_drop_v,
             }
         case NoSwamping() as found:
-            return {"ohms": None, "drift_percent_per_k": found.percent_per_k}
+            return {
+                "ohms": None,
+                "drift_percent_per_k": found.percent_per_k,
+                "copper_share": found.copper_share,
+                "range_factor": found.range_factor,
+            }
     return None
 
 

@@ -42,12 +42,13 @@ def _swamping(bill: Bill) -> Iterator[str]:
             yield from wrapped(f"Swamping: {_swamped(bill.design, found)}.")
         case NoSwamping() as found:
             mend = (
-                f"; a range {figure(found.range_factor)} times as large would have the wanted drift"
+                f"; with this movement a signal {figure(found.range_factor)} times as large at full scale "
+                "would have the wanted drift"
                 if found.range_factor
                 else ""
             )
             yield from wrapped(
-                "Swamping does not help: range and movement fix the whole resistance, of which "
+                "Swamping does not help: full scale and movement fix the whole resistance, of which "
                 f"{figure(100 * found.copper_share)} % is copper{mend}."
             )
 
@@ -95,7 +96,7 @@ def _search(name: str, found: Search) -> Iterator[str]:
 def _candidate(found: Candidate) -> tuple[str, ...]:
     return (
         f"  {found.drawing}",
-        engineered(found.ohms, "Ω", 6),
+        engineered(found.ohms, "Ω"),
         percent(100 * found.error),
         str(found.parts),
         f"{figure(100 * found.share)} % of the power",

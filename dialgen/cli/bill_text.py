@@ -5,16 +5,27 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator, Sequence
 
-from dialgen.circuit.design import Fact
+from dialgen.circuit.design import Design, Fact
 from dialgen.cli.bill_making import MAKING
-from dialgen.cli.columns import columns, figure, percent, table, wrapped
-from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed, Together
+from dialgen.cli.columns import columns, figure, listed, percent, table, wrapped
+from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed
 from dialgen.parts.bill import Bill
 from dialgen.parts.caution.cautions import CAUTIONS
+from dialgen.parts.fits import Together, is_bought, is_there, is_wound
+from dialgen.parts.preferred import LEAST_BOUGHT_OHM
 from dialgen.quantity import engineered, plain_number
 
-_EXACT_DIGITS = 7
-_PREFIXED = ("A", "V", "Ω", "W", "VA", "Ω/V")
+_PREFIXED = ("A", "V", "Ω", "W", "Ω/V")
+
+
+def heading(design: Design, serves: str) -> str:
+    """Return the line that stands over a circuit's bill: its kind, its ranges, and what it serves."""
+    return f"{design.kind}{_size(design)} ({serves})"
+
+
+def is_mute(bill: Bill) -> bool:
+    """Return whether there is nothing to tell of a circuit but its cautions."""
+    return bill.assessment is not None and not (bill.design.parts or bill.design.cases or bill.design.facts)
 
 
 def bill_lines(bill: Bill) -> Iterator[str]:
@@ -27,31 +38,52 @@ def bill_lines(bill: Bill) -> Iterator[str]:
 
 def closing_lines(bills: Sequence[Bill]) -> Iterator[str]:
     """Yield what goes for all circuits: how to read the columns, and the cautions, gravest first."""
-    assessments = [bill.assessment for bill in bills if bill.assessment and bill.assessment.parts]
+    assessments = [bill.assessment for bill in bills if bill.assessment and bill.assessment.cases]
     if assessments:
         yield "How to read it"
         cases = [case for bill in bills for case in bill.design.cases]
         for note in _notes(assessments, adjusted=any(case.judged_at is not None for case in cases)):
             yield from wrapped(note, "- ")
         yield ""
-    yield "Cautions"
-    heeded = {caution.id: caution for bill in bills for caution in bill.cautions}
+    heeded = {caution.id for bill in bills for caution in bill.cautions}
+    if heeded:
+        yield "Cautions"
     for caution in CAUTIONS:
         if caution.id in heeded:
             yield from wrapped(f"{caution.text} ({caution.source})", "- ")
 
 
+def _size(design: Design) -> str:
+    whole, cases = design.range, design.cases
+    if whole is None or design.unit not in ("A", "V", "Ω"):
+        return ""
+    size = engineered(whole, design.unit)
+    if any(case.judged_at is not None for case in cases):
+        return f", {size} at half scale"
+    if design.unit == "Ω":
+        return f", {size} at the scale's end"
+    if len(cases) < 2:
+        return f" for {size}"
+    return f", {cases[0].name} to {cases[-1].name}, the scale shows {size}"
+
+
 def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str]:
-    margin = plain_number(assessments[0].bench.margin)
-    yield (
-        "Current, voltage and power are at full scale, of several ranges where each is worst; to buy is a "
-        f"rating of at least {margin} times that power (common practice)."
+    bench = assessments[0].bench
+    if any(assessment.parts for assessment in assessments):
+        yield (
+            "Current, voltage and power are at full scale, of several ranges where each is worst. Rating is "
+            f"what to buy or make a part for, at least {plain_number(bench.margin)} times that power (common "
+            "practice); what is given or built has none."
+        )
+        yield "1 % more reads: what a part with 1 % more ohms does to the reading at full scale."
+    copper, others = (
+        f"{100 * each:.3g} %" for each in (bench.materials.copper_per_k, bench.materials.others_per_k)
     )
     yield (
-        "Heat is that of coil and resistors together. Drift is what the coil's copper does, 0.393 % per "
-        "kelvin (IEC 60028), against resistors of 0.001 %; magnet and springs are not counted."
+        f"Heat is that of coil and resistors together. Drift is what the coil's copper does, {copper} per "
+        f"kelvin (IEC 60028), against resistors of {others}; magnet and springs are not counted."
     )
-    if any(part.fits for assessment in assessments for part in assessment.parts):
+    if any(assessment.together for assessment in assessments):
         yield (
             "Below each nearest value (IEC 60063) stands the error at full scale with it alone, then that "
             "with all of them, and what their tolerance does to full scale: at worst, and likely (root of "
@@ -72,23 +104,25 @@ def _parts(bill: Bill) -> Iterator[str]:
         yield "Nothing to buy or to make."
         return
     times = plain_number(assessment.bench.overload)
-    heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "to buy")
+    heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "rating", "1 % more reads")
     yield from table(heads, [row for part in assessment.parts for row in _part_rows(part)])
 
 
 def _part_rows(assessed: PartAssessed) -> Iterator[tuple[str, ...]]:
-    part, full = assessed.part, assessed.full
+    part, full, slope = assessed.part, assessed.full, assessed.sensitivity
     yield (
         part.name,
-        engineered(part.ohms, "Ω", _EXACT_DIGITS),
+        engineered(part.ohms, "Ω"),
         _amount(full.current_a, "A"),
         _amount(full.voltage_v, "V"),
         engineered(full.watts, "W", 3),
         _watts(assessed.overload),
-        "" if part.sums else engineered(assessed.rating_w, "W", 3),
+        # Ratings are sold as 0.125 W and 0.25 W, not in milliwatts.
+        "" if part.sums or is_there(part) else f"{plain_number(assessed.rating_w)} W",
+        "" if slope is None else percent(slope, 2),
     )
     if part.built is not None:
-        yield ("  as built", engineered(part.built, "Ω", _EXACT_DIGITS), *[""] * 5)
+        yield ("  as built", engineered(part.built, "Ω"), *[""] * 6)
 
 
 def _amount(value: float | None, unit: str) -> str:
@@ -103,24 +137,25 @@ def _ranges(bill: Bill) -> Iterator[str]:
     assessment = bill.assessment
     if assessment is None or not assessment.cases:
         return
+    several = len(assessment.cases) > 1
     heads = ("range", "at the terminals", "resistance", "per volt", "heat", "drift per K")
     rows = [
         (
-            case.name,
+            f"{case.name}, on the scale" if several and i == bill.design.shown else case.name,
             _drop(bill, case),
             _resistance(case.input_ohm),
             "" if case.ohms_per_volt is None else f"{engineered(case.ohms_per_volt, 'Ω', 4)}/V",
             engineered(case.watts, "W", 3),
             percent(drift.percent_per_k),
         )
-        for case, drift in zip(assessment.cases, assessment.drifts, strict=True)
+        for i, (case, drift) in enumerate(zip(assessment.cases, assessment.drifts, strict=True))
     ]
     yield from table(heads, rows)
 
 
 def _drop(bill: Bill, case: CaseAssessed) -> str:
-    # Across an ohmmeter's terminals stands what is measured, at full scale nothing.
-    return "" if bill.design.unit == "Ω" else engineered(case.drop_v, "V", 4)
+    # Across a voltmeter's terminals stands its range, across an ohmmeter's nothing of its own.
+    return engineered(case.drop_v, "V", 4) if bill.design.unit == "A" else ""
 
 
 def _resistance(ohms: float | None) -> str:
@@ -129,7 +164,7 @@ def _resistance(ohms: float | None) -> str:
 
 def _bought(bill: Bill) -> Iterator[str]:
     assessment = bill.assessment
-    bought = [part for part in assessment.parts if part.fits] if assessment else []
+    bought = [part for part in assessment.parts if is_bought(part.part)] if assessment else []
     if assessment is None or not bought:
         return
     series = [fit.series for fit in bought[0].fits]
@@ -153,9 +188,20 @@ def _all_together(together: Sequence[Together], *, alone: bool) -> Iterator[tupl
     if not alone:
         yield ("all fitted", *(percent(each.error_percent) for each in together))
     yield ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in together))
-    yield ("" if alone else "  at worst", *(f"±{figure(each.worst_percent)} %" for each in together))
+    yield ("  reads" if alone else "  at worst", *(f"±{figure(each.worst_percent)} %" for each in together))
     if not alone:
         yield ("  likely", *(f"±{figure(each.likely_percent)} %" for each in together))
+
+
+def _wound(bill: Bill) -> Iterator[str]:
+    told = {name for name, _ in bill.windings}
+    assessed = bill.assessment.parts if bill.assessment else ()
+    names = [each.part.name for each in assessed if is_wound(each.part) and each.part.name not in told]
+    if names:
+        yield from wrapped(
+            f"{listed(names)}: below {plain_number(LEAST_BOUGHT_OHM)} Ω, so wound or filed to value, not "
+            'bought from a series (common practice); --wire "manganin 1 mm" tells how.'
+        )
 
 
 def _facts(bill: Bill) -> Iterator[str]:
@@ -168,9 +214,10 @@ def _facts(bill: Bill) -> Iterator[str]:
 def _fact(fact: Fact) -> str:
     if not math.isfinite(fact.value):
         return fact.note
+    # A burden is 0.5 VA in the trade, and a share has no prefix.
     whole = plain_number(float(f"{fact.value:.3g}"))
     value = engineered(fact.value, fact.unit, 4) if fact.unit in _PREFIXED else f"{whole} {fact.unit}".strip()
     return f"{value}, {fact.note}" if fact.note else value
 
 
-_SECTIONS = (_parts, _ranges, _facts, _bought, *MAKING)
+_SECTIONS = (_parts, _ranges, _facts, _bought, _wound, *MAKING)

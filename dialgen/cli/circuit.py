@@ -150,30 +150,39 @@ def _draw(face: Face, chosen: tuple[Designed, ...], outputs: tuple[str, ...]) ->
 
 
 def _lines(face: Face, bills: Sequence[tuple[Designed, Bill]]) -> Iterator[str]:
-    from dialgen.cli.bill_making import old_face_lines
-    from dialgen.cli.bill_text import bill_lines, closing_lines
-    from dialgen.quantity import shown_unit
+    from dialgen.cli.bill_text import bill_lines, closing_lines, heading, is_mute
 
-    for designed, bill in bills:
-        yield _title(designed)
+    told = [(designed, bill) for designed, bill in bills if not is_mute(bill)]
+    for designed, bill in told:
+        yield heading(designed.design, _served([designed]))
         yield from bill_lines(bill)
-        rows = face.old_face(designed) if bill.assessment else ()
-        if rows:
-            yield ""
-            spec = face.dial.file.scale[designed.scale - 1]
-            yield from old_face_lines(shown_unit(spec.unit), max(abs(spec.start), abs(spec.end)), rows)
+        yield from _old_face(face, designed, bill)
+        yield ""
+    if not told:
+        served = _served([designed for designed, _ in bills])
+        yield f"Nothing to buy or to make: {_AS_IT_IS} ({served})." if served else _NO_CIRCUIT
         yield ""
     yield from closing_lines([bill for _, bill in bills])
 
 
-def _title(designed: Designed) -> str:
-    from dialgen.quantity import engineered
+_AS_IT_IS = "the movement is used as it is"
+_NO_CIRCUIT = "Nothing to buy or to make: no scale stands on a circuit."
 
-    design = designed.design
-    told = design.range is not None and design.unit in ("A", "V", "Ω")
-    size = f" for {engineered(design.range or 0.0, design.unit)}" if told else ""
-    serves = (f"scale {scale}" + (f" row {also + 1}" if also else "") for scale, also in designed.serves)
-    return f"{design.kind}{size} ({', '.join(serves)})"
+
+def _old_face(face: Face, designed: Designed, bill: Bill) -> Iterator[str]:
+    from dialgen.cli.bill_making import old_face_lines
+    from dialgen.quantity import shown_unit
+
+    rows = face.old_face(designed) if bill.assessment else ()
+    if rows:
+        yield ""
+        spec = face.dial.file.scale[designed.scale - 1]
+        yield from old_face_lines(shown_unit(spec.unit), max(abs(spec.start), abs(spec.end)), rows)
+
+
+def _served(circuits: Sequence[Designed]) -> str:
+    serves = [place for designed in circuits for place in designed.serves]
+    return ", ".join(f"scale {scale}" + (f" row {also + 1}" if also else "") for scale, also in serves)
 
 
 def _print_kinds(as_json: bool) -> None:

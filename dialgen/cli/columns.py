@@ -45,14 +45,24 @@ def wrapped(text: str, first: str = "", rest: str = "  ") -> list[str]:
     return [line.replace("\u00a0", " ") for line in lines]
 
 
-def percent(value: float) -> str:
-    """Return a signed percentage of three figures.
+def percent(value: float, digits: int = 3) -> str:
+    """Return a signed percentage of so many figures.
 
-    >>> percent(0.0), percent(-1.2345), percent(12.345)
-    ('0 %', '−1.23 %', '+12.3 %')
+    >>> percent(0.0), percent(-1.2345), percent(12.345), percent(-0.9998, 2)
+    ('0 %', '−1.23 %', '+12.3 %', '−1 %')
     """
-    rounded = float(f"{value:.3g}") if abs(value) >= 5e-7 else 0.0
+    rounded = float(f"{value:.{digits}g}") if abs(value) >= 5e-7 else 0.0
     return ("+" if rounded > 0 else "") + f"{plain_number(rounded)} %"
+
+
+def listed(names: Sequence[str]) -> str:
+    """Return names as a list to read.
+
+    >>> listed(["shunt"]), listed(["section 1", "section 2", "section 3"])
+    ('shunt', 'section 1, section 2 and section 3')
+    """
+    *most, last = names
+    return f"{', '.join(most)} and {last}" if most else last
 
 
 def figure(value: float) -> str:

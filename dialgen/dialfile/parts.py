@@ -10,7 +10,7 @@ from pydantic import PlainValidator, ValidationError
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Table
 from dialgen.errors import InputError
-from dialgen.parts.bench import OVERLOAD, Bench
+from dialgen.parts.bench import DRIFTS, MARGINS, OVERLOAD, OVERLOADS, TOLERANCES, Bench
 from dialgen.parts.preferred import SERIES
 from dialgen.parts.ratings import MARGIN, USUAL_RATINGS_V
 from dialgen.parts.stock.drawer import Lot, read_stock
@@ -38,13 +38,13 @@ class Parts(Table):
     ] = ()
     series: Annotated[str | None, PlainValidator(fields.one_of(*SERIES))] = None
     """The E series that parts are bought in; None shows all."""
-    tolerance: Annotated[float | None, PlainValidator(fields.number("a tolerance", 0.001, 50.0))] = None
+    tolerance: Annotated[float | None, PlainValidator(TOLERANCES.read)] = None
     """Percent, of every part; None takes each series' own."""
-    margin: Annotated[float, PlainValidator(fields.number("a margin", 1.0, 100.0))] = MARGIN
+    margin: Annotated[float, PlainValidator(MARGINS.read)] = MARGIN
     """How many times its dissipation a resistor is rated for."""
-    overload: Annotated[float, PlainValidator(fields.number("an overload", 1.0, 100.0))] = OVERLOAD
+    overload: Annotated[float, PlainValidator(OVERLOADS.read)] = OVERLOAD
     """Times full scale."""
-    drift: Annotated[float | None, PlainValidator(fields.number("a drift", 1e-4, 10.0))] = None
+    drift: Annotated[float | None, PlainValidator(DRIFTS.read)] = None
     """The largest wanted, in percent for a kelvin, for the swamping resistor."""
     voltage: Annotated[float, PlainValidator(_volts)] = min(USUAL_RATINGS_V.values())
     """What one resistor stands."""

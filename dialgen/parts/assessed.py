@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from dialgen.circuit.design import Design, Part, Working
 from dialgen.parts.bench import Bench
 from dialgen.parts.drift import Drift, drifts
-from dialgen.parts.preferred import Series, nearest
+from dialgen.parts.fits import Fit, Fitting, Together, fitting
 from dialgen.parts.ratings import rating_w
 from dialgen.parts.worked import Worked, largest, worked
 
@@ -29,25 +29,6 @@ class Carried:
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class Fit:
-    """The nearest value of a series, fitted in place of the exact one.
-
-    Args:
-        series: its name.
-        ohms: the value.
-        error_percent: the error at full scale with it alone, of the worst range; above 0 reads high.
-        tolerance_percent: the tolerance of the part.
-        spread_percent: what that tolerance does to full scale, either way, of the worst range.
-    """
-
-    series: str
-    ohms: float
-    error_percent: float
-    tolerance_percent: float
-    spread_percent: float
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
 class PartAssessed:
     """One part.
 
@@ -57,9 +38,9 @@ class PartAssessed:
         full: what it carries there at full scale.
         overload: the same at the overload; None where there is no such thing, as in an ohmmeter.
         rating_w: the power rating to buy.
-        sensitivity: percent of the reading for one percent of the part, of the worst range; None for
-            a whole made up of others.
-        fits: the nearest value of every series shown; none for what is there already.
+        sensitivity: percent of the reading at full scale for one percent of the part, of the worst range;
+            None for a whole made up of others, and for what is set and not made to a value.
+        fits: the nearest value of every series shown; none for what the file gives.
     """
 
     part: Part
@@ -83,7 +64,6 @@ class CaseAssessed:
             ohmmeter, or where the coil's resistance is not known.
         ohms_per_volt: a voltmeter's input resistance over its range.
         watts: what all resistances dissipate together, the coil's too.
-        overload_watts: that at the overload.
     """
 
     name: str
@@ -92,26 +72,6 @@ class CaseAssessed:
     input_ohm: float | None
     ohms_per_volt: float | None
     watts: float
-    overload_watts: float | None
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Together:
-    """All parts at once, of one series; percent of full scale, of the worst range.
-
-    Args:
-        series: its name.
-        tolerance_percent: the tolerance of the parts.
-        error_percent: the error with every nearest value fitted.
-        worst_percent: the tolerances all at their worst.
-        likely_percent: the root of the sum of their squares.
-    """
-
-    series: str
-    tolerance_percent: float
-    error_percent: float
-    worst_percent: float
-    likely_percent: float
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -129,12 +89,14 @@ def assess(design: Design, bench: Bench | None = None) -> Assessment:
     """Return what the bench wants to know of a design."""
     by = bench or Bench()
     ranges = [_Range(each, _overloaded(design, each, by.overload)) for each in worked(design)]
-    judged = [_judge(design, ranges, series, by.tolerance_of(series)) for series in by.shown]
+    fitted = [
+        fitting(design, [each.at for each in ranges], series, by.tolerance_of(series)) for series in by.shown
+    ]
     return Assessment(
         bench=by,
-        parts=tuple(_part(part, ranges, judged, by) for part in design.parts),
+        parts=tuple(_part(part, ranges, fitted, by) for part in design.parts),
         cases=tuple(_case(each, design.unit) for each in ranges),
-        together=tuple(each.together() for each in judged) if design.parts else (),
+        together=tuple(all_at_once for each in fitted for all_at_once in each.together()),
         drifts=drifts(design, by.materials),
     )
 
@@ -153,7 +115,7 @@ def _overloaded(design: Design, at: Worked, times: float) -> Working | None:
     return at.case.work(design.ohms, signal * times)
 
 
-def _part(part: Part, ranges: Sequence[_Range], judged: Sequence[_Judged], bench: Bench) -> PartAssessed:
+def _part(part: Part, ranges: Sequence[_Range], fitted: Sequence[Fitting], bench: Bench) -> PartAssessed:
     names = part.sums or (part.name,)
     having = [each for each in ranges if all(each.at.has(name) for name in names)]
     carried = [(each, _carried(names, each.at.full)) for each in having]
@@ -165,8 +127,8 @@ def _part(part: Part, ranges: Sequence[_Range], judged: Sequence[_Judged], bench
         full=full,
         overload=_carried(names, worst.overload) if worst and worst.overload else None,
         rating_w=rating_w(full.watts, bench.margin),
-        sensitivity=None if part.sums else largest([_sensitivity(part, each.at) for each in having]),
-        fits=tuple(each.fit(part.name) for each in judged) if part.is_made else (),
+        sensitivity=_sensitivity(part, [each.at for each in having]),
+        fits=tuple(each.fit(part.name) for each in fitted) if part.is_made else (),
     )
 
 
@@ -178,67 +140,15 @@ def _carried(names: Sequence[str], working: Working) -> Carried:
     return Carried(watts=load.watts, current_a=abs(load.current_a), voltage_v=abs(load.voltage_v))
 
 
-def _sensitivity(part: Part, at: Worked) -> float:
+def _sensitivity(part: Part, ranges: Sequence[Worked]) -> float | None:
+    if part.sums or part.adjustable or not 0 < part.ohms < math.inf:
+        return None
+    return largest([_slope(part, each) for each in ranges])
+
+
+def _slope(part: Part, at: Worked) -> float:
     up, down = (at.error_percent({part.name: part.ohms * (1.0 + step)}) for step in (_STEP, -_STEP))
     return (up - down) / (200.0 * _STEP)
-
-
-@dataclass(frozen=True, slots=True, kw_only=True, eq=False)
-class _Judged:
-    """The parts of a design as of one series: nearest values, and for each range the spreads, by name."""
-
-    series: Series
-    tolerance_percent: float
-    ranges: Sequence[_Range]
-    nearest_ohm: Mapping[str, float]
-    spreads: Sequence[Mapping[str, float]]
-
-    def fit(self, name: str) -> Fit:
-        """Return the nearest value of one part fitted alone."""
-        ohms = self.nearest_ohm[name]
-        return Fit(
-            series=self.series.name,
-            ohms=ohms,
-            error_percent=largest(
-                [each.at.error_percent({name: ohms}) for each in self.ranges if each.at.has(name)]
-            ),
-            tolerance_percent=self.tolerance_percent,
-            spread_percent=max((spread.get(name, 0.0) for spread in self.spreads), default=0.0),
-        )
-
-    def together(self) -> Together:
-        """Return all parts at once."""
-        return Together(
-            series=self.series.name,
-            tolerance_percent=self.tolerance_percent,
-            error_percent=largest([each.at.error_percent(self.nearest_ohm) for each in self.ranges]),
-            worst_percent=max((sum(spread.values()) for spread in self.spreads), default=0.0),
-            likely_percent=max((math.hypot(*spread.values()) for spread in self.spreads), default=0.0),
-        )
-
-
-def _judge(design: Design, ranges: Sequence[_Range], series: Series, tolerance_percent: float) -> _Judged:
-    singles = [part for part in design.parts if not part.sums]
-    return _Judged(
-        series=series,
-        tolerance_percent=tolerance_percent,
-        ranges=ranges,
-        nearest_ohm={part.name: nearest(part.ohms, series.name) for part in singles if part.is_made},
-        spreads=[
-            {
-                part.name: _spread_percent(part, each.at, tolerance_percent)
-                for part in singles
-                if each.at.has(part.name) and not part.adjustable
-            }
-            for each in ranges
-        ],
-    )
-
-
-def _spread_percent(part: Part, at: Worked, tolerance_percent: float) -> float:
-    """Return the larger of the errors at full scale at the part's two limits."""
-    share = tolerance_percent / 100.0
-    return max(abs(at.error_percent({part.name: part.ohms * (1.0 + off)})) for off in (share, -share))
 
 
 def _case(each: _Range, unit: str) -> CaseAssessed:
@@ -251,7 +161,6 @@ def _case(each: _Range, unit: str) -> CaseAssessed:
         input_ohm=input_ohm,
         ohms_per_volt=input_ohm / abs(signal) if input_ohm is not None and unit == "V" else None,
         watts=_watts(working),
-        overload_watts=_watts(each.overload) if each.overload else None,
     )
 
 

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-import math
+from collections.abc import Mapping
 from dataclasses import dataclass, field
 
 from dialgen.errors import InputError
@@ -11,9 +11,16 @@ from dialgen.parts.preferred import SERIES, Series, series_named
 from dialgen.parts.ratings import MARGIN, USUAL_RATINGS_V
 from dialgen.parts.stock.drawer import Lot
 from dialgen.parts.wire.spool import Wire
+from dialgen.quantity import Number
 
 OVERLOAD = 1.2
 """Times full scale (common practice)."""
+TOLERANCES = Number("a tolerance", 0.001, 50.0)
+MARGINS = Number("a margin", 1.0, 100.0)
+OVERLOADS = Number("an overload", 1.0, 100.0)
+DRIFTS = Number("a drift", 1e-4, 10.0)
+"""What may be asked for: percent, times, times full scale, percent for a kelvin.  The check of
+dial files reads with them too."""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -46,13 +53,10 @@ class Bench:
     voltage_v: float = min(USUAL_RATINGS_V.values())
 
     def __post_init__(self) -> None:
-        for name, least in (("margin", 1.0), ("overload", 1.0)):
-            if not least <= getattr(self, name) < math.inf:
-                raise InputError(f"{name} is a number of times; write {least:g} or more", (name,))
-        for name in ("tolerance_percent", "drift_wanted_percent_per_k"):
+        for name, bounds in _BOUNDS.items():
             given = getattr(self, name)
-            if given is not None and not 0 < given < 100:
-                raise InputError(f"{given:g} % is no such figure; write one above 0 and below 100", (name,))
+            if given is not None:
+                _check(name, bounds, given)
         if self.series is not None:
             try:
                 series_named(self.series)
@@ -67,3 +71,18 @@ class Bench:
     def tolerance_of(self, series: Series) -> float:
         """Return the tolerance of parts of a series, in percent."""
         return series.tolerance_percent if self.tolerance_percent is None else self.tolerance_percent
+
+
+_BOUNDS: Mapping[str, Number] = {
+    "tolerance_percent": TOLERANCES,
+    "margin": MARGINS,
+    "overload": OVERLOADS,
+    "drift_wanted_percent_per_k": DRIFTS,
+}
+
+
+def _check(name: str, bounds: Number, given: object) -> None:
+    try:
+        bounds.read(given)
+    except ValueError as error:
+        raise InputError(str(error), (name,)) from None

@@ -94,8 +94,9 @@ def bill(
             if bench.lots
         ),
         windings=tuple(
-            (each.part.name, wound(each.part.ohms, abs(each.full.current_a or 0.0), wire))
+            (each.part.name, wound(each.part.ohms, current_a, wire))
             for each in made
+            if (current_a := each.full.current_a) is not None
             for wire in bench.wires
         ),
         swamping=_swamping(design, reswamped, bench),

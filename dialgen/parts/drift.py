@@ -13,13 +13,10 @@ import numpy as np
 
 from dialgen.circuit.design import COIL, Design, Ohms
 from dialgen.errors import InputError
+from dialgen.parts.wire.materials import MATERIALS
 from dialgen.parts.worked import largest, worked
 from dialgen.roots import Array, bracketed_roots
 
-COPPER_PER_K = 0.00393
-"""Of annealed copper at 20 °C (IEC 60028)."""
-MANGANIN_PER_K = 1e-5
-"""Of manganin, and of good metal film, near 20 °C (common practice)."""
 COPPER = frozenset({COIL, "leads", "line"})
 _PROBE = 0.01
 _UNMOVED = 1e-6
@@ -33,12 +30,12 @@ class Materials:
     Args:
         copper: the names of what is wound or drawn of copper.
         copper_per_k: copper's rise for a kelvin, as a share.
-        others_per_k: that of every other part.
+        others_per_k: that of every other part: manganin, or metal film as good.
     """
 
     copper: frozenset[str] = COPPER
-    copper_per_k: float = COPPER_PER_K
-    others_per_k: float = MANGANIN_PER_K
+    copper_per_k: float = MATERIALS["copper"].per_k
+    others_per_k: float = MATERIALS["manganin"].per_k
 
     def warmed(self, ohms: Ohms, kelvin: float) -> Ohms:
         """Return every resistance ``kelvin`` warmer, R·(1 + α·ΔT).
@@ -81,7 +78,7 @@ class Swamping:
         swamp_ohm: the resistor, 0 where the circuit is good enough without.
         percent_per_k: the drift with it, of the worst range.
         before_percent_per_k: the drift of the circuit as it is.
-        drop_v: the voltage across the terminals at full scale with it, of the first range.
+        drop_v: the voltage across the terminals at full scale with it, of the scale's own range.
         before_drop_v: that of the circuit as it is.
     """
 
@@ -166,7 +163,7 @@ def _enough_ohm(sizes: Callable[[Array], Array], coil_ohm: float, wanted: float)
 
 
 def _swamping(swamped: Design, design: Design, swamp_ohm: float, materials: Materials) -> Swamping:
-    with_it, without = worked(swamped)[0], worked(design)[0]
+    with_it, without = worked(swamped)[swamped.shown], worked(design)[design.shown]
     return Swamping(
         swamp_ohm=swamp_ohm,
         percent_per_k=_worst(swamped, materials),

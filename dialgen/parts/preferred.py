@@ -14,6 +14,11 @@ _E24 = (10, 11, 12, 13, 15, 16, 18, 20, 22, 24, 27, 30, 33, 36, 39, 43, 47, 51, 
 """Two figures; eight of them (27 to 47, and 82) are older than the rule of the finer series."""
 
 
+LEAST_BOUGHT_OHM = 1.0
+"""Below about an ohm a part is a few turns of wire or a strip, wound or filed to its value, and not bought
+from a series (common practice)."""
+
+
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Series:
     """One E series.

@@ -1,18 +1,16 @@
-"""Parts as they were made: what they do to an old face, and what cures them."""
+"""Parts as they were made: what they do to the reading, and what cures them."""
 
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable, Sequence
+from collections.abc import Sequence
 from dataclasses import dataclass, replace
 
-from dialgen.circuit.design import Case, Design, Part
-from dialgen.errors import InputError
+from dialgen.circuit.design import Design, Part
+from dialgen.parts.preferred import LEAST_BOUGHT_OHM
 from dialgen.parts.worked import Worked, largest, worked
 from dialgen.quantity import engineered
 
-_FILED_BELOW_OHM = 1.0
-"""Below about an ohm a part is strip or a few turns of wire, and filed (common practice)."""
 _SAME = 1e-9
 
 
@@ -52,7 +50,7 @@ class Trim:
             return f"put {engineered(self.parallel_ohm, 'Ω', 4)} across it{heat}"
         if self.series_ohm is None or self.filed_share is None or self.longer_share is None:
             return "nothing to do"
-        if self.ohms >= _FILED_BELOW_OHM:
+        if self.ohms >= LEAST_BOUGHT_OHM:
             return f"put {engineered(self.series_ohm, 'Ω', 4)} in series with it"
         return (
             f"file or scrape {self.filed_share * 100:.2g} % off its cross-section along the whole length "
@@ -92,43 +90,3 @@ def _trim(part: Part, built: float, ranges: Sequence[Worked]) -> Trim:
             trim, series_ohm=part.ohms - built, filed_share=1.0 - share, longer_share=1.0 / share - 1.0
         )
     return trim
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Misreading:
-    """How far the pointer of a range stands off at full scale, with all parts as built, in percent."""
-
-    case: str
-    percent: float
-
-
-def misreadings(design: Design) -> tuple[Misreading, ...]:
-    """Return the error of every range at full scale of a face that was drawn for the design."""
-    return tuple(
-        Misreading(case=each.case.name, percent=each.error_percent(design.as_built))
-        for each in worked(design)
-    )
-
-
-def indicated(design: Design, case: Case, shares: Iterable[float]) -> tuple[float, ...]:
-    """Return what an evenly divided old face shows with the parts as built.
-
-    Args:
-        design: the circuit.
-        case: one of its ranges.
-        shares: true values as shares of full scale: marks, 0.25 for 10 A of 40 A.
-
-    Returns:
-        The indicated values, as shares of full scale too; a share's error in percent of full scale
-        is 100·(indicated - true).
-
-    Raises:
-        InputError: the range is in ohms, whose face is not evenly divided.
-    """
-    if design.unit == "Ω":
-        raise InputError("a face in ohms is not evenly divided; draw it anew for the parts as built")
-    # Nothing may drive backwards, where the zero is suppressed: the old face was drawn from there.
-    at_nothing = case.work(design.ohms, 0.0).drive
-    at_full = case.work(design.ohms, case.signal).drive
-    drives = [case.work(design.as_built, share * case.signal).drive for share in shares]
-    return tuple((drive - at_nothing) / (at_full - at_nothing) for drive in drives)

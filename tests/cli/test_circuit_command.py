@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import json
 import math
+import re
 import subprocess
 import sys
 from pathlib import Path
@@ -111,15 +112,16 @@ def test_the_nearest_bought_value_and_what_it_does(file) -> None:
 
 
 def test_the_drawer_is_in_the_file_or_in_options(file) -> None:
-    """A 9 500 Ω multiplier from 10 k, 1 k and 190 k: an option says what else the file would."""
+    """A 9 500 Ω multiplier from 19 k, 19 k and 1 k; an option goes before the file."""
     text = BASE.replace('"75 ohm"', '"500 ohm"').replace('"A"', '"V"').replace("to = 40", "to = 10")
     text += 'circuit = "multiplier"\n[parts]\nstock = ["19 kohm x2", "1 kohm"]\n'
     (search,) = circuits(file(text))[0]["stock"]
     best = search["candidates"][0]
     assert best["network"] == "19k || 19k"
     assert (best["parts"], best["error"]) == (2, pytest.approx(0.0, abs=1e-9))
-    # Three pieces of two values: 5 networks of one or two parts from (19k, 19k, 1k), 4 wirings with
-    # three different places: counted by hand, 2 + 4 + 6 = single, pairs, triples.
+    # Singles a, b; pairs aa and ab, in series or parallel; of a, a, b all in series, b + (a||a), a + (a||b),
+    # and the same three with series and parallel changed over: 2 + 4 + 6.
+    assert search["searched"] == 12
     (other,) = circuits(file(text), "--stock", "9.5 kohm")[0]["stock"]
     assert other["candidates"][0]["network"] == "9.5k"
 
@@ -136,21 +138,152 @@ def test_a_face_as_designed_is_told_of_at_every_numbered_mark(file) -> None:
 
 def test_heat_overload_and_drift_are_printed(file) -> None:
     """The sheet has exact value, power (3 W), overload (4.32 W), rating (6 W) and drift of bare copper."""
-    said = run("circuit", file(BUILT)).stdout
-    assert "1.875047 mΩ" in said
-    assert "4.32 W" in said
-    assert "6 W" in said
-    # The coil branch alone is copper: d(ln drive)/dT is -(α - 1e-5) but for the shunt's share.
-    assert "−0.392 %" in said
+    path = file(BASE + 'circuit = "shunt"')
+    said = run("circuit", path).stdout
+    row = next(line for line in said.splitlines() if line.startswith("shunt  "))
+    cells = ["shunt", "1.875 mΩ", "40 A", "75 mV", "3 W", "4.32 W", "6 W", "+1 %"]
+    assert re.split(r"\s\s+", row) == cells
+    # The coil branch alone is copper: d(ln drive)/dT is -(α - β) but for the shunt's share, α of
+    # IEC 60028 and 1.5e-5 of manganin as in Kuphaldt, LIEC V.
+    drift = circuits(path)[0]["ranges"][0]["drift_percent_per_k"]
+    assert drift == pytest.approx(-(0.393 - 0.0015), rel=1e-4)
+    assert "copper does, 0.393 % per kelvin (IEC 60028), against resistors of 0.0015 %" in " ".join(
+        said.split()
+    )
 
 
 def test_swamping_for_a_wanted_drift(file) -> None:
-    """0.1 %/K of 75 Ω of copper: 0.00393·75/0.001 minus the rest; at a few ohms of it (IEC 60028)."""
+    """0.1 %/K of 75 Ω of copper takes a branch of about four times that, and its drop (IEC 60028)."""
     (circuit,) = circuits(file(BASE + 'circuit = "shunt"'), "--drift", "0.1")
     swamp = circuit["swamping"]["ohms"]
-    # Copper's share of the branch times copper's rise over manganin's 1e-5, to the shunt's share.
-    assert 0.00392 * 75 / (75 + swamp) == pytest.approx(0.001, rel=1e-3)
+    # Copper's share of the branch times copper's rise over manganin's, to the shunt's share.
+    assert (0.00393 - 1.5e-5) * 75 / (75 + swamp) == pytest.approx(0.001, rel=1e-4)
     assert circuit["swamping"]["drop"] == pytest.approx(1e-3 * (75 + swamp), rel=1e-6)
+
+
+RATED = """
+[scale.circuit]
+kind = "shunt"
+rated = "100 A/75 mV"
+"""
+
+
+def test_a_bought_shunt_may_be_good_enough(file) -> None:
+    """Of 20 Ω of copper in 75 Ω 0.15 %/K is met: nothing to fit, and the sheet says so."""
+    path = file(BASE.replace('"75 ohm"', '"20 ohm"').replace("to = 40", "to = 100") + RATED)
+    (circuit,) = circuits(path, "--drift", "0.15")
+    assert circuit["swamping"]["ohms"] == 0
+    drift = 100 * (0.00393 - 1.5e-5) * 20 / 75
+    assert circuit["swamping"]["drift_percent_per_k"] == pytest.approx(-drift, rel=1e-4)
+    assert "not needed, the drift is" in run("circuit", path, "--drift", "0.15").stdout
+
+
+def test_what_cannot_be_swamped_is_told_in_full(file) -> None:
+    """Of 1 V on 1 mA 75 Ω in 1 kΩ are copper; 0.01 %/K asks for so many times the signal, by hand."""
+    path = file(BASE.replace('"A"', '"V"').replace("to = 40", "to = 1") + 'circuit = "multiplier"')
+    (circuit,) = circuits(path, "--drift", "0.01")
+    found = circuit["swamping"]
+    assert found["ohms"] is None
+    assert found["copper_share"] == pytest.approx(0.075, rel=1e-4)
+    factor = 0.075 / ((1e-4 - 1.5e-5) / (0.00393 - 1.5e-5))
+    assert found["range_factor"] == pytest.approx(factor, rel=1e-4)
+    said = " ".join(run("circuit", path, "--drift", "0.01").stdout.split())
+    assert f"a signal {factor:.2g} times as large" in said
+
+
+def test_two_bridges_on_different_supplies_are_two_circuits(file) -> None:
+    """The same arms on 2 V and on 3 V drive the coil differently; on the same supply they are one."""
+    bridge = 'circuit = {{ kind = "bridge", supply = "{}", arms = ["1 kohm", "1 kohm", "100 ohm"] }}\n'
+    scale = '[[scale]]\nunit = "ohm"\nfrom = 100\nto = 150\nradius = {}\n'
+    top = BASE[: BASE.index("[[scale]]")]
+
+    def text(second: str) -> str:
+        return top + scale.format(44) + bridge.format("2 V") + scale.format(36) + bridge.format(second)
+
+    assert len(circuits(file(text("3 V")))) == 2
+    assert len(circuits(file(text("2 V")))) == 1
+
+
+def test_a_face_with_zero_alone_numbered(file) -> None:
+    """A built shunt beside a scale that is numbered at 0 only is told of at 0, with no error there."""
+    text = BASE.replace("to = 40", "to = 40\nnumbered = [0]") + BUILT[len(BASE) :]
+    said = run("circuit", file(text)).stdout
+    rows = said.split("On a face drawn for the exact values, as built:")[1].splitlines()
+    assert rows[2].split() == ["0", "0", "0", "0", "%"]
+    assert rows[3] == ""
+
+
+def test_wound_parts_have_no_rows_of_a_series(file) -> None:
+    """A shunt of 1.875 mΩ is wound or filed: the sheet names the option, and no E6 value 17 % off."""
+    path = file(BASE + 'circuit = "shunt"')
+    said = run("circuit", path).stdout
+    assert "nearest value" not in said
+    assert "shunt: below 1 Ω, so wound or filed" in said
+    (part,) = circuits(path)[0]["parts"]
+    assert [fit["series"] for fit in part["nearest"]] == ["E6", "E12", "E24", "E48", "E96", "E192"]
+    wired = run("circuit", path, "--wire", "manganin 20 x 1 mm").stdout
+    assert "below 1 Ω" not in wired
+    assert "shunt made at home: 8.72 cm" in wired or "shunt made at home: 87.2 mm" in wired
+
+
+def test_what_is_there_has_no_rating_and_no_series(file) -> None:
+    """For a bought shunt nothing is to be bought; its swamping resistor has rating and nearest values."""
+    path = file(BASE.replace('"75 ohm"', '"20 ohm"').replace("to = 40", "to = 100") + RATED)
+    said = run("circuit", path).stdout.splitlines()
+    shunt = next(line for line in said if line.startswith("shunt  "))
+    swamp = next(line for line in said if line.startswith("swamp  "))
+    assert "16 W" not in shunt  # twice its 7.5 W
+    assert "0.125 W" in swamp
+    assert sum(line.startswith("swamp  ") for line in said) == 2
+    assert sum(line.startswith("shunt  ") for line in said) == 1
+
+
+def test_ranges_ascend_and_the_scales_own_is_marked(file) -> None:
+    """Of 1, 5 and 10 A on the 5 A scale the sheet goes upwards, says which it is, and titles them all."""
+    text = BASE.replace('"75 ohm"', '"50 ohm"').replace("to = 40", "to = 5")
+    path = file(text + 'circuit = { kind = "universal shunt", ranges = ["10 A", "5 A", "1 A"] }')
+    said = run("circuit", path).stdout
+    assert said.startswith("universal shunt, 1 A to 10 A, the scale shows 5 A (scale 1)\n")
+    rows = said[said.index("range ") :].splitlines()[1:4]
+    assert [row.split("  ")[0] for row in rows] == ["1 A", "5 A, on the scale", "10 A"]
+    # The drop of the contract's "drop" is that of the scale's own range, Im·(ring - tap), by hand.
+    ring = 50 + 0.05 / 0.999
+    assert circuits(path)[0]["drop"] == pytest.approx(1e-3 * (ring - ring * 1e-3 / 5), rel=1e-9)
+
+
+BARE = "dialgen = 1\n[movement]\nrest = -44.0\nfull = 44.0\n[plate]\nsize = [84, 64]\npivot = [42, 12]\n"
+PLAIN = '[[scale]]\nunit = "%"\nfrom = 0\nto = 100\nradius = {}\n'
+
+
+def test_a_dial_without_circuits_says_so_in_a_line(file) -> None:
+    """Two direct scales of a movement that is not known in ohms are one line and the general cautions."""
+    said = run("circuit", file(BARE + PLAIN.format(44) + PLAIN.format(36))).stdout.splitlines()
+    assert said[0] == "Nothing to buy or to make: the movement is used as it is (scale 1, scale 2)."
+    assert said[1:3] == ["", "Cautions"]
+
+
+def test_an_observed_scale_says_so_in_a_line(file) -> None:
+    """A scale that was only observed stands on no circuit: one line, and no bare head of cautions."""
+    text = BARE + PLAIN.format(44) + 'law = { kind = "observed", points = [[0, -44], [50, 2], [100, 44]] }\n'
+    said = run("circuit", file(text)).stdout
+    assert said.splitlines()[0].startswith("Nothing to buy or to make: ")
+    assert not said.rstrip().endswith("Cautions")
+
+
+def test_a_direct_scale_is_silent_beside_a_circuit(file) -> None:
+    """Where another scale has a shunt, a direct one without figures is left out."""
+    text = BASE + 'circuit = "shunt"\n' + PLAIN.format(36)
+    said = run("circuit", file(text)).stdout
+    assert "(scale 1)" in said
+    assert "scale 2" not in said
+    assert len(circuits(file(text))) == 2
+
+
+def test_a_burden_is_in_volt_amperes(file) -> None:
+    """5 A in 20 mΩ are 0.5 VA, which no one calls 500 mVA."""
+    text = BASE.replace('"1 mA"', '"5 A"').replace('"75 ohm"', '"0.02 ohm"').replace("to = 40", "to = 200")
+    said = run("circuit", file(text + 'circuit = { kind = "current transformer", ratio = "200/5" }')).stdout
+    assert "burden: 0.5 VA" in said
 
 
 @pytest.mark.parametrize("suffix", ["svg", "pdf", "dxf"])
@@ -200,6 +333,18 @@ def test_a_multiplier_for_mains_is_split_by_voltage(file) -> None:
     (split,) = circuit["splits"]
     assert split["count"] == math.ceil(250 * math.sqrt(2) / 250)
     assert split["ohms"] == pytest.approx(circuit["parts"][0]["ohms"] / 2)
+
+
+@pytest.mark.parametrize(("volts", "pieces"), [("150 V", 3), ("350 V", 2), ("400 V", 1)])
+def test_the_voltage_of_a_resistor_governs_split_and_caution(file, volts, pieces) -> None:
+    """Of 354 V of peak parts for 150 V are three, for 350 V two; for 400 V one, and nothing is said of it."""
+    text = BASE.replace('"A"', '"V"').replace("to = 40", "to = 250")
+    text += 'circuit = { kind = "rectifier", diode = "ideal" }\n'
+    by_option = circuits(file(text), "--voltage", volts)[0]
+    by_file = circuits(file(text + f'[parts]\nvoltage = "{volts}"\n'))[0]
+    for circuit in (by_option, by_file):
+        assert [split["count"] for split in circuit["splits"]] == ([pieces] if pieces > 1 else [])
+        assert any("equal resistors in series" in each for each in circuit["cautions"]) == (pieces > 1)
 
 
 @pytest.mark.parametrize(

@@ -114,7 +114,6 @@ def test_loads_of_a_shunt(range_a, coil_ohm, swamp_ohm, times):
     assert part.full.watts == pytest.approx((range_a - 1e-3) * drop_v, rel=1e-8)
     assert part.overload.current_a == pytest.approx(times * (range_a - 1e-3), rel=1e-8)
     assert part.overload.watts == pytest.approx(times**2 * (range_a - 1e-3) * drop_v, rel=1e-8)
-    assert found.cases[0].overload_watts == pytest.approx(times**2 * range_a * drop_v, rel=1e-8)
 
 
 def shunted(shunt_ohm, branch_ohm):
@@ -236,16 +235,12 @@ def test_a_chains_tolerances_together():
 
 
 def test_a_given_part_is_loaded_but_not_sought():
-    """A swamping resistor in the file has its heat, its rating and its tolerance, and no other value."""
+    """A swamping resistor in the file has its heat and what 1 % of it does, and no other value."""
     found = assess(shunt(1.0, swamp=1500.0), Bench(series="E24"))
     swamp = found.parts[1]
     assert swamp.fits == ()
     assert swamp.full.watts == pytest.approx(1e-6 * 1500.0, rel=1e-9)
     assert swamp.sensitivity == pytest.approx(-0.75 * 0.999, rel=1e-6)
-    ring = found.parts[0].part.ohms + 2000.0
-    low_and_high = [abs(100.0 * (ring / (ring + off * 1500.0) - 1.0)) for off in (-0.05, 0.05)]
-    both = found.parts[0].fits[0].spread_percent + max(low_and_high)
-    assert found.together[0].worst_percent == pytest.approx(both, rel=1e-9)
 
 
 @pytest.mark.parametrize("signal", [0.0, math.inf])
@@ -261,7 +256,7 @@ def test_an_ohmmeter_has_no_overload(signal):
     found = assess(replace(design, unit="Ω", cases=(replace(case, signal=signal, work=work),)))
     assert found.parts[0].overload is None
     assert found.parts[0].full.watts == pytest.approx(0.4995)
-    assert (found.cases[0].input_ohm, found.cases[0].overload_watts) == (None, None)
+    assert found.cases[0].input_ohm is None
 
 
 def test_a_circuit_without_parts():
@@ -275,10 +270,10 @@ def test_a_circuit_without_parts():
 @pytest.mark.parametrize(
     ("keys", "message"),
     [
-        ({"margin": 0.5}, "margin .* 1 or more"),
-        ({"overload": math.inf}, "overload .* 1 or more"),
-        ({"tolerance_percent": 0.0}, "above 0 and below 100"),
-        ({"drift_wanted_percent_per_k": -0.1}, "above 0 and below 100"),
+        ({"margin": 0.5}, "margin of 0.5 is out of bounds; write a number from 1 to 100"),
+        ({"overload": math.inf}, "overload must be finite"),
+        ({"tolerance_percent": 0.0}, "tolerance of 0 is out of bounds"),
+        ({"drift_wanted_percent_per_k": -0.1}, "drift of -0.1 is out of bounds"),
         ({"series": "E20"}, "E20 is not a series"),
     ],
 )

@@ -16,8 +16,9 @@ from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.transformer import CurrentTransformer, read_ratio
 from dialgen.circuit.universal import UniversalShunt
 from dialgen.errors import InputError
-from dialgen.parts.caution.cautions import CAUTIONS, USUAL_RATINGS_V, cautions, split_count
+from dialgen.parts.caution.cautions import CAUTIONS, cautions, split_count
 from dialgen.parts.caution.situation import Situation, situation_of
+from dialgen.parts.ratings import USUAL_RATINGS_V
 from dialgen.quantity import Amount
 
 GENERAL = ("radium", "sealed meters", "marks lost", "codes")
@@ -86,6 +87,18 @@ TABLE = {
         ),
         ("secondary open", "primary dead", "moving iron with shunt"),
     ),
+    "a moving iron with a shunt on a transformer of 20 A": (
+        Situation(
+            kind="current transformer",
+            takes="A",
+            range=200.0,
+            alternating=True,
+            movement="moving iron",
+            shunt_a=19.0,
+        ),
+        # No fuse in any lead: no supply feeds a fault there, and a secondary must not be opened.
+        ("secondary open", "primary dead", "heavy shunt", "moving iron with shunt"),
+    ),
     "10 V DC": (
         Situation(kind="multiplier", takes="V", range=10.0, alternating=False, resistor_peak_v=9.9),
         (),
@@ -97,6 +110,28 @@ TABLE = {
     "125 V DC": (
         Situation(kind="multiplier", takes="V", range=125.0, alternating=False, resistor_peak_v=124.9),
         (*LIVE, "direct current arc", "earthy end"),
+    ),
+    "600 V DC with resistors that stand 700 V": (
+        Situation(
+            kind="multiplier",
+            takes="V",
+            range=600.0,
+            alternating=False,
+            resistor_peak_v=599.9,
+            resistor_rating_v=700.0,
+        ),
+        (*LIVE, "direct current arc", "earthy end"),
+    ),
+    "200 V DC with resistors that stand 150 V": (
+        Situation(
+            kind="multiplier",
+            takes="V",
+            range=200.0,
+            alternating=False,
+            resistor_peak_v=199.9,
+            resistor_rating_v=150.0,
+        ),
+        (*LIVE, "direct current arc", "earthy end", "split"),
     ),
     "600 V DC": (
         Situation(kind="multiplier", takes="V", range=600.0, alternating=False, resistor_peak_v=599.9),

@@ -4,17 +4,19 @@ By hand, α for copper, β for the rest, G = Rm' + Rs: a multiplier's reading fa
 (α·Rcu + β·Rrest)/R; a shunt's by Rm'/G·((α·Rcu + β·swamp)/Rm' - β).
 """
 
+from dataclasses import replace
+
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
-from parts_designs import behind, multiplier, shunt, universal
+from parts_designs import amperes, behind, multiplier, ohm, shunt, universal
 
 from dialgen.circuit.shunt import Rating, Shunt
+from dialgen.circuit.universal import UniversalShunt
 from dialgen.errors import InputError
 from dialgen.parts.drift import Materials, NoSwamping, Swamping, drifts, swamping
-from dialgen.quantity import Amount
 
-ALPHA, BETA = 0.00393, 1e-5
+ALPHA, BETA = 0.00393, 1.5e-5  # copper by IEC 60028, manganin as in Kuphaldt, LIEC V
 OHMS = st.floats(1.0, 3000.0)
 
 
@@ -71,7 +73,11 @@ def test_swamping_of_a_shunt_by_hand(range_a, coil_ohm, wanted):
     The ring is (Rm + S)·range/(range - Im), so S = Rm·((α - β)/wanted·(range - Im)/range - 1); the drop
     rises as coil and swamp over the coil.
     """
-    found = swamping(lambda ohms: shunt(range_a, coil_ohm=coil_ohm, swamp=ohms), wanted)
+
+    def redesign(ohms):
+        return shunt(range_a, coil_ohm=coil_ohm, swamp=ohms)
+
+    found = swamping(redesign(0.0), redesign, wanted)
     assert isinstance(found, Swamping)
     share = (range_a - 1e-3) / range_a
     expected = coil_ohm * ((ALPHA - BETA) * 100.0 / wanted * share - 1.0)
@@ -80,32 +86,53 @@ def test_swamping_of_a_shunt_by_hand(range_a, coil_ohm, wanted):
     assert found.before_percent_per_k == pytest.approx(-(ALPHA - BETA) * 100.0 * share, rel=2e-5)
     assert found.before_drop_v == pytest.approx(1e-3 * coil_ohm)
     assert found.drop_v / found.before_drop_v == pytest.approx((coil_ohm + found.swamp_ohm) / coil_ohm)
-    assert found.drive == pytest.approx(1.0)
+
+
+def swamped(ohms):
+    """A shunt of 100 A before 1 mA in 50 Ω, with a swamping resistor."""
+    return shunt(100.0, coil_ohm=50.0, swamp=ohms)
 
 
 def test_textbook_ratio_of_swamping():
-    """A tenth of copper leaves about a tenth of its drift: nine times the coil, ten times the drop."""
-    found = swamping(lambda ohms: shunt(100.0, coil_ohm=50.0, swamp=ohms), 0.0392)
-    assert found.swamp_ohm == pytest.approx(450.0, rel=1e-3)
-    assert found.drop_v == pytest.approx(0.5, rel=1e-3)
+    """A tenth of copper leaves a tenth of its drift: nine times the coil, ten times the drop."""
+    found = swamping(swamped(0.0), swamped, 0.0393, Materials(others_per_k=0.0))
+    assert found.swamp_ohm == pytest.approx(450.0, rel=1e-4)
+    assert found.drop_v == pytest.approx(0.5, rel=1e-4)
 
 
 def test_no_swamp_where_the_drift_is_small_enough():
     """A circuit that is good enough gets nothing."""
-    found = swamping(lambda ohms: shunt(1.0, swamp=ohms), 0.5)
+    found = swamping(swamped(0.0), swamped, 0.5)
     assert found.swamp_ohm == 0.0
     assert found.drop_v == found.before_drop_v
 
 
-def test_a_bought_shunt_with_too_little_drop_shows():
-    """Behind a shunt of fixed drop a swamp takes from full scale: 60 mV over twice what coil needs."""
-    # 1 mA in 60 Ω beside 60 mV at 100 A: with the swamp S the coil gets 60 mV/(60 + S).
-    rated = Rating(current_a=100.0, drop_v=0.06)
-    found = swamping(
-        lambda ohms: Shunt(rated=rated, swamp=Amount(ohms, "Ω")).design(behind(1e-3, 60.0, 100.0)), 0.196
-    )
-    assert found.swamp_ohm == pytest.approx(60.0, rel=1e-3)
-    assert found.drive == pytest.approx(0.5, rel=1e-3)
+def bought(swamp_ohm=None):
+    """A bought shunt of 100 A/75 mV before 1 mA in 20 Ω; its swamp makes up 75 Ω (about)."""
+    rated = Rating(current_a=100.0, drop_v=0.075)
+    return Shunt(rated=rated, swamp=ohm(swamp_ohm)).design(behind(1e-3, 20.0, 100.0))
+
+
+def test_a_bought_shunt_is_judged_as_it_is():
+    """20 of 75 Ω are copper, so it drifts by 0.1044 %/K: 0.15 %/K is met already, by the swamp designed."""
+    found = swamping(bought(), swamped, 0.15)
+    assert found.swamp_ohm == 0.0
+    expected = -100.0 * (ALPHA - BETA) * 20.0 / 75.0
+    assert found.percent_per_k == pytest.approx(expected, rel=1e-4)
+    assert found.percent_per_k == found.before_percent_per_k
+
+
+def test_a_bought_shunt_that_drifts_too_much_needs_another():
+    """For 0.05 %/K of 20 Ω the branch has (α - β)·20/0.0005 Ω, and drops that times 1 mA."""
+
+    def redesign(ohms):
+        return shunt(100.0, coil_ohm=20.0, swamp=ohms)
+
+    found = swamping(bought(), redesign, 0.05)
+    whole_ohm = (ALPHA - BETA) * 20.0 / 0.0005
+    assert found.swamp_ohm == pytest.approx(whole_ohm - 20.0, rel=1e-3)
+    assert found.drop_v == pytest.approx(1e-3 * whole_ohm, rel=1e-3)
+    assert found.before_drop_v == pytest.approx(0.075, rel=1e-4)
 
 
 @pytest.mark.parametrize("range_v", [0.5, 1.0, 10.0])
@@ -115,25 +142,41 @@ def test_swamping_does_not_help_a_multiplier(range_v):
     def redesign(ohms):
         return multiplier(range_v, coil_a=1e-3, coil_ohm=500.0, swamp=ohms)
 
-    found = swamping(redesign, 0.01)
+    found = swamping(redesign(0.0), redesign, 0.01)
     assert isinstance(found, NoSwamping)
     whole_ohm = range_v / 1e-3
     assert found.copper_share == pytest.approx(500.0 / whole_ohm, rel=1e-4)
-    assert found.share_wanted == pytest.approx((1e-4 - BETA) / (ALPHA - BETA))
-    for better in (
-        multiplier(range_v * found.range_factor, coil_ohm=500.0),
-        multiplier(range_v, coil_ohm=500.0 * found.coil_factor),
-    ):
-        assert drifts(better)[0].percent_per_k == pytest.approx(-0.01, rel=1e-4)
+    better = multiplier(range_v * found.range_factor, coil_ohm=500.0)
+    assert drifts(better)[0].percent_per_k == pytest.approx(-0.01, rel=1e-4)
+
+
+def voltmeter(ohms):
+    """10 V with a swamping resistor."""
+    return multiplier(10.0, swamp=ohms)
 
 
 def test_less_drift_than_manganin_cannot_be_had():
-    """A voltmeter of manganin drifts by manganin's own 0.001 %/K whatever its range."""
-    found = swamping(lambda ohms: multiplier(10.0, swamp=ohms), 0.0009)
-    assert (found.share_wanted, found.range_factor, found.coil_factor) == (None, None, None)
+    """A voltmeter of manganin drifts by manganin's own 0.0015 %/K whatever its range."""
+    found = swamping(voltmeter(0.0), voltmeter, 0.0014)
+    assert isinstance(found, NoSwamping)
+    assert found.range_factor is None
 
 
 def test_no_drift_at_all_is_refused():
     """A wanted drift of nothing is no figure."""
     with pytest.raises(InputError, match="cannot be had"):
-        swamping(lambda ohms: shunt(1.0, swamp=ohms), 0.0)
+        swamping(swamped(0.0), swamped, 0.0)
+
+
+def test_the_range_of_the_scale_is_the_one_whose_drop_is_told():
+    """Of a universal shunt for 1 and 10 A on the 10 A scale the drop is that of 10 A, by hand."""
+    circuit = UniversalShunt(ranges=amperes(1.0, 10.0))
+
+    def redesign(ohms):
+        return replace(circuit, swamp=ohm(ohms)).design(behind(1e-3, 50.0, 10.0))
+
+    found = swamping(redesign(0.0), redesign, 0.1)
+    # The whole shunt Im·Rm/(1 A - Im) and the ring; from the 10 A tap to the foot is ring·Im/10 A, and
+    # the drop that times what does not go round through the coil, or Im times the rest of the ring.
+    ring = 50.0 + 0.05 / 0.999
+    assert found.before_drop_v == pytest.approx(1e-3 * (ring - ring * 1e-3 / 10.0), rel=1e-9)

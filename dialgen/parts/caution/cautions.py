@@ -165,7 +165,8 @@ CAUTIONS: tuple[Caution, ...] = (
         text="Put a small fuse in each sense lead close to the shunt, and count its ohms with the leads. "
         "Without it a lead that touches metal carries the fault current of the supply.",
         source=_PRACTICE,
-        applies=lambda s: s.shunt_a > _HEAVY_A,
+        # Behind a transformer there is no supply to feed a fault, and nothing may open.
+        applies=lambda s: s.shunt_a > _HEAVY_A and s.kind != CurrentTransformer.kind,
     ),
     Caution(
         id="heavy shunt",

@@ -176,11 +176,12 @@ def _drifts(winding: Winding) -> str | None:
 
 
 def _copper(winding: Winding) -> str | None:
-    if winding.wire.material.name != "copper":
+    copper = winding.wire.material
+    if copper.name != "copper":
         return None
     return (
-        "Copper changes by 0.39 % for each kelvin. Take manganin, unless it is to follow the movement's coil "
-        "and stays as cool as the coil."
+        f"Copper changes by {_figure(100 * copper.per_k)} % for each kelvin. Take manganin, unless it is to "
+        "follow the movement's coil and stays as cool as the coil."
     )
 
 

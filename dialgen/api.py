@@ -189,7 +189,7 @@ class Face:
         return draw(
             design,
             title=f"{name}: {design.kind}" if name else design.kind,
-            coil_text=" ".join(engineered(value, unit) for value, unit in coil if value is not None),
+            coil=tuple(engineered(value, unit) for value, unit in coil if value is not None),
         )
 
     def render(

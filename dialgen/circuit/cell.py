@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Mapping
 from dataclasses import dataclass
 
 from dialgen.circuit.design import Fact
+from dialgen.circuit.names import BATTERY
 from dialgen.errors import InputError
 from dialgen.quantity import Amount, engineered
 
@@ -97,8 +99,8 @@ def _next_track(least_ohm: float) -> float:
     return next(track for track in tracks if track >= least_ohm * (1 - _ROUND))
 
 
-def life_facts(cell: Cell, end_v: float, halves: dict[str, tuple[float, float]]) -> tuple[Fact, ...]:
-    """Return how half scale drifts from a new cell to one at ``end_v``, with the adjuster set again.
+def life_facts(cell: Cell, end_v: float, halves: Mapping[str, tuple[float, float]]) -> tuple[Fact, ...]:
+    """Return by how much readings drift from a new cell to one at ``end_v``, with the adjuster set again.
 
     Args:
         cell: the cell.
@@ -112,30 +114,21 @@ def life_facts(cell: Cell, end_v: float, halves: dict[str, tuple[float, float]])
     if cell.worn_v is None:
         note = (
             f"{100 * (1 - end_v / cell.new_v):.0f} % below new: assumed, common practice; "
-            "give worn to be told how half scale drifts"
+            "give worn to be told how readings drift"
         )
-        return (Fact(name="worn cell", value=end_v, unit="V", note=note),)
-    at = f"at {engineered(end_v, 'V')}, the adjuster set again"
+        return (Fact(name=f"{BATTERY}, worn", value=end_v, unit="V", note=note),)
+    note = f"of the resistance at half scale, on {engineered(end_v, 'V')} with the adjuster set again"
     return tuple(
-        fact
+        Fact(name=f"error{behind}, worn", value=100.0 * (new_ohm / worn_ohm - 1.0), unit="%", note=note)
         for behind, (new_ohm, worn_ohm) in halves.items()
-        for fact in (
-            Fact(name=f"half scale{behind}, worn cell", value=worn_ohm, unit="Ω", note=at),
-            Fact(
-                name=f"reading error at half scale{behind}, worn cell",
-                value=100.0 * (new_ohm / worn_ohm - 1.0),
-                unit="%",
-                note="of the resistance measured",
-            ),
-        )
     )
 
 
-def travel_facts(name: str, settings: dict[str, float]) -> tuple[Fact, ...]:
+def travel_facts(name: str, settings: Mapping[str, float]) -> tuple[Fact, ...]:
     """Return where on its track an adjuster stands, new and worn."""
     return tuple(
-        Fact(name=f"{name}, {cell} cell", value=100.0 * share, unit="%", note="of its track in use")
-        for cell, share in settings.items()
+        Fact(name=f"{name}, {life}", value=100.0 * share, unit="%", note="of its track in use")
+        for life, share in settings.items()
     )
 
 

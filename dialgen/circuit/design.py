@@ -114,8 +114,11 @@ class Design:
         unit: of the signal, A, V or Ω.
         ohms: every resistance of the circuit as designed, the coil's and the leads' too.
         parts: the resistors, first what was designed.
-        cases: its ranges, first the one that the scale shows; none where nothing was designed.
+        cases: its ranges, ascending; none where nothing was designed.
+        shown: which of the cases the scale shows.
         facts: what else there is to know.
+        form: which of the connections that the kind has: "half bridge", "across"; empty where it has one.
+        stamp: what is stamped on a part that is bought, "100 A/75 mV" or "200/5"; empty where none is.
         alternating: whether it is meant for alternating current alone.
     """
 
@@ -125,8 +128,16 @@ class Design:
     ohms: Ohms
     parts: tuple[Part, ...] = ()
     cases: tuple[Case, ...] = ()
+    shown: int = 0
     facts: tuple[Fact, ...] = ()
+    form: str = ""
+    stamp: str = ""
     alternating: bool = False
+
+    @property
+    def case(self) -> Case | None:
+        """The range that the scale shows, where anything was designed."""
+        return self.cases[self.shown] if self.cases else None
 
     @property
     def as_built(self) -> Ohms:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass
+from difflib import get_close_matches
 
 from dialgen.circuit.conduction import Ideal, Junction, Threshold
 from dialgen.circuit.junction import Exponential
@@ -67,11 +68,16 @@ def read_diode(given: object) -> Diode:
     if not isinstance(given, str):
         raise ValueError(f"a diode is a name or a table, not {shown(given)}; write for example {_EXAMPLE}")
     if given not in _NAMED:
-        raise ValueError(f"{shown(given)} is not a diode known here; write for example {_EXAMPLE}")
+        raise ValueError(f"{shown(given)} is not a diode known here; {_name_mend(given)}")
     return _NAMED[given]
 
 
 DIODE = Written(read_diode, '"silicon"')
+
+
+def _name_mend(given: str) -> str:
+    near = get_close_matches(given.strip().lower(), _NAMED, n=1)
+    return f'did you mean "{near[0]}"?' if near else f"write for example {_EXAMPLE}"
 
 
 def _by_drop(given: Mapping[str, object]) -> Junction:

@@ -5,9 +5,10 @@ Of several ranges each has a resistor of its own, or all share a chain that is t
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
-from itertools import pairwise
+from itertools import accumulate, pairwise
 from typing import Annotated, ClassVar
 
 from dialgen.circuit.built import BUILT_EACH
@@ -15,12 +16,15 @@ from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
 from dialgen.circuit.names import LINE, MULTIPLIER, SECTION, SUPPRESS, SWAMP
 from dialgen.circuit.network import Branch, solve
 from dialgen.circuit.ranges import VOLT_RANGES, check_ranges, chosen
+from dialgen.circuit.slips import Fitted, refuse_slips, slip_remarks, worst_of
 from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
-from dialgen.errors import InputError
+from dialgen.errors import InputError, Key, Remark
 from dialgen.quantity import OHM, VOLT, VOLT_ABOVE, Amount, engineered
 from dialgen.stage import Affine, Stage
 
 _ROUNDING = 1e-12
+_SLIP = "and at range"
+_SLIPS = "and at the order: the smallest range first"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -58,26 +62,21 @@ class Multiplier(Circuit):
         """Return (signal - suppress)/(whole resistance)/Im, by Ohm's law.
 
         Raises:
-            InputError: the movement alone needs more voltage than the range has.
+            InputError: the movement alone needs more voltage than one of the ranges has, or what was
+                built does not make the ranges.
         """
-        coil_a = terminals.coil.current_a("a multiplier")
-        known_ohm = sum(self._known(terminals).values())
-        if self.built:
-            at = self._at(terminals) if self.ranges else 0
-            ohms = [each.value for each in self.built]
-            whole_ohm = known_ohm + (sum(ohms[: at + 1]) if self.chain else ohms[at])
-        else:
-            whole_ohm = known_ohm + self._designed_ohm(terminals, self._range_v(terminals))
+        coil_a, wanted_ohm = self._checked(terminals)
+        whole_ohm = self._wholes(terminals, self._built_ohm or self._parts_ohm(wanted_ohm))[
+            self._at(terminals)
+        ]
         return Affine(1.0 / (whole_ohm * coil_a), -self._suppress_v / (whole_ohm * coil_a))
 
     def design(self, terminals: Terminals) -> Design:
         """Return one resistor for each range, or the sections of the chain."""
-        coil_a = terminals.coil.current_a("a multiplier")
-        ranges_v = sorted(each.value for each in self.ranges) or [self._range_v(terminals)]
-        wanted_ohm = [self._designed_ohm(terminals, range_v) for range_v in ranges_v]
-        values_ohm = _sections(wanted_ohm) if self.chain else wanted_ohm
+        coil_a, wanted_ohm = self._checked(terminals)
+        ranges_v, values_ohm = self._ranges_v(terminals), self._parts_ohm(wanted_ohm)
         names = self._names(ranges_v)
-        built: list[float | None] = [each.value for each in self.built] or [None] * len(names)
+        built: list[float | None] = [*self._built_ohm] or [None] * len(names)
         known = self._known(terminals)
         work = [
             _worker(coil_a, self._suppress_v, names[: i + 1] if self.chain else names[i : i + 1])
@@ -86,7 +85,7 @@ class Multiplier(Circuit):
         cases = [
             Case(name=engineered(v, "V"), signal=v, work=each) for v, each in zip(ranges_v, work, strict=True)
         ]
-        at = self._at(terminals) if self.ranges else 0
+        at = self._at(terminals)
         swamp = Part(name=SWAMP, ohms=known[SWAMP], given=True)
         return Design(
             kind=self.kind,
@@ -100,20 +99,76 @@ class Multiplier(Circuit):
                 ),
                 *([swamp] if swamp.ohms else []),
             ),
-            cases=(cases[at], *cases[:at], *cases[at + 1 :]),
+            cases=tuple(cases),
+            shown=at,
             facts=self._facts(known),
         )
+
+    def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
+        """Return that what was built is far off."""
+        return slip_remarks(self._fitted(terminals, *self._checked(terminals)), self._slip)
+
+    def _checked(self, terminals: Terminals) -> tuple[float, list[float]]:
+        """Return the coil's current, and what each range wants in series; refuse what is no design."""
+        coil_a = terminals.coil.current_a("a multiplier")
+        wanted_ohm = [self._designed_ohm(terminals, range_v) for range_v in self._ranges_v(terminals)]
+        self._at(terminals)
+        refuse_slips(self._fitted(terminals, coil_a, wanted_ohm), self._slip)
+        return coil_a, wanted_ohm
+
+    def _fitted(self, terminals: Terminals, coil_a: float, wanted_ohm: list[float]) -> tuple[Fitted, ...]:
+        if not self.built:
+            return ()
+        ranges_v = self._ranges_v(terminals)
+        drives = [
+            (range_v - self._suppress_v) / whole_ohm / coil_a
+            for range_v, whole_ohm in zip(ranges_v, self._wholes(terminals, self._built_ohm), strict=True)
+        ]
+        names, designed_ohm = self._names(ranges_v), self._parts_ohm(wanted_ohm)
+
+        def key(i: int) -> Key:
+            return ("built", i) if self.ranges else ("built",)
+
+        if self.chain:
+            return (worst_of(names, key, designed_ohm, self._built_ohm, drives),)
+        rows = enumerate(zip(names, designed_ohm, self._built_ohm, drives, strict=True))
+        return tuple(
+            Fitted(name=name, key=key(i), designed_ohm=designed, built_ohm=built, drives=(drive,))
+            for i, (name, designed, built, drive) in rows
+        )
+
+    @property
+    def _slip(self) -> str:
+        return _SLIPS if self.ranges else _SLIP
+
+    @property
+    def _built_ohm(self) -> tuple[float, ...]:
+        return tuple(each.value for each in self.built)
+
+    def _parts_ohm(self, wanted_ohm: Sequence[float]) -> list[float]:
+        """Return the resistors that put the wanted ohms in series: the sections of a chain."""
+        if not self.chain:
+            return list(wanted_ohm)
+        return [wanted_ohm[0], *(b - a for a, b in pairwise(wanted_ohm))]
+
+    def _wholes(self, terminals: Terminals, parts_ohm: Sequence[float]) -> list[float]:
+        """Return the whole resistance of every range with these resistors, coil and all."""
+        known_ohm = sum(self._known(terminals).values())
+        return [known_ohm + ohms for ohms in (accumulate(parts_ohm) if self.chain else parts_ohm)]
+
+    def _ranges_v(self, terminals: Terminals) -> list[float]:
+        return sorted(each.value for each in self.ranges) or [self._range_v(terminals)]
 
     @property
     def _suppress_v(self) -> float:
         return self.suppress.value if self.suppress else 0.0
 
     def _range_v(self, terminals: Terminals) -> float:
-        return terminals.range(self.range.value if self.range else None)
+        return terminals.range(self.range, "V", built=bool(self.built))
 
     def _at(self, terminals: Terminals) -> int:
         """Return which of the ranges, in ascending order, the scale shows."""
-        return chosen(self.ranges, self._range_v(terminals), "V")
+        return chosen(self.ranges, self._range_v(terminals), "V") if self.ranges else 0
 
     def _names(self, ranges_v: Sequence[float]) -> list[str]:
         if self.chain:
@@ -129,18 +184,42 @@ class Multiplier(Circuit):
         }
 
     def _designed_ohm(self, terminals: Terminals, range_v: float) -> float:
-        coil_a = terminals.coil.current_a("a multiplier")
-        known_ohm = sum(self._known(terminals).values())
-        ohms = (range_v - self._suppress_v) / coil_a - known_ohm
-        if ohms < -_ROUNDING * known_ohm:
+        coil_a, known = terminals.coil.current_a("a multiplier"), self._known(terminals)
+        left_v, known_ohm = range_v - self._suppress_v, sum(known.values())
+        if left_v <= 0:
             raise InputError(
-                f"a range of {engineered(range_v, 'V')} leaves "
-                f"{engineered(range_v - self._suppress_v, 'V')}, but the coil and what is in series need "
-                f"{engineered(known_ohm * coil_a, 'V')}; take a larger range or a more sensitive movement",
+                f"the zero is suppressed up to {engineered(self._suppress_v, 'V')}, which leaves nothing of "
+                f"a range of {engineered(range_v, 'V')}; take a smaller suppress or a larger range",
+                ("suppress",),
                 ("range",),
-                RESISTANCE_KEY,
             )
+        ohms = left_v / coil_a - known_ohm
+        if ohms < -_ROUNDING * known_ohm:
+            raise self._too_small(coil_a, known, range_v)
         return max(ohms, 0.0)
+
+    def _too_small(self, coil_a: float, known: Ohms, range_v: float) -> InputError:
+        """Return why a range has no multiplier, and the keys that would mend it."""
+        left_v = range_v - self._suppress_v
+        needed = ", ".join(
+            f"{engineered(ohms * coil_a, 'V', 4)} for the {name}" for name, ohms in known.items() if ohms
+        )
+        leaves = f" leaves {engineered(left_v, 'V', 4)}" if self.suppress else ""
+        lacks = f"a range of {engineered(range_v, 'V', 4)}{leaves} has too little: it takes {needed}"
+        spare_ohm = left_v / coil_a - known[COIL]
+        others = [name for name in (LINE, SWAMP) if known[name]]
+        if others and spare_ohm > 0:
+            names = " and ".join(others)
+            return InputError(
+                f"{lacks}; with this movement {names} may have {_floored(spare_ohm)} at most",
+                *((name,) for name in others),
+                ("range",),
+            )
+        index = [i for i, each in enumerate(self.ranges) if each.value == range_v]
+        keys: list[Key] = [("ranges", index[0])] if index else [("range",)]
+        keys += [("suppress",)] if self.suppress else []
+        mend = "take a larger range" if self.range or self.ranges else "give a range that has enough"
+        return InputError(f"{lacks}; {mend}, or take a more sensitive movement", *keys, RESISTANCE_KEY)
 
     def _facts(self, known: Ohms) -> tuple[Fact, ...]:
         facts = []
@@ -153,9 +232,10 @@ class Multiplier(Circuit):
         return tuple(facts)
 
 
-def _sections(wanted_ohm: Sequence[float]) -> list[float]:
-    """Return the sections of a chain whose sums from the coil outwards are the wanted resistances."""
-    return [wanted_ohm[0], *(b - a for a, b in pairwise(wanted_ohm))]
+def _floored(ohms: float) -> str:
+    """Return a resistance in three digits, rounded down so that it is still enough."""
+    step = 10.0 ** (math.floor(math.log10(ohms)) - 2)
+    return engineered(math.floor(ohms / step) * step, "Ω", 3)
 
 
 def _worker(coil_a: float, suppress_v: float, names: Sequence[str]) -> Callable[[Ohms, float], Working]:

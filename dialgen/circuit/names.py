@@ -13,6 +13,7 @@ SERIES, ZERO = "series resistor", "zero adjuster"
 FEED, FULL = "feed resistor", "full-scale adjuster"
 ARM = "arm"
 
+RATED_CURRENT = "rated current"
 SECONDARY = "secondary at full scale"
 SUPPRESS = "suppressed zero"
 BATTERY = "battery"

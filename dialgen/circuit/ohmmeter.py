@@ -2,31 +2,31 @@
 
 from __future__ import annotations
 
-import math
 from dataclasses import dataclass
 from typing import Annotated, ClassVar, Literal
 
 import numpy as np
 
 from dialgen.circuit.cell import cell_of, check_cell, undesigned
-from dialgen.circuit.chain import Chain
 from dialgen.circuit.design import COIL, Design
+from dialgen.circuit.ohm_chain import OhmChain
 from dialgen.circuit.ranges import MOST_RANGES
 from dialgen.circuit.series_ohmmeter import range_name, series_design
 from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
 from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, Listed, Number, engineered
-from dialgen.stage import Array, Span, Stage
+from dialgen.stage import POSITIVE, Array, Span, Stage
 
 _ROUND = 1e-9
+_OUTSIDE = "no resistance is below 0 Ω"
 
 
 def _in_order(times: tuple[float, ...]) -> tuple[float, ...]:
-    """Return the ranges with ×1 first, then ascending."""
+    """Return the ranges ascending."""
     if len(set(times)) < len(times):
         raise ValueError("a range is there twice; list each once, such as [1, 10, 100]")
-    return tuple(sorted(times, key=lambda each: (each != 1.0, each)))
+    return tuple(sorted(times))
 
 
 TIMES = Listed(Number("times", 1e-3, 1e6).read, 1, MOST_RANGES, "[1, 10, 100]", alone=True, then=_in_order)
@@ -72,11 +72,11 @@ class SeriesOhmmeter(Circuit):
         chain = self._chain(self.battery, terminals.coil)
         self._check_drive(terminals.coil)
         chain.check()
-        return series_design(self.kind, chain.lifted(), self.half.value, self.times)
+        return series_design(self.kind, chain.lifted(), self.half.value, sorted(self.times))
 
-    def _chain(self, battery: Amount, coil: Coil) -> Chain:
+    def _chain(self, battery: Amount, coil: Coil) -> OhmChain:
         """Return the ohmmeter of the largest range."""
-        return Chain(
+        return OhmChain(
             coil_a=coil.current_a("an ohmmeter's design"),
             coil_ohm=coil.resistance_ohm("an ohmmeter's design"),
             cell=cell_of(battery, self.worn),
@@ -157,16 +157,16 @@ def _undesigned(kind: str, half: Amount, coil: Coil) -> Design:
 
 @dataclass(frozen=True, slots=True)
 class _SeriesStage:
+    outside: ClassVar[str] = _OUTSIDE
     half_ohm: float
 
     @property
     def domain(self) -> Span:
-        # Below zero ohms down to -half: a pointer beyond full scale, with the zero set too high.
-        return (-self.half_ohm, math.inf)
+        return POSITIVE
 
     @property
     def image(self) -> Span:
-        return (0.0, math.inf)
+        return (0.0, 1.0)
 
     def forward(self, x: Array) -> Array:
         with np.errstate(divide="ignore"):
@@ -179,15 +179,16 @@ class _SeriesStage:
 
 @dataclass(frozen=True, slots=True)
 class _ShuntStage:
+    outside: ClassVar[str] = _OUTSIDE
     half_ohm: float
 
     @property
     def domain(self) -> Span:
-        return (-self.half_ohm, math.inf)
+        return POSITIVE
 
     @property
     def image(self) -> Span:
-        return (-math.inf, 1.0)
+        return (0.0, 1.0)
 
     def forward(self, x: Array) -> Array:
         with np.errstate(divide="ignore", invalid="ignore"):

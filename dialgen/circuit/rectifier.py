@@ -3,24 +3,25 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Mapping
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Annotated, ClassVar, Literal
 
 import numpy as np
 
 from dialgen.circuit.built import BUILT
-from dialgen.circuit.conduction import Curve
+from dialgen.circuit.connections import CONNECTIONS, coil_with_shunt
 from dialgen.circuit.design import COIL, Case, Design, Fact, Part
 from dialgen.circuit.diodes import DIODE, SILICON, Diode
 from dialgen.circuit.names import COIL_SHUNT, LEG, MULTIPLIER
-from dialgen.circuit.rectified import RectifierWork
-from dialgen.circuit.rectifying import CONNECTIONS, coil_with_shunt
+from dialgen.circuit.rectifier_stage import RectifierStage
+from dialgen.circuit.rectifier_work import RectifierWork
+from dialgen.circuit.slips import Fitted, is_near, refuse_slips, slip_remarks
 from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
 from dialgen.errors import InputError, Remark
 from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, engineered
 from dialgen.roots import bracketed_roots
-from dialgen.stage import Array, Span, Stage
+from dialgen.stage import Array, Stage
 
 _LEGS = (f"{LEG} 1", f"{LEG} 2")
 _PURPOSE = "a rectifier instrument"
@@ -30,38 +31,7 @@ _BEYOND = 10.0
 _FIRST_MOVE = 0.01
 _HIGHER = np.geomspace(1.0, 1e9, 31)
 _LEAST_DIGITS = 4
-
-
-@dataclass(frozen=True, slots=True, eq=False)
-class _RectifierStage:
-    """Drive by RMS volts, which have no sign.
-
-    Args:
-        curve: the mean current of a pulse by the peak that drives it.
-        into: that peak by a volt RMS at the terminals.
-        gain: drive by the mean current of a pulse.
-        most_v: the largest signal.
-    """
-
-    curve: Curve
-    into: float
-    gain: float
-    most_v: float
-
-    @property
-    def domain(self) -> Span:
-        return (0.0, self.most_v)
-
-    @property
-    def image(self) -> Span:
-        return (0.0, float(self.forward(np.array(self.most_v))))
-
-    def forward(self, x: Array) -> Array:
-        within = (x >= 0) & (x <= self.most_v)
-        return np.where(within, self.curve.mean_a(np.where(within, x, 0.0) * self.into) * self.gain, np.nan)
-
-    def inverse(self, y: Array) -> Array:
-        return self.curve.peak_v(y / self.gain) / self.into
+_SLIP = "and at range"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -94,13 +64,15 @@ class Rectifier(Circuit):
         """Return the mean coil current over Im, for sines up to ten times the range.
 
         Raises:
-            InputError: even without a multiplier the coil does not get its current at the range.
+            InputError: even without a multiplier the coil does not get its current at the range, or what
+                was built does not make the range.
         """
-        multiplier_ohm = self.built.value if self.built else self._designed_ohm(terminals)
-        return self._stage(terminals, multiplier_ohm)
+        self._check(terminals)
+        return self._stage(terminals, self.built.value if self.built else self._designed_ohm(terminals))
 
     def design(self, terminals: Terminals) -> Design:
         """Return multiplier, coil shunt and legs, all of which the diodes make differ from a DC meter's."""
+        self._check(terminals)
         ohms = self._ohms(terminals)
         range_v, coil_a = self._range_v(terminals), terminals.coil.current_a(_PURPOSE)
         worker = RectifierWork(CONNECTIONS[self.rectifier], self.diode.junction, coil_a)
@@ -126,11 +98,12 @@ class Rectifier(Circuit):
                 ),
                 *self._diode_facts(),
             ),
+            form=self.rectifier,
             alternating=True,
         )
 
     def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
-        """Return that a typical diode was assumed, and below what voltage a threshold diode is dead."""
+        """Return that a typical diode was assumed, where a threshold diode is dead, and a slip in built."""
         texts = []
         if self.diode.typical:
             texts.append(
@@ -143,7 +116,45 @@ class Rectifier(Circuit):
                 f"below {engineered(self._dead_v, 'V', 3)} RMS{behind} these diodes pass nothing and the "
                 "pointer rests; diodes by saturation and ideality bend the foot of the scale as real ones do"
             )
-        return tuple(Remark(text, ("diode",)) for text in texts)
+        return (
+            *(Remark(text, ("diode",)) for text in texts),
+            *slip_remarks(self._fitted(terminals), _SLIP),
+        )
+
+    def _check(self, terminals: Terminals) -> None:
+        """Refuse a range that no multiplier gives, and one that the multiplier as built does not."""
+        range_v = self._range_v(terminals)
+        most = float(self._drive(terminals, np.array(0.0), np.array(range_v)))
+        if most < 1.0 - _ROUNDING:
+            self._refuse(terminals, range_v, most)
+        refuse_slips(self._fitted(terminals), _SLIP)
+
+    def _fitted(self, terminals: Terminals) -> tuple[Fitted, ...]:
+        """Return the multiplier as built; nothing where there is nothing to say of it."""
+        if not self.built:
+            return ()
+        range_v, built_ohm = self._range_v(terminals), self.built.value
+        drive = float(self._drive(terminals, np.array(built_ohm), np.array(range_v)))
+        if is_near(drive):
+            return ()
+        designed_ohm = self._designed_ohm(terminals)
+        return (
+            Fitted(
+                name=MULTIPLIER,
+                key=("built",),
+                designed_ohm=designed_ohm,
+                built_ohm=built_ohm,
+                drives=(drive,),
+            ),
+        )
+
+    def _drive(self, terminals: Terminals, multiplier_ohm: Array, signal_v: Array) -> Array:
+        """Return the drive with a multiplier at a signal, both of one shape."""
+        coil_ohm, wanted_a = self._wanted(terminals)
+        connection = CONNECTIONS[self.rectifier]
+        ohms, factor = connection.seen(multiplier_ohm, coil_ohm, self._leg_ohm)
+        peak_v = math.sqrt(2) * factor * signal_v
+        return self.diode.junction.averages(peak_v, ohms, connection.junctions).mean_a / wanted_a
 
     @property
     def _dead_v(self) -> float:
@@ -155,43 +166,33 @@ class Rectifier(Circuit):
         factor = float(connection.seen(np.array(0.0), 0.0, self._leg_ohm or 1.0)[1])
         return connection.junctions * self.diode.junction.threshold_v / factor / math.sqrt(2)
 
-    def _stage(self, terminals: Terminals, multiplier_ohm: float) -> _RectifierStage:
+    def _stage(self, terminals: Terminals, multiplier_ohm: float) -> RectifierStage:
         coil_ohm, wanted_a = self._wanted(terminals)
         connection = CONNECTIONS[self.rectifier]
         ohms, factor = connection.seen(np.array(multiplier_ohm), coil_ohm, self._leg_ohm)
         most_v = _BEYOND * max(self._range_v(terminals), abs(terminals.signal(terminals.full_value)))
         into = math.sqrt(2) * float(factor)
         curve = self.diode.junction.curve(float(ohms), connection.junctions, into * most_v)
-        return _RectifierStage(curve, into, 1.0 / wanted_a, most_v)
+        return RectifierStage(curve, into, 1.0 / wanted_a, most_v)
 
     def _designed_ohm(self, terminals: Terminals) -> float:
         """Return the multiplier with which the mean coil current at the range is the movement's."""
         range_v = self._range_v(terminals)
-        coil_ohm, wanted_a = self._wanted(terminals)
-        connection, junction = CONNECTIONS[self.rectifier], self.diode.junction
-
-        def drive(multiplier_ohm: Array, signal_v: Array) -> Array:
-            ohms, factor = connection.seen(multiplier_ohm, coil_ohm, self._leg_ohm)
-            peak_v = math.sqrt(2) * factor * signal_v
-            return junction.averages(peak_v, ohms, connection.junctions).mean_a / wanted_a
-
-        most = float(drive(np.array(0.0), np.array(range_v)))
-        if most < 1.0 - _ROUNDING:
-            self._refuse(range_v, most, drive)
-        if most <= 1.0:
+        if float(self._drive(terminals, np.array(0.0), np.array(range_v))) <= 1.0:
             return 0.0
         # Diodes that drop nothing, and nothing else in the way, would need this much.
-        whole_ohm = 2 / math.pi * math.sqrt(2) * range_v / wanted_a
+        whole_ohm = 2 / math.pi * math.sqrt(2) * range_v / self._wanted(terminals)[1]
         found = bracketed_roots(
-            lambda ohms: 1.0 / drive(ohms, np.full_like(ohms, range_v)),
+            lambda ohms: 1.0 / self._drive(terminals, ohms, np.full_like(ohms, range_v)),
             np.array([0.0, whole_ohm]),
             np.array([1.0]),
         )
         return float(found[0])
 
-    def _refuse(self, range_v: float, most: float, drive: Callable[[Array, Array], Array]) -> None:
-        ranges_v = range_v * _HIGHER
-        least_v = bracketed_roots(lambda v: drive(np.zeros_like(v), v), ranges_v, np.array([1.0]))[0]
+    def _refuse(self, terminals: Terminals, range_v: float, most: float) -> None:
+        least_v = bracketed_roots(
+            lambda v: self._drive(terminals, np.zeros_like(v), v), range_v * _HIGHER, np.array([1.0])
+        )[0]
         # Rounded up, so that the range of the message works.
         least = engineered(least_v * (1 + 0.5 * 10.0 ** (1 - _LEAST_DIGITS)), "V", _LEAST_DIGITS)
         raise InputError(
@@ -204,14 +205,7 @@ class Rectifier(Circuit):
         )
 
     def _range_v(self, terminals: Terminals) -> float:
-        range_v = terminals.range(self.range.value if self.range else None)
-        if not range_v > 0:
-            raise InputError(
-                f"a rectifier shows RMS volts, which are above 0, and the scale ends at {range_v:g} V; "
-                'give range = "10 V"',
-                ("range",),
-            )
-        return range_v
+        return terminals.range(self.range, "V", built=bool(self.built))
 
     def _wanted(self, terminals: Terminals) -> tuple[float, float]:
         """Return the ohms of coil and shunt, and the mean of a pulse that is full deflection."""

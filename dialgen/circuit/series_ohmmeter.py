@@ -14,14 +14,14 @@ import math
 from collections.abc import Callable, Sequence
 
 from dialgen.circuit.cell import Adjuster, life_facts, travel_facts
-from dialgen.circuit.chain import Chain
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
 from dialgen.circuit.names import BATTERY, SERIES, SHUNT, ZERO
 from dialgen.circuit.network import Branch, solve
+from dialgen.circuit.ohm_chain import OhmChain
 from dialgen.quantity import plain_number
 
 _ROUND = 1e-9
-_OWN = "the cell's own resistance counts as part of it (common practice)"
+_OWN = "new; its own resistance counts as part of half scale (common practice)"
 
 
 def range_name(times: float) -> str:
@@ -33,14 +33,14 @@ def range_name(times: float) -> str:
     return f"×{plain_number(times)}"
 
 
-def series_design(kind: str, chain: Chain, half_ohm: float, times: Sequence[float]) -> Design:
+def series_design(kind: str, chain: OhmChain, half_ohm: float, times: Sequence[float]) -> Design:
     """Return parts, cases and facts of a series ohmmeter.
 
     Args:
         kind: the circuit's name.
         chain: of the largest range, or above it.
         half_ohm: the half-scale resistance of the range ×1.
-        times: the ranges, first the one that the scale shows.
+        times: the ranges, ascending; the scale shows ×1, or else the first.
 
     A range's shunt across the chain has to leave k·half of its H: H·k·half/(H - k·half).
     """
@@ -48,9 +48,7 @@ def series_design(kind: str, chain: Chain, half_ohm: float, times: Sequence[floa
     set_ohm = chain.adjusted_ohm(chain.cell.new_v)
     halves = {k: k * half_ohm for k in times}
     # A range of the chain's own resistance has no shunt.
-    switched = {
-        k: f"{SHUNT} {range_name(k)}" for k in sorted(times) if halves[k] < chain.half_ohm * (1 - _ROUND)
-    }
+    switched = {k: f"{SHUNT} {range_name(k)}" for k in times if halves[k] < chain.half_ohm * (1 - _ROUND)}
     ohms = {
         SERIES: chain.series_ohm if chain.across or not found else found.fixed_ohm,
         SHUNT: found.fixed_ohm if chain.across and found else chain.shunt_ohm(chain.cell.new_v),
@@ -78,40 +76,30 @@ def series_design(kind: str, chain: Chain, half_ohm: float, times: Sequence[floa
             )
             for k in times
         ),
+        shown=times.index(1.0) if 1.0 in times else 0,
         facts=(*_current_facts(chain, halves), *_cell_facts(chain, halves, found)),
+        form="across" if chain.across else "series",
     )
 
 
-def _current_facts(chain: Chain, halves: dict[float, float]) -> tuple[Fact, ...]:
-    shorts = tuple(
+def _current_facts(chain: OhmChain, halves: dict[float, float]) -> tuple[Fact, ...]:
+    times, half_ohm = min(halves.items())
+    least = "; less on the others" if len(halves) > 1 else ""
+    return (
+        Fact(name=BATTERY, value=chain.cell.new_v, unit="V", note=_OWN),
         Fact(
-            name=f"test current{_behind(k, halves)}",
+            name=f"test current{_behind(times, halves)}",
             value=chain.cell.new_v / half_ohm,
             unit="A",
-            note="through the unknown at zero ohms, and the battery's",
-        )
-        for k, half_ohm in halves.items()
-    )
-    return (
-        Fact(name=BATTERY, value=chain.cell.new_v, unit="V", note="new"),
-        *shorts,
-        Fact(name="voltage at open terminals", value=chain.cell.new_v, unit="V", note="no current flows"),
+            note=f"through the unknown at zero ohms, and out of the battery{least}",
+        ),
     )
 
 
-def _cell_facts(chain: Chain, halves: dict[float, float], found: Adjuster | None) -> tuple[Fact, ...]:
-    new = tuple(
-        Fact(
-            name=f"half scale{_behind(k, halves)}, new cell",
-            value=half_ohm,
-            unit="Ω",
-            note=_OWN if half_ohm == min(halves.values()) else "",
-        )
-        for k, half_ohm in halves.items()
-    )
+def _cell_facts(chain: OhmChain, halves: dict[float, float], found: Adjuster | None) -> tuple[Fact, ...]:
     if found is None or chain.end_v is None:
         note = "that is all a new cell gives the coil; a higher battery or a smaller half makes room for one"
-        return (*new, Fact(name="no zero adjuster", value=chain.full_a, unit="A", note=note))
+        return (Fact(name="no zero adjuster", value=chain.full_a, unit="A", note=note),)
     worn_ohm = chain.half_at(chain.end_v)
     drift = {
         _behind(k, halves): (half_ohm, 1.0 / (1.0 / worn_ohm + 1.0 / half_ohm - 1.0 / chain.half_ohm))
@@ -124,12 +112,11 @@ def _cell_facts(chain: Chain, halves: dict[float, float], found: Adjuster | None
     note = "where the zero adjuster is at the end of its track"
     if not chain.across and 2 * chain.coil_v < chain.cell.new_v:
         # In series half scale drifts by 1 - Ew/E; across the coil by V/(E - V) of that.
-        note += '; zero = "across" would let half scale drift less'
+        note += '; zero = "across" would let readings drift less'
     return (
-        *new,
         *life_facts(chain.cell, chain.end_v, drift),
         *travel_facts(ZERO, shares),
-        Fact(name="lowest voltage for zero", value=chain.lowest_v(found), unit="V", note=note),
+        Fact(name=f"{BATTERY}, lowest", value=chain.lowest_v(found), unit="V", note=note),
     )
 
 
@@ -138,7 +125,7 @@ def _behind(k: float, halves: dict[float, float]) -> str:
     return f" {range_name(k)}" if len(halves) > 1 else ""
 
 
-def _worker(chain: Chain, share: float, switched: str | None) -> Callable[[Ohms, float], Working]:
+def _worker(chain: OhmChain, share: float, switched: str | None) -> Callable[[Ohms, float], Working]:
     """Return how a range works with the zero adjuster where a new cell has it.
 
     Args:

@@ -10,15 +10,23 @@ from typing import Annotated, ClassVar
 
 from dialgen.circuit.built import BUILT_ABOVE
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
-from dialgen.circuit.names import LEADS, SHUNT, SWAMP
+from dialgen.circuit.names import LEADS, RATED_CURRENT, SHUNT, SWAMP
 from dialgen.circuit.network import Branch, Feed, solve
+from dialgen.circuit.slips import Fitted, refuse_slips, slip_remarks
 from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
-from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, VOLT_ABOVE, Amount, Written, engineered, shown
+from dialgen.errors import InputError, Remark
+from dialgen.quantity import AMPERE, OHM, Amount, Measure, Written, engineered, plain_number, shown
 from dialgen.stage import Affine, Stage
 
 _EQUAL = 1e-12
 _NEAR_MATCH = 0.005
+_STAMP = "100 A/75 mV"
+_STAMPED = (
+    Measure("current", ("A",), _STAMP, above=0.0),
+    Measure("voltage", ("V",), _STAMP, above=0.0),
+)
+_CONTINUOUS = 2 / 3
+_SLIP = "and at range"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -33,6 +41,11 @@ class Rating:
         """Drop over current."""
         return self.drop_v / self.current_a
 
+    @property
+    def stamp(self) -> str:
+        """How it is stamped."""
+        return f"{engineered(self.current_a, 'A')}/{engineered(self.drop_v, 'V')}"
+
 
 def read_rating(text: object) -> Rating:
     """Return the rating written as current/voltage.
@@ -44,12 +57,12 @@ def read_rating(text: object) -> Rating:
     0.00075
     """
     if not isinstance(text, str) or len(parts := re.split(r"\s*/\s*", text)) != 2:
-        raise ValueError(f'{shown(text)} is not a shunt\'s rating; write for example "100 A/75 mV"')
-    current, drop = AMPERE.read(parts[0]), VOLT_ABOVE.read(parts[1])
+        raise ValueError(f'{shown(text)} is not a shunt\'s rating; write for example "{_STAMP}"')
+    current, drop = (measure.read(part) for measure, part in zip(_STAMPED, parts, strict=True))
     return Rating(current_a=current.value, drop_v=drop.value)
 
 
-RATED = Written(read_rating, '"100 A/75 mV"')
+RATED = Written(read_rating, f'"{_STAMP}"')
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -68,24 +81,19 @@ class Shunt(Circuit):
         """Return signal·Rs/(Rs + Rm')/Im (current division; Kirchhoff), Rm' the whole coil branch.
 
         Raises:
-            InputError: the range is below the movement's own current, or a bought shunt drops less
-                than the coil branch needs.
+            InputError: the range is below the movement's own current, a bought shunt drops less than the
+                coil branch needs, or what was built is no shunt for the range.
         """
-        coil_a = terminals.coil.current_a("a shunt")
-        if self.built and not self.rated:
-            shunt_ohm, branch_ohm = self.built.value, self._branch_ohm(terminals)
-            return Affine(shunt_ohm / (shunt_ohm + branch_ohm) / coil_a)
-        ohms = self._designed(terminals)
+        coil_a, ohms = self._checked(terminals)
         shunt_ohm = self.built.value if self.built else ohms[SHUNT]
         if math.isinf(shunt_ohm):
             return Affine(1.0 / coil_a)
-        branch_ohm = ohms[COIL] + ohms[SWAMP] + ohms[LEADS]
-        return Affine(shunt_ohm / (shunt_ohm + branch_ohm) / coil_a)
+        return Affine(shunt_ohm / (shunt_ohm + _branch_ohm(ohms)) / coil_a)
 
     def design(self, terminals: Terminals) -> Design:
         """Return shunt and swamping resistor; the shunt is infinite where the movement needs none."""
-        ohms, coil_a = self._designed(terminals), terminals.coil.current_a("a shunt")
-        range_a = terminals.range(self.range.value if self.range else None)
+        coil_a, ohms = self._checked(terminals)
+        range_a = self._range_a(terminals)
         built = self.built.value if self.built else None
         shunt = Part(name=SHUNT, ohms=ohms[SHUNT], built=built, given=self.rated is not None)
         swamp = Part(name=SWAMP, ohms=ohms[SWAMP], given=self.swamp is not None)
@@ -96,18 +104,54 @@ class Shunt(Circuit):
             ohms=ohms,
             parts=tuple(part for part in (shunt, swamp) if 0 < part.ohms < math.inf),
             cases=(Case(name=engineered(range_a, "A"), signal=range_a, work=_worker(coil_a)),),
-            facts=_leads_fact(ohms),
+            facts=(*_rating_fact(self.rated), *_leads_fact(ohms)),
+            stamp=self.rated.stamp if self.rated else "",
         )
 
-    def _branch_ohm(self, terminals: Terminals) -> float:
-        """Return the resistance of coil, leads and swamping resistor in series."""
-        parts = sum(part.value for part in (self.swamp, self.leads) if part)
-        return terminals.coil.resistance_ohm("a shunt") + parts
+    def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
+        """Return that a bought shunt carries more than its rating, or that what was built is far off."""
+        coil_a, ohms = self._checked(terminals)
+        return (
+            *self._overload(ohms, self._range_a(terminals) - coil_a),
+            *slip_remarks(self._fitted(terminals, coil_a, ohms), _SLIP),
+        )
+
+    def _range_a(self, terminals: Terminals) -> float:
+        return terminals.range(self.range, "A", built=bool(self.built))
+
+    def _checked(self, terminals: Terminals) -> tuple[float, Ohms]:
+        """Return the coil's current, and the ohms of every part as designed; refuse what is no design."""
+        coil_a, ohms = terminals.coil.current_a("a shunt"), self._designed(terminals)
+        refuse_slips(self._fitted(terminals, coil_a, ohms), _SLIP)
+        return coil_a, ohms
+
+    def _fitted(self, terminals: Terminals, coil_a: float, ohms: Ohms) -> tuple[Fitted, ...]:
+        if not self.built:
+            return ()
+        built_ohm = self.built.value
+        drive = built_ohm / (built_ohm + _branch_ohm(ohms)) * self._range_a(terminals) / coil_a
+        return (
+            Fitted(
+                name=SHUNT, key=("built",), designed_ohm=ohms[SHUNT], built_ohm=built_ohm, drives=(drive,)
+            ),
+        )
+
+    def _overload(self, ohms: Ohms, shunt_a: float) -> tuple[Remark, ...]:
+        if not self.rated or shunt_a <= self.rated.current_a * (1 + _NEAR_MATCH):
+            return ()
+        over, shunt_ohm = shunt_a / self.rated.current_a, self.built.value if self.built else ohms[SHUNT]
+        text = (
+            f"at full deflection this shunt carries {engineered(shunt_a, 'A', 3)} of the "
+            f"{engineered(self.rated.current_a, 'A')} it is made for, and has {_figure(over**2)} times its "
+            f"heat to get rid of, {engineered(shunt_a**2 * shunt_ohm, 'W', 3)}; take one for "
+            f"{engineered(shunt_a, 'A', 2)} or more"
+        )
+        return (Remark(text, ("rated",)),)
 
     def _designed(self, terminals: Terminals) -> Mapping[str, float]:
         """Return the ohms of every part as designed: a bought shunt's by its rating."""
         coil_a = terminals.coil.current_a("a shunt")
-        range_a = terminals.range(self.range.value if self.range else None)
+        range_a = self._range_a(terminals)
         if range_a < coil_a * (1 - _EQUAL):
             raise InputError(
                 f"a range of {engineered(range_a, 'A')} is below the movement's own "
@@ -117,12 +161,13 @@ class Shunt(Circuit):
                 CURRENT_KEY,
             )
         none_needed = range_a <= coil_a * (1 + _EQUAL) and not self.rated
-        if none_needed and terminals.coil.resistance is None:
+        if none_needed and terminals.coil.resistance is None and not self.built:
             # The whole current goes through the coil, whatever its resistance.
             return {SHUNT: math.inf, SWAMP: 0.0, LEADS: 0.0, COIL: 0.0}
-        branch_ohm = self._branch_ohm(terminals)
+        coil_ohm = terminals.coil.resistance_ohm("a shunt")
         leads_ohm = self.leads.value if self.leads else 0.0
         swamp_ohm = self.swamp.value if self.swamp else 0.0
+        branch_ohm = coil_ohm + leads_ohm + swamp_ohm
         if none_needed:
             shunt_ohm = math.inf
         elif self.rated:
@@ -131,7 +176,6 @@ class Shunt(Circuit):
                 swamp_ohm = self._designed_swamp(self.rated, coil_a, range_a, branch_ohm)
         else:
             shunt_ohm = coil_a * branch_ohm / (range_a - coil_a)
-        coil_ohm = terminals.coil.resistance_ohm("a shunt")
         return {SHUNT: shunt_ohm, SWAMP: swamp_ohm, LEADS: leads_ohm, COIL: coil_ohm}
 
     def _designed_swamp(self, rated: Rating, coil_a: float, range_a: float, known_ohm: float) -> float:
@@ -150,6 +194,24 @@ class Shunt(Circuit):
                 ("range",),
             )
         return swamp_ohm
+
+
+def _branch_ohm(ohms: Ohms) -> float:
+    """Return the resistance of coil, leads and swamping resistor in series."""
+    return ohms[COIL] + ohms[SWAMP] + ohms[LEADS]
+
+
+def _figure(value: float) -> str:
+    return plain_number(float(f"{value:.2g}"))
+
+
+def _rating_fact(rated: Rating | None) -> tuple[Fact, ...]:
+    if rated is None:
+        return ()
+    continuous = engineered(_CONTINUOUS * rated.current_a, "A", 3)
+    drop = engineered(rated.drop_v, "V")
+    note = f"drops {drop}; for good at most two thirds of it, {continuous} (common practice)"
+    return (Fact(name=RATED_CURRENT, value=rated.current_a, unit="A", note=note),)
 
 
 def _leads_fact(ohms: Ohms) -> tuple[Fact, ...]:

@@ -161,36 +161,41 @@ def shunt_design(kind: str, made: Fed) -> Design:
 
 
 def _current_facts(made: Fed) -> tuple[Fact, ...]:
-    short_a = made.cell.new_v / made.feed_ohm(made.cell.new_v)
     return (
-        Fact(name=BATTERY, value=made.cell.new_v, unit="V", note="new"),
-        Fact(name="test current", value=short_a, unit="A", note="through the unknown at zero ohms"),
-        Fact(name="voltage at open terminals", value=made.branch_v, unit="V"),
         Fact(
-            name="battery current, terminals open",
+            name=BATTERY,
+            value=made.cell.new_v,
+            unit="V",
+            note="new; its own resistance is part of the feed: take it off (common practice)",
+        ),
+        Fact(
+            name="test current",
+            value=made.cell.new_v / made.feed_ohm(made.cell.new_v),
+            unit="A",
+            note="through the unknown at zero ohms, and out of the battery",
+        ),
+        Fact(name="test voltage", value=made.branch_v, unit="V", note="at open terminals"),
+        Fact(
+            name="battery current, open",
             value=made.full_a,
             unit="A",
             note="flows as long as the meter is on; it needs a switch",
         ),
-        Fact(name="battery current, terminals shorted", value=short_a, unit="A"),
     )
 
 
 def _cell_facts(made: Fed, found: Adjuster | None) -> tuple[Fact, ...]:
-    note = "the cell's own resistance is part of the feed: take it off (common practice)"
-    new = Fact(name="half scale, new cell", value=made.half_ohm, unit="Ω", note=note)
     if found is None or made.end_v is None:
-        return (new,)
+        return ()
     shares = {
         "new": found.share(made.feed_ohm(made.cell.new_v)),
         "worn": found.share(made.feed_ohm(made.end_v)),
     }
     return (
-        new,
         *life_facts(made.cell, made.end_v, {"": (made.half_ohm, made.half_at(made.end_v))}),
         *travel_facts(FULL, shares),
         Fact(
-            name="lowest voltage for full scale",
+            name=f"{BATTERY}, lowest",
             value=made.branch_v + made.full_a * found.fixed_ohm,
             unit="V",
             note="where the full-scale adjuster is at the end of its track",

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable
 from dataclasses import dataclass
 from typing import ClassVar, Protocol
 
 from dialgen.circuit.design import Design
 from dialgen.errors import InputError, Remark
+from dialgen.quantity import Amount, engineered
 from dialgen.stage import Stage
 
 CURRENT_KEY = ("movement", "current")
@@ -68,15 +70,31 @@ class Terminals:
     full_value: float
     unit: str | None
 
-    def range(self, given: float | None) -> float:
-        """Return the range that is given, or the signal at the scale's end.
+    def range(self, given: Amount | None, unit: str, *, built: bool = False) -> float:
+        """Return the range that is given, or the signal at the scale's end, in ``unit``.
+
+        Of what was built already only the size of it counts: a scale may run backwards, as one of pH
+        does, and its marks follow what was built.
 
         Raises:
-            InputError: none is given and the scale has no finite signal at its end.
+            InputError: none is given, and the signal at the scale's end is not finite, or not above
+                nothing, so that it is no range.
         """
-        signal = self.signal(self.full_value) if given is None else given
-        if not abs(signal) < float("inf"):
+        if given is not None:
+            return given.value
+        signal = self.signal(self.full_value)
+        if not abs(signal) < math.inf:
             raise InputError("the scale has no finite end to take the range from; give range", ("range",))
+        if built and signal:
+            return abs(signal)
+        if signal <= 0:
+            there, most = (engineered(each, unit) for each in (signal, -signal))
+            mend = f'write range = "{most}"' if signal else "give range"
+            raise InputError(
+                f"the signal at the scale's end is {there}, and a range is above 0; {mend}, "
+                "what drives the pointer to full deflection",
+                ("range",),
+            )
         return signal
 
 

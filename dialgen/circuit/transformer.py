@@ -14,11 +14,16 @@ from dialgen.circuit.design import Case, Design, Fact, Ohms, Working
 from dialgen.circuit.names import SECONDARY
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.terminals import Circuit, Terminals
-from dialgen.errors import InputError
-from dialgen.quantity import AMPERE, OHM, Amount, Written, bare_number, engineered, shown
+from dialgen.errors import InputError, Remark
+from dialgen.quantity import AMPERE, OHM, Amount, Written, bare_number, engineered, plain_number, shown
 from dialgen.stage import Affine, Stage
 
 _LEAST_A, _MOST_A = 1e-6, 1e6
+_USUAL_A = 5.0
+"""The largest secondary that is sold; 1 A is the other usual one (common practice)."""
+
+_EXTENDED = 1.2
+"""What transformers carry for good, of their ratio, unless more is stamped on them (common practice)."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -32,6 +37,16 @@ class Ratio:
     def step_down(self) -> float:
         """Secondary amperes for one primary ampere."""
         return self.secondary_a / self.primary_a
+
+    @property
+    def stamp(self) -> str:
+        """How it is stamped."""
+        return f"{plain_number(self.primary_a)}/{plain_number(self.secondary_a)}"
+
+    @property
+    def turned(self) -> Ratio:
+        """The same, the other way round."""
+        return Ratio(self.secondary_a, self.primary_a)
 
 
 def read_ratio(text: object) -> Ratio:
@@ -102,6 +117,7 @@ class CurrentTransformer(Circuit):
             kind=self.kind,
             range=range_a,
             cases=(Case(name=engineered(range_a, "A"), signal=range_a, work=self._stepped(case.work)),),
+            stamp=self.ratio.stamp,
             facts=(
                 *secondary.facts,
                 Fact(name=SECONDARY, value=case.signal, unit="A"),
@@ -115,14 +131,38 @@ class CurrentTransformer(Circuit):
             alternating=True,
         )
 
+    def remarks(self, terminals: Terminals) -> tuple[Remark, ...]:
+        """Return that the ratio looks turned round or is gone beyond, or that what was built is far off."""
+        shunt, behind = self._behind(terminals)
+        return (*self._ratio_remarks(self._range_a(terminals)), *shunt.remarks(behind))
+
+    def _ratio_remarks(self, range_a: float) -> tuple[Remark, ...]:
+        ratio = self.ratio
+        if ratio.secondary_a > min(ratio.primary_a, _USUAL_A):
+            text = (
+                f"a ratio of {ratio.stamp} makes {engineered(ratio.secondary_a, 'A')} of "
+                f"{engineered(ratio.primary_a, 'A')}, and secondaries are of 5 A or 1 A (common practice); "
+                f'if it is turned round, write ratio = "{ratio.turned.stamp}"'
+            )
+            return (Remark(text, ("ratio",)),)
+        if range_a > _EXTENDED * ratio.primary_a:
+            text = (
+                f"at {engineered(range_a, 'A')} the secondary would give "
+                f"{engineered(range_a * ratio.step_down, 'A', 3)}, and a transformer of {ratio.stamp} is "
+                f"made for {engineered(ratio.secondary_a, 'A')}: it overheats, and saturates (common "
+                f"practice); take a range up to {engineered(ratio.primary_a, 'A')}, or another ratio"
+            )
+            return (Remark(text, ("range",) if self.range else ("ratio",)),)
+        return ()
+
     def _range_a(self, terminals: Terminals) -> float:
-        return terminals.range(self.range.value if self.range else None)
+        return terminals.range(self.range, "A", built=bool(self.built))
 
     def _behind(self, terminals: Terminals) -> tuple[Shunt, Terminals]:
         """Return the circuit on the secondary side, and the terminals it sees there."""
         step_down = self.ratio.step_down
         shunt = Shunt(
-            range=Amount(self.range.value * step_down, "A") if self.range else None,
+            range=Amount(self._range_a(terminals) * step_down, "A"),
             built=self.built,
             swamp=self.swamp,
             leads=self.leads,

@@ -27,6 +27,8 @@ from dialgen.schematic.placing import (
     PAD_MM,
     column,
     in_line,
+    led_reach_mm,
+    led_terminal,
     rails,
     reach_mm,
     series_width_mm,
@@ -73,24 +75,26 @@ class Ends:
         lower: the text of the lower one.
         plain: how far the rails go on before anything is on them, mm.
         between: what is written between the two: what is connected there.
+        line: what leads to the lower one from outside.
     """
 
     upper: str
     lower: str
     plain: float = 4.0
     between: str = ""
+    line: Item | None = None
     depth_mm: float = 0.0
 
     def lay(self, x: float, depth_mm: float, last: bool) -> tuple[Pieces, float]:
         """Set both terminals one above the other."""
-        beside_mm = max(width_mm(self.upper), width_mm(self.lower)) + GAP_MM + TERMINAL_MM
+        beside_mm = led_reach_mm([self.upper], self.lower, self.line)
         at_x = x + max(beside_mm, width_mm(self.between) / 2)
         right = at_x + TERMINAL_MM + self.plain
         between = Words(self.between, (at_x, -(depth_mm + LETTER_MM) / 2))
         return (
             *((between,) if self.between else ()),
             *terminal(self.upper, (at_x, 0.0)),
-            *terminal(self.lower, (at_x, -depth_mm)),
+            *led_terminal(self.lower, (at_x, -depth_mm), self.line),
             *rails(at_x + TERMINAL_MM, right, depth_mm),
         ), right
 

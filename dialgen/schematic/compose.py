@@ -2,8 +2,6 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
-
 from dialgen.circuit.design import Design
 from dialgen.drawing import Drawing
 from dialgen.errors import InputError
@@ -24,26 +22,19 @@ Box = tuple[float, float, float, float]
 """Left, bottom, right and top in millimetres."""
 
 
-def draw(
-    design: Design,
-    *,
-    title: str = "",
-    coil_text: str = "",
-    values: Mapping[str, str] | None = None,
-) -> Drawing:
+def draw(design: Design, *, title: str = "", coil: tuple[str, ...] = ()) -> Drawing:
     """Return the schematic of a design, on a page as large as it needs.
 
     Args:
         design: the circuit.
         title: what is written above it.
-        coil_text: the movement's current and resistance, "1 mA 75 Ω".
-        values: a text to write in place of a part's value, by the part's name.
+        coil: what is written beside the movement, in lines: "1 mA", "75 Ω".
 
     Raises:
         InputError: no layout is known for the circuit's kind.
         CharacterError: a text has a character that no font has.
     """
-    pieces = laid(design, coil_text, values)
+    pieces = laid(design, coil)
     left, bottom, right, top = _box(pieces)
     if title:
         heading = Words(title, ((left + right) / 2, top + _TITLE_GAP_MM), (0.5, 0.0), TITLE_MM)
@@ -61,13 +52,13 @@ def draw(
     ).with_margin(MARGIN_MM)
 
 
-def laid(design: Design, coil_text: str, values: Mapping[str, str] | None = None) -> Pieces:
+def laid(design: Design, coil: tuple[str, ...]) -> Pieces:
     """Return the pieces of a design's picture; raises as `draw` does."""
     if design.kind not in LAYOUTS:
         raise InputError(
             f"there is no picture of the circuit {design.kind!r}; one of {', '.join(LAYOUTS)} can be drawn"
         )
-    plan = Plan(design, coil_text, values or {})
+    plan = Plan(design, coil)
     pieces = LAYOUTS[design.kind](plan)
     return (*pieces, *_further(plan, pieces))
 

@@ -34,11 +34,10 @@ def shunt(plan: Plan) -> Pieces:
 def universal_shunt(plan: Plan) -> Pieces:
     """Return the string of sections with a terminal for each range, the smallest range at its head."""
     sections = plan.items(SECTION)[::-1]
-    rising = sorted(plan.design.cases, key=lambda case: case.signal)
     (total,) = plan.named(TOTAL)
     string = Tapped(
         tuple(sections),
-        tuple(plan.at_plus(case.name) for case in rising),
+        tuple(plan.at_plus(case.name) for case in plan.design.cases),
         plan.lower,
         (plan.label(total), len(sections)),
     )
@@ -47,7 +46,7 @@ def universal_shunt(plan: Plan) -> Pieces:
 
 def current_transformer(plan: Plan) -> Pieces:
     """Return the transformer with its secondary earthed, and what is across it."""
-    text = engineered(plan.known(SECONDARY), "A")
+    text = plan.design.stamp, "secondary", engineered(plan.known(SECONDARY), "A"), "at full scale"
     return ladder(
         [
             Transformer(plan.upper, plan.lower, text),

@@ -17,8 +17,6 @@ _UNKNOWN = "unknown"
 _PLAIN_MM = 6.0
 """Wire behind the test terminals, beside which the word between them has room."""
 
-_ALL = 0.999
-
 
 def series_ohmmeter(plan: Plan) -> Pieces:
     """Return cell, range shunts, series resistor, zero adjuster and movement behind the test terminals.
@@ -28,7 +26,7 @@ def series_ohmmeter(plan: Plan) -> Pieces:
     across = [part for part in plan.named(SHUNT) if part.name == SHUNT]
     ranged = [part for part in plan.named(SHUNT) if part.name != SHUNT]
     zero = plan.items(ZERO)
-    in_shunt = zero if _zero_is_across(plan) else []
+    in_shunt = zero if plan.design.form == "across" else []
     column = (*map(plan.item, across), *in_shunt)
     in_series = [*_at_least(plan, SERIES), *([] if in_shunt else zero)]
     return ladder(
@@ -77,12 +75,6 @@ def _at_least(plan: Plan, name: str) -> list[Item]:
     return plan.items(name) or ([] if plan.design.parts else [Item(Kind.RESISTOR, Label(name))])
 
 
-def _zero_is_across(plan: Plan) -> bool:
-    """Tell where the zero adjuster is: in series it carries all that the series resistor does."""
-    current_a = plan.currents_a()
-    return current_a.get(ZERO, 0.0) < _ALL * current_a.get(SERIES, 0.0)
-
-
 def _cell(plan: Plan, turned: bool = False) -> Item:
     """Return the battery with its voltage, where the design tells it."""
     fact = plan.fact(BATTERY)
@@ -91,10 +83,11 @@ def _cell(plan: Plan, turned: bool = False) -> Item:
 
 
 def _ranges(plan: Plan, shunts: list[Part]) -> list[Block]:
-    """Return the switch for the shunts of the smaller ranges; the largest has none."""
+    """Return the switch for the shunts of the smaller ranges; the largest may have none."""
+    if len(plan.design.cases) == 1:
+        return [Across((plan.item(part),)) for part in shunts]
     if not shunts:
         return []
-    names = [case.name for case in sorted(plan.design.cases, key=lambda case: float(case.name.lstrip("×")))]
     by_range = {part.name.removeprefix(f"{SHUNT} "): plan.item(part) for part in shunts}
-    positions = tuple(Position(name, by_range.get(name)) for name in names)
-    return [SwitchedAcross(positions, names.index(plan.design.cases[0].name))]
+    positions = tuple(Position(case.name, by_range.get(case.name)) for case in plan.design.cases)
+    return [SwitchedAcross(positions, plan.design.shown)]

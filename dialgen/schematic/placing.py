@@ -19,6 +19,7 @@ from dialgen.schematic.pieces import (
     Words,
     height_mm,
     stack,
+    width_mm,
 )
 
 LEAD_MM = 3.0
@@ -39,6 +40,29 @@ def terminal(text: str, at: Point) -> Pieces:
         return ()
     place = at[0] - TERMINAL_MM - GAP_MM, at[1] - LETTER_MM / 2
     return Terminal(at, text), Words(text, place, (1.0, 0.0))
+
+
+def led_terminal(text: str, at: Point, line: Item | None) -> Pieces:
+    """Return a terminal to which a line leads from outside; its text stands where the line begins.
+
+    Without a line it is a terminal like any other.
+    """
+    if line is None:
+        return terminal(text, at)
+    near = at[0] - TERMINAL_MM
+    far = near - series_width_mm(line)
+    return (
+        Terminal(at),
+        *in_line(line, (far, at[1]), near),
+        *terminal(text, (far - TERMINAL_MM, at[1])),
+    )
+
+
+def led_reach_mm(texts: Sequence[str], lower: str, line: Item | None) -> float:
+    """Return how far terminals reach to the left, the lower one of them with its line."""
+    beside_mm = [width_mm(text) for text in texts]
+    led_mm = 0.0 if line is None else series_width_mm(line) + 2 * TERMINAL_MM
+    return max(0.0, *beside_mm, width_mm(lower) + led_mm) + GAP_MM + TERMINAL_MM
 
 
 def rails(left: float, right: float, depth_mm: float) -> Pieces:

@@ -14,9 +14,17 @@ from dialgen.schematic.pieces import (
     Pieces,
     Wire,
     stack,
-    width_mm,
 )
-from dialgen.schematic.placing import PAD_MM, column, levels, rails, reach_mm, slot_mm, terminal
+from dialgen.schematic.placing import (
+    PAD_MM,
+    column,
+    led_reach_mm,
+    led_terminal,
+    levels,
+    rails,
+    reach_mm,
+    slot_mm,
+)
 
 _TAP_MM = 10.0
 
@@ -30,12 +38,14 @@ class Tapped:
         taps: what is written at the terminal of the joint above each item; "" for no tap there.
         lower: what is written at the terminal of the string's foot.
         total: a label for some of the items together, and how many of them, from above.
+        line: what leads to the lower terminal from outside.
     """
 
     items: tuple[Item, ...]
     taps: tuple[str, ...]
     lower: str
     total: tuple[Label, int] | None = None
+    line: Item | None = None
 
     @property
     def depth_mm(self) -> float:
@@ -44,13 +54,14 @@ class Tapped:
 
     def lay(self, x: float, depth_mm: float, last: bool) -> tuple[Pieces, float]:
         """Set the string, its taps, and the bracket of the total."""
-        terminal_x = x + max(width_mm(text) for text in (*self.taps, self.lower)) + GAP_MM + TERMINAL_MM
+        terminal_x = x + led_reach_mm(self.taps, self.lower, self.line)
         at_x = terminal_x + TERMINAL_MM + _TAP_MM
         joints_y = levels(0.0, -depth_mm, self.items)
         pieces = [*column(at_x, 0.0, -depth_mm, self.items)]
         for i, (text, y) in enumerate(zip((*self.taps, self.lower), joints_y, strict=True)):
             if text:
-                pieces += terminal(text, (terminal_x, y))
+                line = self.line if i == len(self.items) else None
+                pieces += led_terminal(text, (terminal_x, y), line)
                 pieces.append(Wire(((terminal_x + TERMINAL_MM, y), (at_x, y))))
                 if not last or 0 < i < len(self.items):
                     pieces.append(Joint((at_x, y)))

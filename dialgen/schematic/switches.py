@@ -22,6 +22,8 @@ from dialgen.schematic.pieces import (
 from dialgen.schematic.placing import (
     PAD_MM,
     in_line,
+    led_reach_mm,
+    led_terminal,
     rails,
     reach_mm,
     row_pitch_mm,
@@ -47,12 +49,14 @@ class Switched:
         chosen: which of them the switch stands on.
         upper: what is written at the terminal of the switch.
         lower: what is written at the terminal of the lower rail.
+        line: what leads to that one from outside.
     """
 
     items: tuple[Item, ...]
     chosen: int
     upper: str
     lower: str
+    line: Item | None = None
 
     @property
     def depth_mm(self) -> float:
@@ -62,7 +66,7 @@ class Switched:
     def lay(self, x: float, depth_mm: float, last: bool) -> tuple[Pieces, float]:
         """Set terminals, arm, contacts, rows and the bus behind them."""
         pitch = row_pitch_mm(self.items)
-        terminal_x = x + max(width_mm(self.upper), width_mm(self.lower)) + GAP_MM + TERMINAL_MM
+        terminal_x = x + led_reach_mm([self.upper], self.lower, self.line)
         pivot_x = terminal_x + TERMINAL_MM + 6.0
         contact_x = pivot_x + _ARM_MM[0]
         bus_x = contact_x + TERMINAL_MM + max(series_width_mm(item) for item in self.items)
@@ -72,7 +76,7 @@ class Switched:
             *terminal(self.upper, (terminal_x, pivot_y)),
             Wire(((terminal_x + TERMINAL_MM, pivot_y), (pivot_x - TERMINAL_MM, pivot_y))),
             *_arm((pivot_x, pivot_y), (contact_x, rows_y[self.chosen])),
-            *terminal(self.lower, (terminal_x, -depth_mm)),
+            *led_terminal(self.lower, (terminal_x, -depth_mm), self.line),
             Wire(((terminal_x + TERMINAL_MM, -depth_mm), (bus_x, -depth_mm))),
             Wire(((bus_x, 0.0), (bus_x, rows_y[-1]))),
         ]

@@ -30,12 +30,12 @@ class Transformer:
     Args:
         upper: what is written where the primary's bar comes in.
         lower: what is written where it goes out.
-        secondary: the secondary's current at full scale.
+        text: what is written beside the winding, in lines.
     """
 
     upper: str
     lower: str
-    secondary: str
+    text: tuple[str, ...]
     depth_mm: float = 30.0
 
     def lay(self, x: float, depth_mm: float, last: bool) -> tuple[Pieces, float]:
@@ -45,8 +45,7 @@ class Transformer:
         extent = EXTENTS[Kind.WINDING]
         winding_x, core_x = bar_x + 9.0, bar_x + 4.5
         high, low = middle + extent.length_mm / 2, middle - extent.length_mm / 2
-        text = ("secondary", self.secondary, "at full scale")
-        right = winding_x + GAP_MM + max(map(width_mm, text)) + PAD_MM
+        right = winding_x + GAP_MM + max(map(width_mm, self.text)) + PAD_MM
         earth_x = winding_x + 5.0
         ground = earth_x, -depth_mm - LEAD_MM
         pieces: list[Piece] = [
@@ -63,6 +62,6 @@ class Transformer:
             Joint((earth_x, -depth_mm)),
             Wire(((earth_x, -depth_mm), ground)),
             Sign(Kind.EARTH, ground, ground),
-            *stack(text, (winding_x + GAP_MM + 0.5, middle), (0.0, 0.5)),
+            *stack(self.text, (winding_x + GAP_MM + 0.5, middle), (0.0, 0.5)),
         ]
         return tuple(pieces), right

@@ -15,33 +15,36 @@ def multiplier(plan: Plan) -> Pieces:
     """Return the multiplier between the upper terminal and the movement, which is at the earthy end."""
     if plan.named(SECTION):
         return _chain(plan)
-    resistors = plan.items(MULTIPLIER)
+    resistors, line = plan.items(MULTIPLIER), _line(plan)
     head: list[Block]
     if len(resistors) > 1:
-        names = [item.part for item in resistors]
-        chosen = names.index(f"{MULTIPLIER} {plan.design.cases[0].name}")
-        head = [Switched(tuple(resistors), chosen, plan.at_plus(""), plan.lower)]
+        head = [Switched(tuple(resistors), plan.design.shown, plan.at_plus(""), plan.lower, line)]
     else:
-        head = [Ends(plan.upper, plan.lower), *map(Series, resistors)]
+        head = [Ends(plan.upper, plan.lower, line=line), *map(Series, resistors)]
     return ladder([*head, *map(Series, _behind(plan)), Across((plan.movement(),))])
 
 
 def _chain(plan: Plan) -> Pieces:
     """Return sections, what is in series and the movement in one string, the largest range at its head."""
     sections = plan.items(SECTION)[::-1]
-    falling = sorted(plan.design.cases, key=lambda case: -case.signal)
     behind = _behind(plan)
     string = Tapped(
         (*sections, *behind, plan.movement()),
-        (*(plan.at_plus(case.name) for case in falling), *[""] * (len(behind) + 1)),
+        (*(plan.at_plus(case.name) for case in plan.design.cases[::-1]), *[""] * (len(behind) + 1)),
         plan.lower,
+        line=_line(plan),
     )
     return ladder([string])
 
 
+def _line(plan: Plan) -> Item | None:
+    """Return the resistance of the line, which is no part of the instrument and leads to it from outside."""
+    return next(iter(plan.wire_items(LINE)), None)
+
+
 def _behind(plan: Plan) -> list[Item]:
     """Return what is in series with the coil besides its multiplier."""
-    return [*plan.wire_items(LINE), *plan.items(SWAMP), *_suppressor(plan)]
+    return [*plan.items(SWAMP), *_suppressor(plan)]
 
 
 def _suppressor(plan: Plan) -> list[Item]:

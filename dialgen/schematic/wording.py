@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
-import re
-from collections.abc import Iterator, Mapping
-from dataclasses import dataclass, field
+from collections.abc import Iterator
+from dataclasses import dataclass
 
 from dialgen.circuit.design import COIL, Design, Fact, Part
+from dialgen.circuit.names import SHUNT
 from dialgen.quantity import engineered
 from dialgen.schematic.pieces import Item, Kind, Label
 
@@ -19,13 +19,11 @@ class Plan:
 
     Args:
         design: the circuit.
-        coil_text: the movement's current and resistance.
-        values: a text in place of a part's value, by the part's name.
+        coil: what is written beside the movement, in lines: its current and resistance.
     """
 
     design: Design
-    coil_text: str
-    values: Mapping[str, str] = field(default_factory=dict)
+    coil: tuple[str, ...]
 
     def named(self, *starts: str) -> list[Part]:
         """Return the parts whose names are, or start with a word that is, one of ``starts``."""
@@ -41,16 +39,8 @@ class Plan:
         """Return the value of a fact that every design of its kind has."""
         return next(fact.value for fact in self.design.facts if fact.name == name)
 
-    def currents_a(self) -> Mapping[str, float]:
-        """Return what every part carries at full deflection of the first range, in amperes."""
-        if not self.design.cases:
-            return {}
-        case = self.design.cases[0]
-        loads = case.work(self.design.ohms, case.signal).loads
-        return {name: abs(load.current_a) for name, load in loads.items()}
-
     def label(self, part: Part) -> Label:
-        """Return a part's name, its value and, where it was measured otherwise, its value as built."""
+        """Return a part's name, what is stamped on it, its value and, if it was measured, that as built."""
         return Label(part.name, tuple(self._values(part)))
 
     def item(self, part: Part) -> Item:
@@ -71,8 +61,7 @@ class Plan:
 
     def movement(self) -> Item:
         """Return the movement, its current and its resistance each on a line of its own."""
-        lines = tuple(line for line in re.split(r"\s+(?=\d)|\n", self.coil_text.strip()) if line)
-        return Item(Kind.MOVEMENT, Label("", lines), COIL, plus=not self.alternating_at_coil)
+        return Item(Kind.MOVEMENT, Label("", self.coil), COIL, plus=not self.alternating_at_coil)
 
     @property
     def alternating_at_coil(self) -> bool:
@@ -94,12 +83,14 @@ class Plan:
         return f"{range_text} {AC if self.design.alternating else PLUS}".strip()
 
     def _range(self) -> str:
-        if self.design.cases:
-            return self.design.cases[0].name
+        if self.design.case:
+            return self.design.case.name
         known = self.design.range is not None and self.design.unit in ("A", "V")
         return engineered(self.design.range or 0.0, self.design.unit) if known else ""
 
     def _values(self, part: Part) -> Iterator[str]:
-        yield self.values.get(part.name, engineered(part.ohms, "Ω"))
+        if part.name == SHUNT and part.given and self.design.stamp:
+            yield self.design.stamp
+        yield engineered(part.ohms, "Ω")
         if part.built is not None and engineered(part.built, "Ω") != engineered(part.ohms, "Ω"):
             yield f"as built {engineered(part.built, 'Ω')}"

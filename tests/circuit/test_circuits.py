@@ -67,7 +67,7 @@ LIEC_SHUNTS = [
 @pytest.mark.parametrize(("range_a", "shunt_ohm"), LIEC_SHUNTS)
 def test_textbook_shunts_give_full_deflection(range_a, shunt_ohm):
     """The printed shunt, as built, drives the coil fully at its range, as does the designed one."""
-    built = Shunt(built=ohm(shunt_ohm))
+    built = Shunt(range=ampere(range_a), built=ohm(shunt_ohm))
     assert drive(built, range_a) == pytest.approx(1.0, rel=2e-7)
     designed = Shunt(range=ampere(range_a))
     for signal in (0.0, 0.3 * range_a, range_a, -range_a):
@@ -92,14 +92,15 @@ MULTIPLIERS = [
 def test_textbook_multipliers_give_full_deflection(coil_a, coil_ohm, range_v, multiplier_ohm):
     """The printed multiplier, as built, drives the coil fully at its range, as does the designed one."""
     coil = {"coil_a": coil_a, "coil_ohm": coil_ohm}
-    assert drive(Multiplier(built=(ohm(multiplier_ohm),)), range_v, **coil) == pytest.approx(1.0, rel=1e-12)
+    built = Multiplier(range=volt(range_v), built=(ohm(multiplier_ohm),))
+    assert drive(built, range_v, **coil) == pytest.approx(1.0, rel=1e-12)
     assert drive(Multiplier(range=volt(range_v)), range_v / 4, **coil) == pytest.approx(0.25, rel=1e-12)
 
 
 def test_bare_movement_as_a_voltmeter():
     """LIEC: 1 mA in 500 ohm is a 0.5 V voltmeter, so its multiplier is nothing."""
     assert drive(Multiplier(range=volt(0.5)), 0.5) == pytest.approx(1.0)
-    assert drive(Multiplier(built=(ohm(0.0),)), 0.5) == pytest.approx(1.0)
+    assert drive(Multiplier(range=volt(0.5), built=(ohm(0.0),)), 0.5) == pytest.approx(1.0)
 
 
 # LIEC, "Ohmmeter design": 9 V, 1 mA: half scale 9 kΩ, a quarter at 27 kΩ, three quarters at 3 kΩ.
@@ -164,10 +165,20 @@ def test_shunt_with_swamp_and_leads_obeys_kirchhoff(range_a, coil_ohm, lead_ohm,
     assert got == pytest.approx(share, rel=1e-8, abs=1e-10)
 
 
-@given(st.floats(1e-4, 10.0), st.floats(10.0, 2000.0), positive, st.floats(1.0, 3000.0), st.floats(0.0, 5.0))
-def test_shunt_as_built_obeys_kirchhoff(shunt_ohm, coil_ohm, lead_ohm, swamp_ohm, applied):
-    """A built shunt, whatever its value, divides the current as Kirchhoff's equations say."""
-    circuit = Shunt(range=ampere(1.0), built=ohm(shunt_ohm), leads=ohm(lead_ohm), swamp=ohm(swamp_ohm))
+@given(
+    st.floats(1e-4, 10.0),
+    st.floats(10.0, 2000.0),
+    positive,
+    st.floats(1.0, 3000.0),
+    st.floats(0.0, 5.0),
+    st.floats(0.2, 1.4),
+)
+def test_shunt_as_built_obeys_kirchhoff(shunt_ohm, coil_ohm, lead_ohm, swamp_ohm, applied, off):
+    """A built shunt, well off its design or not, divides the current as Kirchhoff's equations say."""
+    full_a = 1e-3 * (1 + (coil_ohm + lead_ohm + swamp_ohm) / shunt_ohm)
+    circuit = Shunt(
+        range=ampere(max(1e-3, off * full_a)), built=ohm(shunt_ohm), leads=ohm(lead_ohm), swamp=ohm(swamp_ohm)
+    )
     branches = [(1, 0, 1 / shunt_ohm), (1, 2, 1 / (lead_ohm + swamp_ohm)), (2, 0, 1 / coil_ohm)]
     expected = coil_current(branches, [(1, applied)], (2, 0, 1 / coil_ohm)) / 1e-3
     assert drive(circuit, applied, coil_ohm=coil_ohm) == pytest.approx(expected, rel=1e-8, abs=1e-12)
@@ -289,10 +300,28 @@ NAN = math.nan
         (Shunt(), {"full": math.inf}, [("range",)]),
         (Shunt(range=ampere(1.0), rated=Rating(current_a=1.0, drop_v=0.05)), {}, [("rated",), ("range",)]),
         (Multiplier(range=volt(0.4)), {}, [("range",), ("movement", "resistance")]),
-        (Multiplier(range=volt(10.0), suppress=volt(9.9)), {}, [("range",), ("movement", "resistance")]),
+        (
+            Multiplier(range=volt(10.0), suppress=volt(9.9)),
+            {},
+            [("range",), ("suppress",), ("movement", "resistance")],
+        ),
+        (Multiplier(range=volt(10.0), suppress=volt(10.0)), {}, [("suppress",), ("range",)]),
+        (Multiplier(range=volt(0.51), line=ohm(20.0)), {}, [("line",), ("range",)]),
+        (
+            Multiplier(range=volt(0.51), line=ohm(20.0), swamp=ohm(1.0)),
+            {},
+            [("line",), ("swamp",), ("range",)],
+        ),
+        (
+            Multiplier(range=volt(10.0), ranges=(volt(10.0), volt(0.4))),
+            {},
+            [("ranges", 1), ("movement", "resistance")],
+        ),
         (Multiplier(range=volt(10.0)), {"coil_a": None}, [("movement", "current")]),
         (Multiplier(range=volt(10.0)), {"coil_ohm": None}, [("movement", "resistance")]),
-        (Multiplier(), {"full": -5.0}, [("range",), ("movement", "resistance")]),
+        (Multiplier(), {"full": -5.0}, [("range",)]),
+        (Multiplier(built=(ohm(4500.0),)), {"full": 0.0}, [("range",)]),
+        (Shunt(), {"full": 0.0}, [("range",)]),
         (SeriesOhmmeter(half=ohm(2e3), battery=volt(1.5)), {}, [("half",), ("battery",)]),
         (Direct(full=0.0), {}, [("full",), ("rest",)]),
         (Direct(rest=10.0), {}, [("full",), ("rest",)]),
@@ -308,10 +337,28 @@ def test_circuits_that_cannot_be_built_are_refused_with_their_keys(circuit, give
     assert list(caught.value.keys) == keys
 
 
-@pytest.mark.parametrize("text", ["75 mV", "100 A/75 mV/2", "75 mV/100 A", "100 A/-75 mV", "0 A/75 mV", 100])
+def test_an_end_below_nothing_is_told_which_range_to_write():
+    """PH 0 to 14 is +414 mV to -414 mV, so full deflection is at a range of 414 mV."""
+    with pytest.raises(InputError, match=r'is −414 mV, .* write range = "414 mV"'):
+        Multiplier().stage(terminals(full=-0.414))
+
+
+def test_the_line_that_a_refusal_allows_is_allowed():
+    """41 mV drive 1 mA through 41 Ω: with a coil of 35 Ω a line may have 6 Ω, which the message says."""
+    coil = {"coil_ohm": 35.0, "full": 0.041}
+    with pytest.raises(InputError, match=r"35 mV for the coil; .* line may have 6 Ω at most") as caught:
+        Multiplier(line=ohm(20.0)).stage(terminals(**coil))
+    assert caught.value.keys[0] == ("line",)
+    assert drive(Multiplier(line=ohm(6.0)), 0.041, **coil) == pytest.approx(1.0, rel=1e-12)
+
+
+@pytest.mark.parametrize(
+    "text",
+    ["75 mV", "100/75", "100 A/75 mV/2", "75 mV/100 A", "100 A/-75 mV", "0 A/75 mV", "100 A/0 mV", 100],
+)
 def test_ratings_written_wrongly_are_refused(text):
-    """A rating is current/voltage, both above zero."""
-    with pytest.raises(ValueError, match=r"write|above"):
+    """A rating is current/voltage, both above zero, and the message shows a whole one."""
+    with pytest.raises(ValueError, match=r'; write for example "100 A/75 mV"$'):
         read_rating(text)
 
 

@@ -14,6 +14,7 @@ from dialgen.circuit.multiplier import Multiplier
 from dialgen.circuit.ranges import AMPERE_RANGES
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.universal import UniversalShunt
+from dialgen.dialfile.base import Several
 from dialgen.dialfile.fields import list_of
 from dialgen.errors import InputError
 from dialgen.quantity import Amount
@@ -99,9 +100,9 @@ def test_the_worked_circuit_is_the_stage(case):
     for range_a in ranges_a:
         terminals = behind(coil_a, coil_ohm, range_a)
         design = circuit.design(terminals)
-        case, *_ = design.cases
-        assert case.signal == range_a
-        working = case.work(design.ohms, 0.7 * range_a)
+        assert design.case.signal == design.range == range_a
+        assert [case.signal for case in design.cases] == sorted(ranges_a)
+        working = design.case.work(design.ohms, 0.7 * range_a)
         assert working.drive == pytest.approx(
             float(circuit.stage(terminals).forward(np.array(0.7 * range_a))), rel=1e-9
         )
@@ -128,7 +129,7 @@ def test_published_multipliers_of_several_ranges(coil_a, coil_ohm, ranges_v, cha
         design = circuit.design(terminals)
         assert [part.ohms for part in design.parts] == pytest.approx(values_ohm, rel=1e-9)
         assert design.range == range_v
-        assert design.cases[0].work(design.ohms, range_v).drive == pytest.approx(1.0, rel=1e-12)
+        assert design.case.work(design.ohms, range_v).drive == pytest.approx(1.0, rel=1e-12)
         assert float(circuit.stage(terminals).forward(np.array(range_v))) == pytest.approx(1.0, rel=1e-12)
 
 
@@ -186,8 +187,19 @@ def test_a_bad_set_of_ranges_is_refused_at_its_key(make, key, words):
     assert refusal.value.keys[0] == key
 
 
-@pytest.mark.parametrize("given_ranges", ["1 A", [], ["1 A"], ["1 A", 5], ["1 A", "5 V"], ["1 A"] * 13])
-def test_what_is_not_a_list_of_ranges_is_refused(given_ranges):
-    """A list of ranges has two to twelve currents with their units, and is told how to be written."""
-    with pytest.raises(ValueError, match="; write for example"):
+@pytest.mark.parametrize(
+    ("given_ranges", "words"),
+    [("1 A", "this is a list"), ([], "0 of them; give 1 to 40"), (["1 A"] * 41, "41 of them; give 1 to 40")],
+)
+def test_what_is_not_a_list_of_ranges_is_refused(given_ranges, words):
+    """Ranges are a list of one to forty, and it is told how to write them."""
+    with pytest.raises(ValueError, match=words):
         list_of(AMPERE_RANGES)(given_ranges)
+
+
+@pytest.mark.parametrize("given_ranges", [["1 A", 5], ["1 A", "5 V"]])
+def test_what_is_no_range_is_refused_at_its_place(given_ranges):
+    """What is not a current is told at its own place in the list."""
+    with pytest.raises(Several) as refusal:
+        list_of(AMPERE_RANGES)(given_ranges)
+    assert [each.keys for each in refusal.value.errors] == [((1,),)]

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from dataclasses import replace
 
 from dialgen.circuit.bridge import Bridge
 from dialgen.circuit.direct import Direct
@@ -16,7 +17,7 @@ from dialgen.circuit.universal import UniversalShunt
 from dialgen.quantity import Amount
 
 COIL_A, COIL_OHM = 1e-3, 75.0
-COIL_TEXT = "1 mA 75 Ω"
+COIL_TEXT = ("1 mA", "75 Ω")
 
 
 def amps(*values):
@@ -40,6 +41,13 @@ def behind(full, unit):
     return Terminals(coil=coil, signal=lambda value: value, rest_signal=0.0, full_value=full, unit=unit)
 
 
+def as_built(circuit, terminals):
+    """The circuit with each of its parts as built, five figures long and a little off its design."""
+    parts = [part for part in circuit.design(terminals).parts if not (part.given or part.sums)]
+    made = [float(f"{part.ohms * (1.00512 + k / 1e4):.5g}") for k, part in enumerate(parts)]
+    return replace(circuit, built=ohms(*made)), terminals
+
+
 TEN_A = amps(0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10)
 TEN_V = volts(1, 2.5, 5, 10, 25, 50, 100, 250, 500, 1000)
 
@@ -59,10 +67,7 @@ CIRCUITS = {
     ),
     "shunt of 40 A": (Shunt(range=amps(40)[0], built=ohms(0.001885)[0]), behind(40, "A")),
     "universal": (UniversalShunt(ranges=amps(1, 0.1, 0.01)), behind(1, "A")),
-    "universal, ten ranges": (
-        UniversalShunt(ranges=TEN_A, swamp=ohms(225)[0], built=ohms(*(199.5 + k / 10 for k in range(10)))),
-        behind(1, "A"),
-    ),
+    "universal, ten ranges": as_built(UniversalShunt(ranges=TEN_A, swamp=ohms(225)[0]), behind(1, "A")),
     "transformer": (CurrentTransformer(ratio=Ratio(200, 5), range=amps(200)[0]), behind(200, "A")),
     "transformer, no shunt": (CurrentTransformer(ratio=Ratio(200, 0.001)), behind(200, "A")),
     "transformer, swamp and leads": (
@@ -79,20 +84,11 @@ CIRCUITS = {
         behind(16, "V"),
     ),
     "multipliers": (Multiplier(ranges=volts(10, 50, 250), range=volts(50)[0]), behind(50, "V")),
-    "multipliers, ten ranges": (
-        Multiplier(ranges=TEN_V, built=ohms(*(199511.0 + k for k in range(10)))),
-        behind(1000, "V"),
-    ),
+    "multipliers, ten ranges": as_built(Multiplier(ranges=TEN_V), behind(1000, "V")),
     "chain": (Multiplier(ranges=volts(10, 50, 250), chain=True), behind(50, "V")),
-    "chain, ten ranges": (
-        Multiplier(
-            ranges=TEN_V,
-            chain=True,
-            swamp=ohms(200)[0],
-            line=ohms(2)[0],
-            built=ohms(*(199511.0 + k for k in range(10))),
-        ),
-        behind(1, "V"),
+    "multipliers, line": (Multiplier(ranges=volts(10, 50), line=ohms(20)[0]), behind(10, "V")),
+    "chain, ten ranges": as_built(
+        Multiplier(ranges=TEN_V, chain=True, swamp=ohms(200)[0], line=ohms(2)[0]), behind(1, "V")
     ),
     "rectifier": (Rectifier(range=volts(10)[0], built=ohms(5555)[0]), behind(10, "V")),
     "rectifier, coil shunt": (Rectifier(range=volts(10)[0], coil_shunt=ohms(150)[0]), behind(10, "V")),
@@ -119,6 +115,10 @@ CIRCUITS = {
     ),
     "series ohmmeter, three ranges": (
         SeriesOhmmeter(half=ohms(10)[0], battery=volts(1.5)[0], times=(1.0, 10.0, 100.0)),
+        behind(math.inf, "Ω"),
+    ),
+    "series ohmmeter, low": (
+        SeriesOhmmeter(half=ohms(5)[0], battery=volts(1.5)[0], worn=volts(1.2)[0]),
         behind(math.inf, "Ω"),
     ),
     "series ohmmeter, no battery": (SeriesOhmmeter(half=ohms(10)[0]), behind(math.inf, "Ω")),

@@ -67,7 +67,7 @@ def test_every_kind_of_circuit_has_a_picture():
 def test_a_kind_without_a_picture_is_refused():
     """An unknown kind is refused by name, and told which kinds can be drawn."""
     with pytest.raises(InputError, match="no picture of the circuit 'crystal set'; one of direct, shunt"):
-        draw(replace(DESIGNS["direct"], kind="crystal set"), coil_text=COIL_TEXT)
+        draw(replace(DESIGNS["direct"], kind="crystal set"), coil=COIL_TEXT)
 
 
 # --- what is written
@@ -78,7 +78,7 @@ def test_every_part_is_drawn_and_lettered(name):
     """Each part of a design is named in its picture with its value, and with the built one if another."""
     design = DESIGNS[name]
     pieces = laid(design, COIL_TEXT)
-    written = texts(draw(design, coil_text=COIL_TEXT))
+    written = texts(draw(design, coil=COIL_TEXT))
     signs = [piece.part for piece in pieces if isinstance(piece, Sign)]
     for part in design.parts:
         assert part.name in written
@@ -93,14 +93,14 @@ def test_every_range_stands_at_its_terminal():
     """All ten ranges of a universal shunt and of a chain are written, with the polarity of the terminal."""
     for name in ("universal, ten ranges", "chain, ten ranges"):
         design = DESIGNS[name]
-        written = texts(draw(design, coil_text=COIL_TEXT))
+        written = texts(draw(design, coil=COIL_TEXT))
         assert {f"{case.name} +" for case in design.cases} <= set(written)
         assert "−" in written
 
 
 def test_alternating_current_is_marked_by_its_sign():
     """A rectifier's terminals have the sign of alternating current and its movement a plus."""
-    written = texts(draw(DESIGNS["rectifier"], coil_text=COIL_TEXT))
+    written = texts(draw(DESIGNS["rectifier"], coil=COIL_TEXT))
     assert "10 V ~" in written
     assert "~" in written
     assert "+" in written
@@ -109,15 +109,17 @@ def test_alternating_current_is_marked_by_its_sign():
 
 def test_a_movement_on_a_transformer_has_no_polarity():
     """What sees alternating current itself has neither plus nor minus."""
-    written = texts(draw(DESIGNS["transformer"], coil_text=COIL_TEXT))
+    written = texts(draw(DESIGNS["transformer"], coil=COIL_TEXT))
     assert not {"+", "−"} & set(written)
 
 
-def test_a_value_may_be_given_in_words():
-    """A text given for a part stands in place of its exact value."""
-    written = texts(draw(DESIGNS["shunt"], coil_text=COIL_TEXT, values={"shunt": "2 × 0.3 Ω"}))
-    assert "2 × 0.3 Ω" in written
-    assert engineered(DESIGNS["shunt"].parts[0].ohms, "Ω") not in written
+@pytest.mark.parametrize(
+    ("name", "stamp"),
+    [("shunt bought", "100 A/75 mV"), ("transformer", "200/5"), ("transformer, no shunt", "200/0.001")],
+)
+def test_what_is_bought_is_lettered_with_its_stamp(name, stamp):
+    """A bought shunt and a transformer carry in the picture what is stamped on them."""
+    assert stamp in texts(draw(DESIGNS[name], coil=COIL_TEXT))
 
 
 def test_a_part_with_no_place_is_set_below():
@@ -128,7 +130,7 @@ def test_a_part_with_no_place_is_set_below():
     (sign,) = [piece for piece in pieces if isinstance(piece, Sign) and piece.part == "damping resistor"]
     others = [piece for piece in pieces if isinstance(piece, Sign) and piece is not sign]
     assert sign.start[1] < min(min(other.start[1], other.end[1]) for other in others)
-    assert {"damping resistor", "470 Ω"} <= set(texts(draw(extra, coil_text=COIL_TEXT)))
+    assert {"damping resistor", "470 Ω"} <= set(texts(draw(extra, coil=COIL_TEXT)))
 
 
 # --- how it is set
@@ -137,12 +139,12 @@ def test_a_part_with_no_place_is_set_below():
 @every_design
 def test_nothing_touches_the_lettering(name):
     """No text comes within 0.45 mm of another or of a line."""
-    assert crowded(draw(DESIGNS[name], title="A title", coil_text=COIL_TEXT), 0.45) == []
+    assert crowded(draw(DESIGNS[name], title="A title", coil=COIL_TEXT), 0.45) == []
 
 
 def test_the_check_of_lettering_can_fail():
     """A wire through a text and a text on a text are found."""
-    drawing = draw(DESIGNS["shunt"], coil_text=COIL_TEXT)
+    drawing = draw(DESIGNS["shunt"], coil=COIL_TEXT)
     (letters,) = [item for la in drawing.layers for item in la.items if getattr(item, "text", "") == "shunt"]
     box = shape(letters).box
     style = next(layer for layer in drawing.layers if layer.name == "wires").items[0].style
@@ -154,7 +156,7 @@ def test_the_check_of_lettering_can_fail():
 @every_design
 def test_all_ink_is_within_the_margin(name):
     """The page is the picture and its margin, 120 to 185 mm wide."""
-    drawing = draw(DESIGNS[name], title="A title", coil_text=COIL_TEXT)
+    drawing = draw(DESIGNS[name], title="A title", coil=COIL_TEXT)
     inner = drawing.with_margin(1e-6 - MARGIN_MM)
     corners = [
         (inner.left, inner.bottom),
@@ -198,7 +200,7 @@ def test_any_ranges_are_set_clear(ranges, off, kind, swamped):
         terminals = behind(10 * max(ranges), "V")
     design = circuit.design(terminals)
     built = tuple(replace(part, built=part.ohms * off) for part in design.parts)
-    drawing = draw(replace(design, parts=built), title="T", coil_text="199.5 µA 1.9995 kΩ")
+    drawing = draw(replace(design, parts=built), title="T", coil=("199.5 µA", "1.9995 kΩ"))
     assert crowded(drawing, 0.45) == []
 
 
@@ -235,7 +237,7 @@ def test_a_resistor_is_three_times_as_long_as_wide():
 @pytest.mark.parametrize("name", ["direct", "universal, ten ranges", "bridge"])
 def test_files_have_the_true_size(name):
     """SVG and PDF, read by lxml and pdfium, have the page's size in millimetres; all ink keeps the margin."""
-    drawing = draw(DESIGNS[name], coil_text=COIL_TEXT)
+    drawing = draw(DESIGNS[name], coil=COIL_TEXT)
     root = etree.fromstring(render(drawing, ".svg"))
     assert float(root.get("width").removesuffix("mm")) == pytest.approx(drawing.width, abs=1e-3)
     assert float(root.get("height").removesuffix("mm")) == pytest.approx(drawing.height, abs=1e-3)
@@ -255,8 +257,8 @@ def test_files_have_the_true_size(name):
 
 def test_every_format_draws_it_the_same_every_time():
     """Each renderer takes the picture, and twice gives the same bytes where its format has no date."""
-    drawing = draw(DESIGNS["half bridge"], coil_text=COIL_TEXT)
-    again = draw(DESIGNS["half bridge"], coil_text=COIL_TEXT)
+    drawing = draw(DESIGNS["half bridge"], coil=COIL_TEXT)
+    again = draw(DESIGNS["half bridge"], coil=COIL_TEXT)
     for suffix in (".svg", ".pdf", ".dxf"):
         assert render(drawing, suffix) == render(again, suffix)
     assert io.BytesIO(render(drawing, ".png", Options(resolution_dpi=100))).read(4) == b"\x89PNG"

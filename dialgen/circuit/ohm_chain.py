@@ -22,7 +22,7 @@ _ROUND = 1e-9
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
-class Chain:
+class OhmChain:
     """Coil, shunt, series resistor and zero adjuster: the ohmmeter of the largest range.
 
     Args:
@@ -130,7 +130,7 @@ class Chain:
                 ("half",) if self.across else RESISTANCE_KEY,
             )
 
-    def lifted(self) -> Chain:
+    def lifted(self) -> OhmChain:
         """Return the chain with an adjuster that can be bought: this one, or one of more resistance.
 
         A track below 10 Ω is hardly sold, and its wiper is as uncertain as its ohms (common practice).

@@ -14,8 +14,8 @@ from dataclasses import dataclass
 import numpy as np
 
 from dialgen.circuit.conduction import Averages, Junction
+from dialgen.circuit.connections import Connection, Port
 from dialgen.circuit.design import COIL, Fact, Load, Ohms, Working
-from dialgen.circuit.rectifying import SOURCE, Connection, Port
 from dialgen.quantity import engineered
 
 _NOTHING = Averages(*[np.zeros(())] * 4)
@@ -62,12 +62,6 @@ class RectifierWork:
                 value=working.loads[COIL].current_a / (working.drive * self.coil_a),
                 unit="",
                 note=f"of the coil's current, RMS over mean; {self._plain_form:.4f} with ideal diodes",
-            ),
-            Fact(
-                name="sensitivity",
-                value=1.0 / working.loads[SOURCE].current_a,
-                unit="Ω/V",
-                note="at full deflection; the diodes make it no plain resistance",
             ),
             Fact(
                 name="peak diode current",

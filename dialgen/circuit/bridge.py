@@ -31,6 +31,7 @@ class Bridge(Circuit):
 
     kind: ClassVar[str] = "bridge"
     takes: ClassVar[str | None] = "Ω"
+    least: ClassVar[float] = 0.0
     supply: Annotated[Amount, VOLT]
     arms: Annotated[tuple[Amount, Amount, Amount], ARMS]
 

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 from typing import Annotated, ClassVar, Literal
 
@@ -16,10 +17,9 @@ from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
 from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, Listed, Number, engineered
-from dialgen.stage import POSITIVE, Array, Span, Stage
+from dialgen.stage import Array, Span, Stage
 
 _ROUND = 1e-9
-_OUTSIDE = "no resistance is below 0 Ω"
 
 
 def _in_order(times: tuple[float, ...]) -> tuple[float, ...]:
@@ -44,6 +44,7 @@ class SeriesOhmmeter(Circuit):
 
     kind: ClassVar[str] = "series ohmmeter"
     takes: ClassVar[str | None] = "Ω"
+    least: ClassVar[float] = 0.0
     half: Annotated[Amount, OHM_ABOVE]
     battery: Annotated[Amount | None, VOLT_ABOVE] = None
     worn: Annotated[Amount | None, VOLT_ABOVE] = None
@@ -118,6 +119,7 @@ class ShuntOhmmeter(Circuit):
 
     kind: ClassVar[str] = "shunt ohmmeter"
     takes: ClassVar[str | None] = "Ω"
+    least: ClassVar[float] = 0.0
     half: Annotated[Amount, OHM_ABOVE]
     battery: Annotated[Amount | None, VOLT_ABOVE] = None
     worn: Annotated[Amount | None, VOLT_ABOVE] = None
@@ -157,16 +159,16 @@ def _undesigned(kind: str, half: Amount, coil: Coil) -> Design:
 
 @dataclass(frozen=True, slots=True)
 class _SeriesStage:
-    outside: ClassVar[str] = _OUTSIDE
     half_ohm: float
 
     @property
     def domain(self) -> Span:
-        return POSITIVE
+        # Below zero ohms down to -half: a pointer beyond full scale, with the zero set too high.
+        return (-self.half_ohm, math.inf)
 
     @property
     def image(self) -> Span:
-        return (0.0, 1.0)
+        return (0.0, math.inf)
 
     def forward(self, x: Array) -> Array:
         with np.errstate(divide="ignore"):
@@ -179,16 +181,15 @@ class _SeriesStage:
 
 @dataclass(frozen=True, slots=True)
 class _ShuntStage:
-    outside: ClassVar[str] = _OUTSIDE
     half_ohm: float
 
     @property
     def domain(self) -> Span:
-        return POSITIVE
+        return (-self.half_ohm, math.inf)
 
     @property
     def image(self) -> Span:
-        return (0.0, 1.0)
+        return (-math.inf, 1.0)
 
     def forward(self, x: Array) -> Array:
         with np.errstate(divide="ignore", invalid="ignore"):

@@ -40,6 +40,7 @@ class Rectifier(Circuit):
 
     kind: ClassVar[str] = "rectifier"
     takes: ClassVar[str | None] = "V"
+    least: ClassVar[float] = 0.0
     range: Annotated[Amount | None, VOLT_ABOVE] = None
     rectifier: Literal["bridge", "half bridge", "half wave"] = "bridge"
     diode: Annotated[Diode, DIODE] = SILICON

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import ClassVar
 
 import numpy as np
 
@@ -22,7 +21,6 @@ class RectifierStage:
         most_v: the largest signal.
     """
 
-    outside: ClassVar[str] = "a rectifier shows RMS volts, from 0 to ten times its range"
     """What to tell of a signal that is not in the domain."""
 
     curve: Curve

@@ -103,6 +103,8 @@ class Circuit(Protocol):
 
     kind: ClassVar[str]
     takes: ClassVar[str | None]
+    least: ClassVar[float] = -math.inf
+    """The least signal that a scale may show through it."""
 
     def stage(self, terminals: Terminals) -> Stage:
         """Return the circuit as a stage from signal to drive, with its parts as built.

@@ -22,6 +22,7 @@ from dialgen.stage import Affine, Array, Span, Stage
 
 _FORMULA_SAMPLES = 4097
 _NEAR_OWN = 0.01
+_HAIR = 1e-12
 _UNIT_WORDS = {
     "amp": "A", "amps": "A", "ampere": "A", "amperes": "A", "a": "A", "milliamps": "mA", "ma": "mA",
     "volt": "V", "volts": "V", "v": "V", "mv": "mV", "ohms": "ohm", "kohms": "kohm", "r": "ohm",
@@ -124,6 +125,7 @@ def wire(scale: Scale, law: Law, key: Key, shared: Circuit | None, coil: Coil) -
         full_value=scale.end,
         unit=signal_unit,
     )
+    _check_least(circuit, scale, signals, key)
     try:
         circuit_link, drives = link(circuit.stage(terminals), signals)
     except InputError as error:
@@ -211,6 +213,21 @@ def _check_units(circuit: Circuit, unit: str | None, law: Law, key: Key) -> None
         f"but the scale's signal is {what}; "
         + (f'write unit = "{letter}"' if letter else "change the unit, the law or the circuit"),
         (*key, "unit" if plain else "law"),
+    )
+
+
+def _check_least(circuit: Circuit, scale: Scale, signals: Array, key: Key) -> None:
+    """Refuse a scale with signals that its circuit has no meaning for, as a rectifier has none below zero."""
+    first, last = float(signals[0]), float(signals[-1])
+    lowest = min(first, last)
+    if lowest >= circuit.least - _HAIR * abs(first - last):
+        return
+    name, value = ("from", scale.start) if first < last else ("to", scale.end)
+    raise InputError(
+        f"at {value:g} the signal is {lowest:.4g} {circuit.takes}, and a {circuit.kind} shows nothing below "
+        f"{circuit.least:g} {circuit.takes}; let the scale end there, or take another circuit",
+        (*key, name),
+        (*key, "law"),
     )
 
 

@@ -191,6 +191,8 @@ def one_of(*words: str) -> Reader:
 
     def read(given: object) -> str:
         if not isinstance(given, str) or given not in words:
+            if meant := [w for w in words if isinstance(given, str) and w.casefold() == given.casefold()]:
+                raise ValueError(f'{shown(given)} is not known here; did you mean "{meant[0]}"?')
             choices = [f'"{word}"' for word in words]
             raise ValueError(f"{shown(given)} is not known here; write {' or '.join(choices)}")
         return given

@@ -20,7 +20,6 @@ from dialgen.circuit.ohmmeter import TIMES, SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.dialfile.fields import list_of
 from dialgen.dialfile.kinds import read_kind
-from dialgen.errors import InputError
 from dialgen.quantity import Amount
 
 E3 = (1.0, 2.2, 4.7)
@@ -364,110 +363,6 @@ def test_bare_coil_and_feed_need_nothing_else():
     """At half scale Rm·(1 - V/E) the shunt ohmmeter is the coil and its feed: 1 mA, 75 Ω, 1.5 V, 71.25 Ω."""
     design = shunt(71.25, 1.5, 1.2).design(terminals(1e-3, 75.0))
     assert set(parts_of(design)) == {"feed resistor", "full-scale adjuster"}
-
-
-@pytest.mark.parametrize("circuit", [SeriesOhmmeter(half=ohm(15.0)), ShuntOhmmeter(half=ohm(15.0))])
-def test_without_a_battery_there_is_nothing_to_build(circuit):
-    """A face needs no battery; a design of the parts says what it lacks."""
-    design = circuit.design(terminals(None, None))
-    assert design.parts == design.cases == ()
-    (told,) = design.facts
-    assert told.value == design.range == 15.0
-    assert "battery" in told.note
-
-
-REFUSED = [
-    (series(2e3, 1.5), {}, ["half", "battery"], "1.5 kΩ, not 2 kΩ"),
-    # 1.5 V over 1 mA is 1.5 kΩ; 100·20 Ω would need 2 V.
-    (series(20.0, 1.5, times=(1.0, 10.0, 100.0)), {}, ["times", "battery"], "×100.*2 V"),
-    (series(20.0, 1.5, times=(100.0,)), {}, ["times", "battery"], "×100.*2 V"),
-    (series(2e3, 1.5, times=(0.5, 1.0)), {}, ["half", "battery"], "1.5 kΩ, not 2 kΩ"),
-    (series(400.0, 0.4), {}, ["battery", "movement", "movement"], "500 mV"),
-    # 1.5 mA through 1 V leave 667 Ω in series: the coil and a hundredth more need 0.5 + 0.6733 V.
-    (series(1e3, 1.5, 1.0), {}, ["worn", "half"], "change the cell at 1.1733 V"),
-    (series(1e3, 1.5, 0.4, zero="series"), {}, ["worn", "movement"], "500 mV"),
-    # Half of 1 mA·R: 4·half·Im = 2 V; of a coil of 500 Ω, 0.5 V: V/(1 - half/Rm) = 0.625 V.
-    (shunt(500.0, 1.5), {}, ["half", "battery", "movement"], "2 V"),
-    (shunt(100.0, 0.6), {}, ["half", "battery", "movement"], "625 mV"),
-    (shunt(100.0, 0.3), {}, ["half", "battery", "movement"], "625 mV"),
-    (shunt(100.0, 1.5, 0.4), {}, ["worn", "half"], "500 mV"),
-]
-
-
-@pytest.mark.parametrize(("circuit", "coil", "keys", "words"), REFUSED)
-@pytest.mark.parametrize("way", ["stage", "design"])
-def test_bad_designs_are_refused_with_the_reason(circuit, coil, keys, words, way):
-    """What cannot work is refused for the face and on the bench, with keys and the figure that would do."""
-    with pytest.raises(InputError, match=f"(?s)(?=.*;).*{words}") as caught:
-        getattr(circuit, way)(terminals(**coil))
-    assert [key[0] for key in caught.value.keys] == keys
-
-
-@pytest.mark.parametrize(
-    ("circuit", "needed_v"),
-    [(shunt(500.0, 1.5), 2.0), (shunt(100.0, 0.6), 0.625), (series(20.0, 1.5, times=(100.0,)), 2.0)],
-)
-def test_the_battery_that_a_refusal_asks_for_is_enough(circuit, needed_v):
-    """With the voltage that the message names the design works; a hundredth below it is refused again."""
-    kind, times = type(circuit), {"times": circuit.times} if isinstance(circuit, SeriesOhmmeter) else {}
-    design = kind(half=circuit.half, battery=volt(needed_v), **times).design(terminals())
-    (case,) = design.cases
-    assert case.work(design.ohms, case.signal).drive == pytest.approx(1.0, rel=1e-9)
-    with pytest.raises(InputError):
-        kind(half=circuit.half, battery=volt(0.99 * needed_v), **times).design(terminals())
-
-
-@pytest.mark.parametrize("kind", [SeriesOhmmeter, ShuntOhmmeter])
-@pytest.mark.parametrize(("battery_v", "worn_v"), [(None, 1.2), (1.5, 1.5), (1.5, 1.6)])
-def test_worn_cells_are_below_new_ones(kind, battery_v, worn_v):
-    """A worn cell says nothing without the new one, and nothing that is not below it."""
-    with pytest.raises(InputError, match=";") as caught:
-        kind(half=ohm(15.0), battery=volt(battery_v), worn=volt(worn_v))
-    assert caught.value.keys == (("worn",), ("battery",))
-
-
-@pytest.mark.parametrize(
-    ("coil", "missing"),
-    [
-        (Coil(current=1e-3), ("movement", "resistance")),
-        (Coil(resistance=75.0), ("movement", "current")),
-    ],
-)
-@pytest.mark.parametrize("circuit", [series(15.0, 1.5), shunt(15.0, 1.5)])
-def test_a_design_needs_the_coil_but_a_face_does_not(circuit, coil, missing):
-    """The drive follows from half scale alone; the parts need the movement's figures."""
-    bare = Terminals(coil=coil, signal=lambda v: v, rest_signal=0.0, full_value=math.inf, unit="Ω")
-    assert float(circuit.stage(bare).forward(np.array(15.0))) == 0.5
-    with pytest.raises(InputError) as caught:
-        circuit.design(bare)
-    assert caught.value.keys[0] == missing
-
-
-@pytest.mark.parametrize(
-    ("given", "times"),
-    [(10, (10.0,)), ([1, 10, 100], (1.0, 10.0, 100.0)), ([100, 0.1, 1], (0.1, 1.0, 100.0)), ([1], (1.0,))],
-)
-def test_ranges_are_a_number_or_a_list_in_any_order(given, times):
-    """However they are listed, the ranges ascend."""
-    assert list_of(TIMES)(given) == times
-
-
-@pytest.mark.parametrize(
-    ("times", "shown"), [((0.1, 1.0, 10.0), "×1"), ((10.0, 1.0), "×1"), ((10.0, 100.0), "×10")]
-)
-def test_the_scale_shows_the_range_times_one(times, shown):
-    """Ranges ascend, and the one that the scale shows is ×1, or the lowest where there is none."""
-    design = series(1.0, 9.0, times=times).design(terminals())
-    assert [case.name for case in design.cases] == [f"×{k:g}" for k in sorted(times)]
-    assert design.case.name == shown
-
-
-@pytest.mark.parametrize("circuit", [SeriesOhmmeter(half=ohm(15.0)), ShuntOhmmeter(half=ohm(15.0))])
-def test_no_resistance_is_below_zero(circuit):
-    """What a scale may show runs from 0 Ω to open terminals, and the drive from rest to full deflection."""
-    stage = circuit.stage(terminals())
-    assert stage.domain == (0.0, math.inf)
-    assert stage.image == tuple(sorted(stage.forward(np.array(stage.domain)))) == (0.0, 1.0)
 
 
 def test_two_ranges_are_told_in_a_few_lines():

@@ -245,7 +245,7 @@ REFUSED = [
     ("degC", 0, 9, T + 'r25 = "10 kohm" }', "13:30: scale[1].law.r25: ", "r25 without beta; add beta = 3950"),
     ("degC", 0, 9, T + "beta = 3950 }", "13:30: scale[1].law.beta: ", 'without r25; add r25 = "10 kohm"'),
     ("degC", 0, 9, T + 'beta = "3950 K" }', "13:30: scale[1].law.beta: ", "write it bare"),
-    ("degC", 0, 9, T + 'r25 = "1 kohm", beta = -3 }', "13:46: scale[1].law.beta: ", "from 1 to 1e+06"),
+    ("degC", 0, 9, T + 'r25 = "1 kohm", beta = -3 }', "13:46: scale[1].law.beta: ", "from 1 to 1000000"),
     ("degC", 0, 9, T + "a = 1e-3, c = 8e-8 }", "13:30: scale[1].law.a: ", "c without b; add b = 2.34125e-4"),
     (
         "degC", 0, 9, T + 'a = 1e-3, b = 2e-4, c = 8e-8, r25 = "9 ohm" }', "13:30: scale[1].law.a: ",

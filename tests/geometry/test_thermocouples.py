@@ -240,7 +240,7 @@ REFUSED = [
     ("°K", 300, 1200, K, "12:1: scale[1].unit: ", 'write unit = "K"'),
     ("mV", 0, 50, K, "12:1: scale[1].unit: ", "a type K thermocouple has its scale in °C, °F or K"),
     ("", 0, 50, K, "12:1: scale[1].unit: ", 'not without a unit; write unit = "degC"'),
-    ("degC", 0, 50, K.replace('"K"', '"k"'), "15:32: scale[1].law.type: ", 'not known here; write "B"'),
+    ("degC", 0, 50, K.replace('"K"', '"k"'), "15:32: scale[1].law.type: ", 'did you mean "K"?'),
     ("degC", 0, 50, 'law = "thermocouple"', "15:1: scale[1].law.type: ", "missing; add type = "),
     (
         "degC", 0, 50, K.replace(" }", ", reference = 20 }"), "15:44: scale[1].law.reference: ",

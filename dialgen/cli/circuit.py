@@ -154,12 +154,12 @@ def _lines(face: Face, bills: Sequence[tuple[Designed, Bill]]) -> Iterator[str]:
 
     told = [(designed, bill) for designed, bill in bills if not is_mute(bill)]
     for designed, bill in told:
-        yield heading(designed.design, _served([designed]))
+        yield heading(designed.design, _served(face, [designed]))
         yield from bill_lines(bill)
         yield from _old_face(face, designed, bill)
         yield ""
     if not told:
-        served = _served([designed for designed, _ in bills])
+        served = _served(face, [designed for designed, _ in bills])
         yield f"Nothing to buy or to make: {_AS_IT_IS} ({served})." if served else _NO_CIRCUIT
         yield ""
     yield from closing_lines([bill for _, bill in bills])
@@ -180,9 +180,18 @@ def _old_face(face: Face, designed: Designed, bill: Bill) -> Iterator[str]:
         yield from old_face_lines(shown_unit(spec.unit), max(abs(spec.start), abs(spec.end)), rows)
 
 
-def _served(circuits: Sequence[Designed]) -> str:
-    serves = [place for designed in circuits for place in designed.serves]
-    return ", ".join(f"scale {scale}" + (f" row {also + 1}" if also else "") for scale, also in serves)
+def _served(face: Face, circuits: Sequence[Designed]) -> str:
+    return "; ".join(_place(face, *place) for designed in circuits for place in designed.serves)
+
+
+def _place(face: Face, scale: int, also: int) -> str:
+    from dialgen.quantity import plain_number, shown_unit
+
+    spec = face.dial.file.scale[scale - 1]
+    if also:
+        return f"scale {scale}, row {also + 1}"
+    span = f"{plain_number(spec.start)} to {plain_number(spec.end)} {shown_unit(spec.unit)}"
+    return f"scale {scale}, {span}".rstrip()
 
 
 def _print_kinds(as_json: bool) -> None:

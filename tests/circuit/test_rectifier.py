@@ -641,3 +641,14 @@ def test_negative_volts_are_refused():
     (error,) = caught.value.errors
     assert "-3 V" in error.message
     assert error.keys[0] == ("scale", 0, "from")
+
+
+def test_other_waves_read_wrong_on_a_sines_scale():
+    """An averaging meter marked in sine RMS reads a square wave 11.07 % high and a triangle 3.81 % low.
+
+    TBC-2360 ex. 3.18 (11 %) and TBC-3830 ex. 5.9 (-3.8 %): reference value rect.wave_err.
+    """
+    design = rectifier(10.0, "ideal").design(terminals())
+    fact = next(fact for fact in design.facts if fact.name == "error on a square wave")
+    assert fact.value == pytest.approx(11.072, abs=5e-4)
+    assert "−3.81 %" in fact.note

@@ -96,7 +96,7 @@ def test_one_tapped_shunt_for_scale_and_row_is_one_circuit(file) -> None:
         "to = 40", f"to = 10\ncircuit = {tapped}\nalso = [{{ times = 4, circuit = {tapped} }}]"
     )
     assert len(circuits(file(text))) == 1
-    assert "(scale 1, scale 1 row 2)" in run("circuit", file(text)).stdout
+    assert "(scale 1, 0 to 10 A; scale 1, row 2)" in run("circuit", file(text)).stdout
 
 
 def test_the_nearest_bought_value_and_what_it_does(file) -> None:
@@ -243,7 +243,7 @@ def test_ranges_ascend_and_the_scales_own_is_marked(file) -> None:
     text = BASE.replace('"75 ohm"', '"50 ohm"').replace("to = 40", "to = 5")
     path = file(text + 'circuit = { kind = "universal shunt", ranges = ["10 A", "5 A", "1 A"] }')
     said = run("circuit", path).stdout
-    assert said.startswith("universal shunt, 1 A to 10 A, the scale shows 5 A (scale 1)\n")
+    assert said.startswith("universal shunt, 1 A to 10 A, the scale shows 5 A (scale 1, 0 to 5 A)\n")
     rows = said[said.index("range ") :].splitlines()[1:4]
     assert [row.split("  ")[0] for row in rows] == ["1 A", "5 A, on the scale", "10 A"]
     # The drop of the contract's "drop" is that of the scale's own range, Im·(ring - tap), by hand.
@@ -258,7 +258,8 @@ PLAIN = '[[scale]]\nunit = "%"\nfrom = 0\nto = 100\nradius = {}\n'
 def test_a_dial_without_circuits_says_so_in_a_line(file) -> None:
     """Two direct scales of a movement that is not known in ohms are one line and the general cautions."""
     said = run("circuit", file(BARE + PLAIN.format(44) + PLAIN.format(36))).stdout.splitlines()
-    assert said[0] == "Nothing to buy or to make: the movement is used as it is (scale 1, scale 2)."
+    assert said[0].startswith("Nothing to buy or to make: the movement is used as it is (scale 1, 0 to ")
+    assert "; scale 2, 0 to " in said[0]
     assert said[1:3] == ["", "Cautions"]
 
 
@@ -274,7 +275,7 @@ def test_a_direct_scale_is_silent_beside_a_circuit(file) -> None:
     """Where another scale has a shunt, a direct one without figures is left out."""
     text = BASE + 'circuit = "shunt"\n' + PLAIN.format(36)
     said = run("circuit", file(text)).stdout
-    assert "(scale 1)" in said
+    assert "(scale 1, 0 to 40 A)" in said
     assert "scale 2" not in said
     assert len(circuits(file(text))) == 2
 

@@ -96,6 +96,17 @@ def centred(end: float, length: float, bend: float) -> Ruler:
     )
 
 
+def thermistor(low: float, high: float, length: float) -> Ruler:
+    """A thermistor thermometer in °C by its beta of 3950 K: wide when cold, crowding when hot."""
+    beta, zero = 3950.0, 273.15
+    cold, hot = (math.exp(beta / (zero + t)) for t in (low, high))
+
+    def value(shares: np.ndarray) -> np.ndarray:
+        return beta / np.log(cold + shares * (hot - cold)) - zero
+
+    return ruler(low, high, length, lambda v: (np.exp(beta / (zero + v)) - cold) / (hot - cold), value)
+
+
 ROUND_ENDS = (1.0, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 7.5, 8.0, 10.0, 12.0, 15.0, 25.0, 30.0, 60.0)
 lengths = st.floats(20.0, 400.0).map(lambda v: round(v, 1))
 tops = st.builds(

@@ -12,8 +12,10 @@ from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from dialgen.errors import InputError
-from dialgen.face.ruled.divisions import Rank, divide, legal_divisions, stepped
+from dialgen.face.ruled.dividing import divide
+from dialgen.face.ruled.divisions import Rank, legal_divisions
 from dialgen.face.ruled.numbering import auto_numbered
+from dialgen.face.ruled.stepping import stepped
 
 some = settings(max_examples=60, suppress_health_check=[HealthCheck.too_slow], deadline=None)
 any_ruler = st.one_of(even_rulers, crowding_rulers)
@@ -48,14 +50,104 @@ def check(ruler, numbered):
         sizes = {high - low for low, high in wanted}
         least = {size: min(n for (low, high), n in wanted.items() if high - low == size) for size in sizes}
         wanted = {(low, high): least[high - low] for low, high in wanted}
+    ends = end_gaps(wanted)
     placed = 0
     for (low, high), parts in wanted.items():
         inside = [(v, rank) for v, rank in marks if low < v < high]
         placed += len(inside)
-        assert [v for v, _ in inside] == [low + (high - low) * i / parts for i in range(1, parts)]
-        assert len(inside) <= 9
-        check_middles(low, high, parts, [v for v, rank in inside if rank is Rank.MIDDLE])
+        gap = ends.get((low, high))
+        if gap and (parts == 1 or (ruler.is_even() and gap.is_cut_off)):
+            check_going_on(ruler, gap, [v for v, _ in inside])
+        elif parts == 1 and high == exact(last) and not ruler.is_even():
+            assert {mantissa(v) for v, _ in inside} <= {1, 2, 5}
+        else:
+            assert [v for v, _ in inside] == [low + (high - low) * i / parts for i in range(1, parts)]
+            assert len(inside) <= 9
+            check_middles(low, high, parts, [v for v, rank in inside if rank is Rank.MIDDLE])
     assert placed == len(marks)
+    check_room(ruler, numbered, [float(v) for v, _ in marks])
+
+
+def check_room(ruler, numbered, marks):
+    """Check that no mark stands nearer than the least gap to another or to a numeral's."""
+    values = np.array(sorted([*marks, *(v for v in numbered if math.isfinite(v))]))
+    near = np.diff(ruler.place_mm(values)) < ruler.gap_mm * (1 - 1e-9)
+    plain = np.isin(values, np.array(numbered), invert=True)
+    assert not (near & (plain[1:] | plain[:-1])).any()
+
+
+@dataclasses.dataclass(frozen=True)
+class End:
+    """A gap at an end of the scale, from the numeral there to the next, and what stands beside it."""
+
+    end: Fraction
+    inner: Fraction
+    size: Fraction
+    parts: int
+
+    @property
+    def is_cut_off(self):
+        """Whether it is part of a gap like that beside it, which began or ends beyond the scale."""
+        return abs(self.end - self.inner) < self.size and (self.end / self.size).denominator != 1
+
+    def multiples(self, step):
+        """Values inside a whole number of steps from the inner numeral, from there outwards; 99 at most."""
+        way = step if self.end > self.inner else -step
+        count = math.ceil(abs(self.end - self.inner) / step) - 1
+        return [self.inner + i * way for i in range(1, min(count, 99) + 1)]
+
+
+def end_gaps(wanted):
+    """The first and last of the gaps, each where that beside it is divided."""
+    (*gaps,) = wanted
+    if len(gaps) < 2:
+        return {}
+    first, last = gaps[0], gaps[-1]
+    found = {
+        first: End(*first, gaps[1][1] - gaps[1][0], wanted[gaps[1]]),
+        last: End(last[1], last[0], gaps[-2][1] - gaps[-2][0], wanted[gaps[-2]]),
+    }
+    return {gap: end for gap, end in found.items() if end.parts > 1}
+
+
+def check_going_on(ruler, gap, inside):
+    """Check that an end gap has the marks of a step, all but one that would crowd an end between two of them.
+
+    The step is that of the gap beside it, but where its marks would crowd.
+    """
+    outwards = inside if gap.end > gap.inner else inside[::-1]
+    step = gap.size / gap.parts
+    one_two_five = not ruler.is_even() and all(v > 0 and mantissa(v) in (1, 2, 5) for v in outwards)
+    if not outwards or (one_two_five and gap.end > gap.inner):
+        # On a scale that crowds too much to go on, marks at 1, 2 and 5·10^n stand towards its end.
+        if outwards != gap.multiples(step):
+            assert not all_fit(ruler, gap, gap.multiples(step))
+        return
+    taken = abs(outwards[0] - gap.inner)
+    whole = gap.multiples(taken)
+    if taken != step:
+        # Some evenly cut gaps of an even scale keep their own division; else the first would crowd.
+        assert mantissa(taken) in (1, 2, 5)
+        assert not all_fit(ruler, gap, gap.multiples(step))
+    assert outwards in (whole, whole[:-1])
+    if outwards != whole:
+        assert ((gap.end - gap.inner) / taken).denominator != 1
+        assert near(ruler, whole[-1], gap.end)
+
+
+def all_fit(ruler, gap, values):
+    """Whether there are marks at values, none near another, though the last may be near the end."""
+    inside = list(itertools.pairwise([gap.inner, *values]))
+    bearable = 0 < len(values) < 20 and not any(near(ruler, *pair) for pair in inside)
+    even_cut = values and abs(gap.end - values[-1]) == abs(values[0] - gap.inner)
+    end_crowds = values and near(ruler, values[-1], gap.end)
+    return bearable and not (end_crowds and (even_cut or len(values) == 1))
+
+
+def near(ruler, one, other):
+    """Whether marks at two values would stand nearer than the least gap."""
+    places = ruler.place_mm(np.array([float(one), float(other)]))
+    return abs(places[1] - places[0]) < ruler.gap_mm * (1 - 1e-9)
 
 
 def check_middles(low, high, parts, middles):
@@ -103,10 +195,45 @@ def test_legal_divisions_by_hand(gap, parts):
     assert [d.parts for d in legal_divisions(gap)] == parts
 
 
-def test_explicit_gap_that_nothing_fits_gets_no_marks():
-    """Between 0 and 13 no division of 1, 2 or 5·10^n with at most nine marks exists; beside it there is."""
-    marks = divide(even(0.0, 23.0, 200.0), [0.0, 13.0, 23.0])
-    assert [v for v, _ in marks] == [14.0 + i for i in range(9)]
+def test_gap_inside_that_nothing_fits_gets_no_marks():
+    """Between 10 and 23 no division of 1, 2 or 5·10^n with at most nine marks exists; beside it there is."""
+    marks = divide(even(0.0, 33.0, 300.0), [0.0, 10.0, 23.0, 33.0])
+    assert [v for v, _ in marks] == [*range(1, 10), *range(24, 33)]
+
+
+@pytest.mark.parametrize(
+    ("numbered", "length", "inside"),
+    [
+        ([32, 200, 400, 600], 60.0, [40, 60, 80, 100, 120, 140, 160, 180]),
+        ([32, 200, 400, 600], 40.0, [60, 80, 100, 120, 140, 160, 180]),
+        ([0, 500, 1000, 1390], 69.0, [1050, 1100, 1150, 1200, 1250, 1300, 1350]),
+        ([*range(0, 201, 20), 212], 160.0, [202, 204, 206, 208, 210]),
+        ([*range(0, 201, 20), 212], 70.0, [205]),
+    ],
+)
+def test_an_odd_end_goes_on_as_the_gap_beside_it(numbered, length, inside):
+    """From 32 to 200 go on the twenties, from 1000 to 1390 the fifties, but none too near an end; by hand.
+
+    At 40 mm, a least gap of 0.8 mm, 40 stands 0.56 mm from 32; at 70 mm, 210 stands 0.66 mm from 212.
+    """
+    marks = divide(even(float(numbered[0]), float(numbered[-1]), length), [float(v) for v in numbered])
+    low, high = (numbered[0], numbered[1]) if inside[0] < numbered[1] else (numbered[-2], numbered[-1])
+    assert [v for v, _ in marks if low < v < high] == inside
+
+
+def test_an_odd_end_ranks_its_marks_as_the_gap_beside_it():
+    """With hundreds as middle marks between 200, 400 and 600, 100 is one before them."""
+    marks = divide(even(32.0, 600.0, 60.0), [32.0, 200.0, 400.0, 600.0])
+    assert [v for v, rank in marks if rank is Rank.MIDDLE] == [100, 300, 500]
+
+
+def test_a_cut_off_gap_of_an_even_scale_is_not_divided_more_finely_than_the_others():
+    """From 32 to 40, beside gaps of 20 cut by two, stand 34, 36 and 38; units would fit."""
+    numbered = [32.0, 40.0, 60.0, 80.0]
+    ruler = even(32.0, 80.0, 57.6)
+    assert legal_parts(Fraction(8))[0] == 8
+    assert fits(ruler, 32, 40, 8)
+    assert [v for v, _ in divide(ruler, numbered) if v < 40] == [34, 36, 38]
 
 
 @pytest.mark.parametrize("numbered", [[], [0.0], [math.inf]])

@@ -17,6 +17,7 @@ IRON = 'kind = "moving iron"\ncurrent = "10 A"'
 OTHER = 'kind = "other"\ncurrent = "10 A"'
 SHUNT = '{ kind = "shunt", range = "40 A" }'
 BOUGHT = '{ kind = "shunt", range = "40 A", rated = "40 A/75 mV" }'
+TRANSFORMER = '{ kind = "current transformer", ratio = "200/5" }'
 OHMS = '{ kind = "series ohmmeter", half = "1.5 kohm", battery = "1.5 V" }'
 SCALE = 'unit = "A"\nfrom = 0\nto = 40\nradius = 40'
 
@@ -51,7 +52,10 @@ def names(file: DialFile) -> list[str]:
         (COIL, '{ kind = "shunt ohmmeter", half = "75 ohm", battery = "1.5 V" }', ["moving coil", "dc"]),
         (IRON, "", ["moving iron", "ac and dc"]),
         (IRON, SHUNT, ["moving iron", "ac and dc"]),
+        (IRON, TRANSFORMER, ["moving iron", "ac"]),
+        (COIL, TRANSFORMER, ["moving coil"]),
         (OTHER, "", []),
+        (OTHER, TRANSFORMER, []),
     ],
 )
 def test_auto_follows_from_movement_and_circuit(movement: str, circuit: str, shown: list[str]) -> None:

@@ -4,16 +4,27 @@ import dataclasses
 import itertools
 import math
 from fractions import Fraction
-from types import SimpleNamespace
 
 import numpy as np
 import pytest
-from face_rulers import crowding_rulers, even, even_rulers, exact, logarithmic, mantissa, ohms, powered
+from face_rulers import (
+    crowding_rulers,
+    even,
+    even_rulers,
+    exact,
+    logarithmic,
+    mantissa,
+    ohms,
+    powered,
+    thermistor,
+)
 from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from dialgen.face.ruled import crowding
+from dialgen.face.ruled.dividing import divide
 from dialgen.face.ruled.numbering import auto_numbered, wanted_count
+from dialgen.face.ruled.paths import UNLIKE, Edges, cheapest_path
 from dialgen.face.ruled.ruler import decimal_value, multiples
 
 some = settings(max_examples=60, suppress_health_check=[HealthCheck.too_slow], deadline=None)
@@ -162,6 +173,17 @@ def test_ohms_scale_keeps_infinity_and_its_middle_open():
     assert np.diff(places).max() < ruler.length_mm / 3
 
 
+@pytest.mark.parametrize("length", [55.0, 69.0, 94.0, 141.0, 184.0])
+@pytest.mark.parametrize("low", [-20.0, -10.0])
+def test_a_thermistor_is_numbered_where_it_crowds_at_its_hot_end(length, low):
+    """By exp(3950 K / T): a numeral stands between 0 and 100 °C, and no fifth of the line is bare."""
+    ruler = thermistor(low, 100.0, length)
+    numbered = auto_numbered(ruler)
+    assert any(0 < v < 100 for v in numbered)
+    values = sorted([*numbered, *(v for v, _ in divide(ruler, numbered))])
+    assert np.diff(ruler.place_mm(np.array(values))).max() < length / 5
+
+
 # --- the shortest path ---------------------------------------------------------------------------
 
 
@@ -170,7 +192,7 @@ def path_cost(path, edges, places):
     steps = list(itertools.pairwise(path))
     sizes = [math.log2(places[b] - places[a]) for a, b in steps]
     unlike = sum(abs(one - other) for one, other in itertools.pairwise(sizes))
-    return sum(edges[step] for step in steps) + crowding._UNLIKE * unlike
+    return sum(edges[step] for step in steps) + UNLIKE * unlike
 
 
 def all_paths(count):
@@ -192,10 +214,9 @@ def test_the_path_found_is_the_cheapest_of_all(data):
     if not edges:
         return
     here, there = (np.array(ends) for ends in zip(*edges, strict=True))
-    nodes = SimpleNamespace(values=places, places=places)
     parts = [slice(0, len(here) // 2), slice(len(here) // 2, None)]
     costs = np.array(list(edges.values()))
-    cost, path = crowding._cheapest_path(nodes, [crowding._Edges(here[p], there[p], costs[p]) for p in parts])
+    cost, path = cheapest_path(places, [Edges(here[p], there[p], costs[p]) for p in parts])
     ways = [
         path_cost(way, edges, places)
         for way in all_paths(count)

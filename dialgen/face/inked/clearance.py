@@ -20,6 +20,7 @@ _EDGE_MM = 0.8
 _SLIDE_MM = 0.1
 _FEW = 4
 _MOST_MOVES = 8
+_HAIR = 1e-9
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -133,6 +134,33 @@ def _farthest(points: Array, obstacles: Array, away: Point, space_mm: float) -> 
 def _past(along: Array, room: Array) -> Array:
     # |p + t·u - q| = space at t = (q - p)·u + sqrt(space² - across²): past the larger root it is clear.
     return np.where(room >= 0, along + np.sqrt(np.maximum(room, 0.0)), -np.inf)
+
+
+def clear_as_numbers(
+    points: Array, obstacles: Array, away: Point, turn_deg: float, least_mm: tuple[float, float]
+) -> float:
+    """Return how far a numeral must move along ``away`` not to be read as one with that before it.
+
+    It is then above or below that, or stands well beside it.
+
+    Args:
+        points: (n, 2), the numeral's ink, mm.
+        obstacles: (m, 2), the ink of the numeral before it, mm.
+        away: the unit vector along which it is moved.
+        turn_deg: how far both are turned clockwise.
+        least_mm: the least space beside it, and that above or below it.
+
+    >>> one = np.array([[-0.5, -1.0], [0.5, 1.0]])
+    >>> [clear_as_numbers(one, one, away, 0.0, (1.2, 0.0)) for away in ((1.0, 0.0), (0.0, 1.0))]
+    [2.2, 2.0]
+    """
+    turn = math.radians(turn_deg)
+    frame = np.array([[math.cos(turn), math.sin(turn)], [-math.sin(turn), math.cos(turn)]])
+    own, other, way = points @ frame, obstacles @ frame, np.array(away) @ frame
+    # Turned level: so far it is to go past the other's end, and past its top.
+    ahead = np.where(way > 0, other.max(axis=0) - own.min(axis=0), own.max(axis=0) - other.min(axis=0))
+    shares = np.maximum(np.abs(way), _HAIR)
+    return max(0.0, float(((ahead + np.array(least_mm)) / shares).min()))
 
 
 def slides(plate: Outliner, row: Row, shifts: Array, tips: Array, space_mm: float) -> Array:

@@ -1,7 +1,8 @@
 """Where numerals stand: everywhere equally clear of the ends of their marks, whatever they say.
 
 The clear space is that between the ink itself of the numeral, not a box around it, and the end of its
-mark.  A further row stands clear of the one before.
+mark.  A further row stands clear of the one before: above or below that, or a figure's width beside it,
+so that the two are never read as one number.
 """
 
 from __future__ import annotations
@@ -13,7 +14,14 @@ from typing import NamedTuple
 import numpy as np
 
 from dialgen.drawing import Letters, Placed, Point, Style
-from dialgen.face.inked.clearance import Row, clear_of_ends, clear_of_ink, clear_of_others, slides
+from dialgen.face.inked.clearance import (
+    Row,
+    clear_as_numbers,
+    clear_of_ends,
+    clear_of_ink,
+    clear_of_others,
+    slides,
+)
 from dialgen.face.plate import Outliner
 from dialgen.face.ruled.divisions import Rank
 from dialgen.face.ruled.ruling import Mark, RuledScale
@@ -90,7 +98,7 @@ def _beside(scale: RuledScale, outside: bool, rows: list[int], plate: Outliner) 
         marks = [mark for mark, _, _ in said]
         words = [_set(scale, mark, text) for mark, _, text in said]
         row = _row([ink_points(word) for word in words], [stem for _, stem, _ in said])
-        reaches_mm = _reaches(scale, words[0], row, tips, [before.get(mark) for mark in marks])
+        reaches_mm = _reaches(scale, words, row, tips, [before.get(mark) for mark in marks])
         shifts = row.ends + reaches_mm[:, None] * row.aways
         shifts = shifts + slides(plate, row, shifts, tips, _OTHERS * scale.sizes.space_mm + _pen_mm(words[0]))
         before.update(zip(marks, row.ink(shifts), strict=True))
@@ -108,18 +116,20 @@ def _row(edges: list[Array], stems: list[_Stem]) -> Row:
     )
 
 
-def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: list[Array | None]) -> Array:
+def _reaches(
+    scale: RuledScale, words: list[Letters], row: Row, tips: Array, before: list[Array | None]
+) -> Array:
     """Return how far from its mark's end the middle of each numeral lies.
 
     Args:
         scale: the scale.
-        word: any of the numerals, for the width of its strokes.
-        row: the numerals.
+        words: the numerals.
+        row: their ink.
         tips: the ends of all marks, (n, 2), mm.
         before: the ink of the row before at each mark, None where there is none.
     """
     sizes = scale.sizes
-    pen_mm = _pen_mm(word)
+    pen_mm = _pen_mm(words[0])
     reaches_mm = clear_of_ends(row, sizes.numbered_width_mm / 2, sizes.space_mm + pen_mm)
     reaches_mm = clear_of_others(row, reaches_mm, tips, _OTHERS * sizes.space_mm + pen_mm)
     space_mm, owners = ROW_SPACE * sizes.space_mm + 2 * pen_mm, row.owners
@@ -127,11 +137,18 @@ def _reaches(scale: RuledScale, word: Letters, row: Row, tips: Array, before: li
         if ink is not None:
             points, obstacles = row.points[owners == i], ink - row.ends[i]
             away = (float(row.aways[i, 0]), float(row.aways[i, 1]))
-            reaches_mm[i] = clear_of_ink(points, obstacles, away, space_mm)
+            clear_mm = clear_of_ink(points, obstacles, away, space_mm)
+            turn_deg, apart_mm = words[i].glyphs[0].angle_deg, (figure_mm(scale) + 2 * pen_mm, 2 * pen_mm)
+            reaches_mm[i] = max(clear_mm, clear_as_numbers(points, obstacles, away, turn_deg, apart_mm))
     if isinstance(scale.line, StraightLine) or scale.look.turn is Turn.ACROSS:
         # Numerals in a row share a baseline.
         reaches_mm[:] = reaches_mm.max()
     return reaches_mm
+
+
+def figure_mm(scale: RuledScale) -> float:
+    """Return the width of a figure of a scale's numerals: the least space between two side by side."""
+    return measure("0", scale.sizes.numeral_mm, hand=scale.hand).width_mm
 
 
 def _pen_mm(word: Letters) -> float:

@@ -22,6 +22,7 @@ from dialgen.looks import Decimal
 from dialgen.symbols import Form as ClassForm
 from dialgen.symbols import Sign, Subject, class_sign, items, parse, width
 
+_ANY = "any"
 _CURRENTS: Mapping[str, Mapping[str, str]] = {
     "moving coil": {
         "direct": "dc",
@@ -33,11 +34,17 @@ _CURRENTS: Mapping[str, Mapping[str, str]] = {
         "shunt ohmmeter": "dc",
         "bridge": "dc",
     },
+    "moving iron": {
+        "current transformer": "ac",
+        "rectifier": "ac",
+        _ANY: "ac and dc",
+    },
 }
-"""The kind of current that a movement shows behind a circuit, by the kinds of both."""
+"""The kind of current that a movement shows behind a circuit, by the kinds of both.
 
-_ANY_CIRCUIT: Mapping[str, str] = {"moving iron": "ac and dc"}
-"""The same by movement alone; where neither table knows, nothing is said of the current."""
+The row of any circuit stands for all that have none of their own; where there is none, nothing is said
+of the current: a moving coil behind a current transformer shows none.
+"""
 
 _MOVEMENTS: Mapping[str, str] = {"moving coil": "moving coil", "moving iron": "moving iron"}
 """The symbol of a movement by its kind; those not listed have none."""
@@ -153,7 +160,7 @@ def _following(file: DialFile, own: Sequence[Sign]) -> list[Sign]:
     spoken = {sign.symbol.subject for sign in own}
     movement = file.movement.kind
     kinds = list(_circuit_kinds(file))
-    currents = [_current(movement, kind) for kind in kinds] or [_ANY_CIRCUIT.get(movement)]
+    currents = [_current(movement, kind) for kind in kinds or [_ANY]]
     joint = next((_TOGETHER[movement, kind] for kind in kinds if (movement, kind) in _TOGETHER), None)
     names = [joint or _MOVEMENTS.get(movement), *currents]
     found = [parse(name) for name in dict.fromkeys(names) if name]
@@ -162,7 +169,8 @@ def _following(file: DialFile, own: Sequence[Sign]) -> list[Sign]:
 
 
 def _current(movement: str, circuit: str) -> str | None:
-    return _CURRENTS.get(movement, {}).get(circuit) or _ANY_CIRCUIT.get(movement)
+    row = _CURRENTS.get(movement, {})
+    return row.get(circuit) or row.get(_ANY)
 
 
 def _circuits(file: DialFile) -> Iterator[Circuit]:

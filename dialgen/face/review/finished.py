@@ -10,6 +10,7 @@ from dialgen.dialfile.looks import Dress, look_of
 from dialgen.dialfile.models import DialFile
 from dialgen.drawing import Drawing, Point
 from dialgen.errors import Key
+from dialgen.face.inked.numerals import figure_mm
 from dialgen.face.parts import GROUND, TEXT
 from dialgen.face.plate import Outliner
 from dialgen.face.review.openings import openings
@@ -21,6 +22,8 @@ from dialgen.looks import Look
 
 ROW_GAP = 0.2
 """Numerals in a row that stand nearer than this share of their height read as one number."""
+FIGURE_GAP = 0.8
+"""Numerals of two rows that stand side by side read as one nearer than this share of a figure's width."""
 OWN_SPACE = 0.8
 """A numeral must not stand nearer to another scale's marks than this share of its space from its own."""
 _ALIKE = (TEXT, OPENING)
@@ -79,8 +82,7 @@ class Finished:
         firsts = {group: sort for sort, group in reversed(groups.items())}
         numbers = {group: i for i, group in enumerate(firsts)}
         matrix = [[apart(a, b) for b in firsts.values()] for a in firsts.values()]
-        sizes = [scale.sizes for scale in self.scales]
-        within_mm = max(max(OWN_SPACE * s.space_mm, ROW_GAP * s.numeral_mm) for s in sizes)
+        within_mm = max(map(_within_mm, self.scales))
         found = neighbours(
             [thing.shape for thing in things],
             within_mm,
@@ -120,3 +122,9 @@ class Finished:
             if name in self.file.look.changes:
                 return ("look", name)
         return ("look",) if scale is None or not scale.spec.look.style else (*scale.dial.key, "look")
+
+
+def _within_mm(scale: RuledScale) -> float:
+    """Return how near things come to each other that any check of a scale asks for."""
+    rows = FIGURE_GAP * figure_mm(scale) if scale.spec.also else 0.0
+    return max(OWN_SPACE * scale.sizes.space_mm, ROW_GAP * scale.sizes.numeral_mm, rows)

@@ -5,11 +5,13 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 
 from dialgen.errors import Key, Remark
+from dialgen.face.inked.numerals import figure_mm
 from dialgen.face.parts import Part
-from dialgen.face.review.finished import OWN_SPACE, ROW_GAP, Finished, Pair
+from dialgen.face.review.finished import FIGURE_GAP, OWN_SPACE, ROW_GAP, Finished, Pair
 from dialgen.face.review.rules import over_zone
 from dialgen.face.review.things import OPENING, Thing, line_key
 from dialgen.face.review.wording import and_so, at, grouped, move, weight
+from dialgen.face.ruled.ruling import RuledScale
 
 
 def touching(face: Finished) -> Iterator[Remark]:
@@ -108,18 +110,27 @@ def _text(thing: Thing) -> str:
 
 
 def _of_two_rows(pair: Pair) -> bool:
-    """Return whether two numerals of a scale are of different rows; its own stand first in their layer."""
+    """Return whether two numerals of a scale are of different rows."""
     scale = pair.one.sort.scale
-    own = sum(bool(mark.label) for mark in scale.marks) if scale else 0
-    return (pair.one.index < own) != (pair.other.index < own)
+    return scale is not None and _row(scale, pair.one.index) != _row(scale, pair.other.index)
+
+
+def _row(scale: RuledScale, index: int) -> int:
+    """Return the row that a numeral belongs to, in its layer's order: the scale's own is first."""
+    own = sum(bool(mark.label) for mark in scale.marks)
+    further = sum(bool(mark.further) for mark in scale.marks)
+    return 0 if index < own else 1 + (index - own) // further
 
 
 def _in_a_row(pair: Pair) -> bool:
     """Return whether two numerals stand side by side, so near that they may be read as one."""
     scale = pair.one.sort.scale
-    height_mm = scale.sizes.numeral_mm if scale else 0.0
+    if scale is None:
+        return False
+    height_mm = scale.sizes.numeral_mm
     (_, low, _, high), (_, bottom, _, top) = pair.one.shape.box, pair.other.shape.box
-    return min(high, top) - max(low, bottom) > height_mm / 2 and pair.gap_mm < ROW_GAP * height_mm
+    near_mm = FIGURE_GAP * figure_mm(scale) if _of_two_rows(pair) else ROW_GAP * height_mm
+    return min(high, top) - max(low, bottom) > height_mm / 2 and pair.gap_mm < near_mm
 
 
 def _strays_to_another(pair: Pair) -> bool:

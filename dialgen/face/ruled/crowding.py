@@ -9,7 +9,6 @@ from end to end is found over the whole scale at once.
 from __future__ import annotations
 
 import math
-import operator
 from collections.abc import Iterator
 from dataclasses import dataclass
 
@@ -17,10 +16,9 @@ import numpy as np
 from numpy.typing import NDArray
 
 from dialgen.face.ruled.divisions import legal_divisions
+from dialgen.face.ruled.paths import Edges, Indices, cheapest_path
 from dialgen.face.ruled.ruler import Ruler, decimal_value, digits
 from dialgen.stage import Array
-
-Indices = NDArray[np.intp]
 
 # What a path pays, in units of about one badly placed numeral.  Tuned by eye over ohms, decibel,
 # square-law, logarithmic and standing-wave scales of 30 to 200 mm.
@@ -31,8 +29,8 @@ _MORE_DIGITS = 2.2  # of any other further digit
 _LONG = 0.8  # of a doubling of the wanted gap, squared
 _SHORT = 0.7  # of a halving of it, squared
 _TOO_LONG = 3.0  # times the wanted gap: from here on a long gap costs steeply more
-_UNLIKE = 0.5  # of a doubling or halving from one gap to the next
 _UNDIVIDED = 1.5  # of a gap that even its coarsest division would crowd
+_SPARSE = 3.0  # of a doubling of the wanted gap without a mark, squared
 _BARE = 1.0  # of a wanted gap's length before infinity, where no marks can stand
 _ODD_END = 2.5  # of any gap to an end that is not round, or is infinite
 _NOT_LEGAL = 8.0  # of any gap to a round end, or where nothing legal has room
@@ -55,9 +53,9 @@ def cheapest_numerals(ruler: Ruler, forced: tuple[float, ...], wanted_mm: float)
     values = np.array(sorted({*round_values(ruler, wanted_mm), *forced}))
     nodes = _nodes(ruler, values, forced, wanted_mm)
     edges = [*_legal_edges(nodes), *_end_edges(nodes)]
-    cost, path = _cheapest_path(nodes, edges)
+    cost, path = cheapest_path(nodes.places, edges)
     if cost > 2 * _NOT_LEGAL:
-        cost, path = _cheapest_path(nodes, [*edges, _any_edges(nodes)])
+        cost, path = cheapest_path(nodes.places, [*edges, _any_edges(nodes)])
     return tuple(values[path].tolist()) if cost < math.inf else forced
 
 
@@ -89,6 +87,8 @@ class _Nodes:
     widths: Array
     costs: Array
     slopes: Array
+    along: Array
+    along_mm: Array
     stops: Indices
     clear_mm: float
     gap_mm: float
@@ -96,20 +96,12 @@ class _Nodes:
     foot: bool
 
 
-@dataclass(frozen=True, slots=True, eq=False)
-class _Edges:
-    """Pairs of nodes that may follow each other, and what that costs."""
-
-    here: Indices
-    there: Indices
-    costs: Array
-
-
 def _nodes(ruler: Ruler, values: Array, forced: tuple[float, ...], wanted_mm: float) -> _Nodes:
     places = ruler.place_mm(values)
     along = ruler.along[np.isfinite(ruler.along)]
     cell_mm = ruler.length_mm / (len(ruler.along) - 1)
-    slopes = np.interp(values, along, np.gradient(np.arange(len(along)) * cell_mm, along, edge_order=2))
+    along_mm: Array = cell_mm * np.arange(len(along), dtype=np.float64)
+    slopes = np.interp(values, along, np.gradient(along_mm, along, edge_order=2))
     costs = np.array([0.0 if v in forced else _roundness(v) for v in values.tolist()])
     stops = np.searchsorted(values, np.array(forced))
     return _Nodes(
@@ -118,6 +110,8 @@ def _nodes(ruler: Ruler, values: Array, forced: tuple[float, ...], wanted_mm: fl
         ruler.width_mm(values),
         costs,
         slopes,
+        along,
+        along_mm,
         stops,
         ruler.clear_mm,
         ruler.gap_mm,
@@ -134,7 +128,7 @@ def _roundness(value: float) -> float:
     return (_HALF_DIGIT if shown[-1] == "5" else _MORE_DIGITS) * (len(shown) - 1)
 
 
-def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
+def _legal_edges(nodes: _Nodes) -> Iterator[Edges]:
     """Yield the edges of 1 to 5 units between multiples of that unit, for every power of ten."""
     finite = np.flatnonzero(np.isfinite(nodes.values))
     values = nodes.values[finite]
@@ -153,7 +147,7 @@ def _legal_edges(nodes: _Nodes) -> Iterator[_Edges]:
             yield _roomy(nodes, whole[found], there[found], gap_cost, gap=count * unit)
 
 
-def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
+def _end_edges(nodes: _Nodes) -> Iterator[Edges]:
     """Yield edges from an end to any node: a fair one to an end that is not round or is infinite.
 
     To a round end they are dear, and taken only where the ends crowd so much that the legal gaps
@@ -161,19 +155,27 @@ def _end_edges(nodes: _Nodes) -> Iterator[_Edges]:
     """
     last = len(nodes.values) - 1
     others = np.arange(1, last)
-    first_cost, last_cost = (_ODD_END if _is_odd(v) else _NOT_LEGAL for v in nodes.values[[0, last]].tolist())
-    yield _roomy(nodes, np.zeros_like(others), others, first_cost)
-    # A gap to infinity can have no marks: the shorter, the better.
-    bare = 0.0 if math.isfinite(nodes.values[last]) else _BARE
-    lengths = nodes.places[last] - nodes.places[others]
-    yield _roomy(nodes, others, np.full_like(others, last), last_cost + bare * lengths / nodes.wanted_mm)
+    first, end = np.zeros_like(others), np.full_like(others, last)
+    yield _roomy(nodes, first, others, _end_costs(nodes, first, others, nodes.values[0]))
+    yield _roomy(nodes, others, end, _end_costs(nodes, others, end, nodes.values[last]))
+
+
+def _end_costs(nodes: _Nodes, here: Indices, there: Indices, end: float) -> Array:
+    """Return what gaps to an end pay that are not legal."""
+    if math.isfinite(end) and _is_odd(end):
+        return np.full(len(here), _ODD_END)
+    # A gap to infinity, or to a round end that nothing cuts, has hardly a mark: the shorter, the better.
+    bare = _BARE * (nodes.places[there] - nodes.places[here]) / nodes.wanted_mm
+    if math.isinf(end):
+        return _ODD_END + bare
+    return bare + np.where(_are_whole(nodes, here, there), _WIDE, _NOT_LEGAL)
 
 
 def _is_odd(value: float) -> bool:
     return not math.isfinite(value) or len(digits(value)) > 1
 
 
-def _any_edges(nodes: _Nodes) -> _Edges:
+def _any_edges(nodes: _Nodes) -> Edges:
     """Return edges between any nodes not too far apart, dear but for 6 to 9 units of a power of ten."""
     here, there = np.triu_indices(len(nodes.values), 1)
     near = nodes.places[there] - nodes.places[here] < 4 * nodes.wanted_mm
@@ -182,12 +184,17 @@ def _any_edges(nodes: _Nodes) -> _Edges:
         there[near & np.isfinite(nodes.values[there])],
     )
     decades = np.array([digits(v) == "1" for v in nodes.values.tolist()])
-    gaps = nodes.values[there] - nodes.values[here]
-    units = 10.0 ** np.floor(np.log10(gaps) + 1e-9)
-    whole = np.abs(gaps / units - np.round(gaps / units)) < 1e-6
-    whole &= np.abs(nodes.values[here] / units - np.round(nodes.values[here] / units)) < 1e-6
+    whole = _are_whole(nodes, here, there)
     costs = np.where(decades[here] & decades[there], _DECADE, np.where(whole, _WIDE, _NOT_LEGAL))
     return _roomy(nodes, here, there, costs)
+
+
+def _are_whole(nodes: _Nodes, here: Indices, there: Indices) -> NDArray[np.bool_]:
+    """Return which gaps are 1 to 9 units of a power of ten between multiples of it."""
+    low, gaps = nodes.values[here], nodes.values[there] - nodes.values[here]
+    units = 10.0 ** np.floor(np.log10(gaps) + 1e-9)
+    counts = np.stack([gaps / units, low / units])
+    return np.asarray(np.all(np.abs(counts - np.round(counts)) < 1e-6, axis=0))
 
 
 def _roomy(
@@ -197,7 +204,7 @@ def _roomy(
     cost: float | Array,
     *,
     gap: float = 0.0,
-) -> _Edges:
+) -> Edges:
     """Return the edges that leave room between numerals and jump over no forced value, with costs."""
     lengths = nodes.places[there] - nodes.places[here]
     room = lengths - (nodes.widths[here] + nodes.widths[there]) / 2 - nodes.clear_mm
@@ -211,7 +218,11 @@ def _roomy(
     costs = costs + off**2 * np.where(off > 0, _LONG * steep, _SHORT)
     if gap:
         costs = costs + _UNDIVIDED * _undivided(nodes, here, there, gap)
-    return _Edges(here, there, costs)
+        # Scales crowd towards their ends; only there so many are far apart that it is worth asking.
+        far = np.flatnonzero((lengths > nodes.wanted_mm) & ((here == 0) | (there == len(nodes.values) - 1)))
+        if len(far):
+            costs[far] += _SPARSE * _sparse(nodes, here[far], there[far], gap)
+    return Edges(here, there, costs)
 
 
 def _undivided(nodes: _Nodes, here: Indices, there: Indices, gap: float) -> NDArray[np.bool_]:
@@ -228,36 +239,19 @@ def _undivided(nodes: _Nodes, here: Indices, there: Indices, gap: float) -> NDAr
     return np.asarray(nearest < nodes.gap_mm)
 
 
-def _cheapest_path(nodes: _Nodes, edges: list[_Edges]) -> tuple[float, list[int]]:
-    """Return the cheapest path from the first node to the last and its cost, infinite where there is none.
+def _sparse(nodes: _Nodes, here: Indices, there: Indices, gap: float) -> Array:
+    """Return how much farther apart than numerals are wanted marks stand in each gap: doublings, squared.
 
-    Edges lead upwards only, so those taken in the order of their start find all that lead there
-    already settled (dynamic programming).  What a path pays from gap to gap for their unlike
-    lengths makes the edges, not the nodes, the steps of the programme.
+    So they are where a gap crowds at its one end alone, and no division has room but the coarsest.
     """
-    here = np.concatenate([e.here for e in edges])
-    there = np.concatenate([e.there for e in edges])
-    order = np.argsort(here, kind="stable")
-    sizes = np.log2(nodes.places[there] - nodes.places[here])
-    columns = (here, there, np.concatenate([e.costs for e in edges]), sizes)
-    arrivals: list[list[_Arrival]] = [[] for _ in nodes.values]
-    for start, end, cost, size in zip(*(c[order].tolist() for c in columns), strict=True):
-        if start == 0:
-            arrivals[end].append((cost, size, 0, None))
-        elif arrivals[start]:
-            total, before = min([(a[0] + _UNLIKE * abs(size - a[1]), a) for a in arrivals[start]], key=_first)
-            arrivals[end].append((total + cost, size, start, before))
-    if not arrivals[-1]:
-        return math.inf, []
-    step: _Arrival | None = min(arrivals[-1], key=_first)
-    cost, path = step[0] if step else math.inf, [len(nodes.values) - 1]
-    while step:
-        path.append(step[2])
-        step = step[3]
-    return cost, path[::-1]
-
-
-_Arrival = tuple[float, float, int, "_Arrival | None"]
-"""A way to a node: its cost, the size of its last gap, where that began, and how it got there."""
-
-_first = operator.itemgetter(0)
+    longest = nodes.places[there] - nodes.places[here]
+    low = nodes.values[here]
+    # From the coarsest to the finest: the last that has room is the one that will be drawn.
+    for division in reversed(legal_divisions(gap)):
+        cuts = low[:, None] + np.linspace(0.0, gap, division.parts + 1)
+        steps = np.diff(np.interp(cuts, nodes.along, nodes.along_mm), axis=1)
+        # At the foot of a scale the first marks may be left out.
+        roomy = (steps.min(axis=1) >= nodes.gap_mm) | (nodes.foot & (here == 0))
+        longest = np.where(roomy, steps.max(axis=1), longest)
+    doublings = np.log2(np.maximum(longest / nodes.wanted_mm, 1.0))
+    return np.asarray(doublings**2)

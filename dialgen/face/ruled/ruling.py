@@ -17,11 +17,13 @@ from dialgen.errors import InputError, Key
 from dialgen.face.plate import Outliner
 from dialgen.face.ruled.captions import Caption, captions
 from dialgen.face.ruled.checks import check_meets, check_on_plate, check_order
-from dialgen.face.ruled.divisions import MOST_MARKS, Rank, divide, stepped
+from dialgen.face.ruled.dividing import divide
+from dialgen.face.ruled.divisions import MOST_MARKS, Rank
 from dialgen.face.ruled.numbering import auto_numbered
 from dialgen.face.ruled.precision import blank_from_zero
 from dialgen.face.ruled.ruler import Ruler, multiples
 from dialgen.face.ruled.sizes import Sizes, sizes_for
+from dialgen.face.ruled.stepping import stepped
 from dialgen.face.ruled.survey import survey
 from dialgen.geometry.lines import ArcLine, ScaleLine, StraightLine
 from dialgen.lettering import Hand, numeral_width

@@ -22,7 +22,7 @@ _STEPS = 96
 _FEW_STEPS = 32
 _LEAST_STEP, _LARGEST_VALUE = 1e-30, 1e30
 _AT_REST = 0.0025
-_SLOW = 4.0
+_SLOW = 1.5
 """So many times the mean step of value in the first step of place, and the scale has a foot."""
 
 NumeralWidth = Callable[[str, float], float]

@@ -297,6 +297,15 @@ SPOILED = [
         "overlap",
     ),
     Spoiled(
+        "two rows read as one number",
+        PANEL,
+        "radius = 44\nnumbered = { every = 10 }",
+        "radius = 44\nnumbered = [0, 10, 20, 30, 38, 40]\nalso = [{ times = 100 }]",
+        "overlap",
+        "scale[1].numbered",
+        "the numerals 38 and 4000 all but run together",
+    ),
+    Spoiled(
         "numeral nearer to another's marks",
         BETWEEN,
         "radius = 43",

@@ -91,19 +91,26 @@ class Bridge(Circuit):
     def _facts(self, case: Case, ohms: Ohms, rest_ohm: float) -> tuple[Fact, ...]:
         supply_v, end_ohm = self.supply.value, case.signal
         places = [x for x in (rest_ohm, self._balance_ohm, end_ohm) if 0 <= x < math.inf]
-        sensor = max((_sensor(x, ohms, supply_v) for x in places), key=lambda load: load.watts)
-        at = f"at {engineered(sensor.ohms, 'Ω')}"
+        sensors = [_sensor(x, ohms, supply_v) for x in places]
+        most = max(sensors, key=lambda load: abs(load.current_a))
+        hottest = max(sensors, key=lambda load: load.watts)
         return (
             Fact(name=SUPPLY, value=supply_v, unit="V", note="off balance the deflection follows it"),
             Fact(name=BALANCE, value=self._balance_ohm, unit="Ω", note="R1·R3/R2, pointer at rest"),
             *_full_facts(case, ohms, supply_v),
             Fact(
                 name="sensor current",
-                value=abs(sensor.current_a),
+                value=abs(most.current_a),
                 unit="A",
-                note=f"{at}; 1 mA or less through a Pt100 is usual (common practice)",
+                note=f"at most, at {engineered(most.ohms, 'Ω')}; 1 mA or less through a Pt100 is usual "
+                "(common practice)",
             ),
-            Fact(name="sensor self-heating", value=sensor.watts, unit="W", note=at),
+            Fact(
+                name="sensor self-heating",
+                value=hottest.watts,
+                unit="W",
+                note=f"at most, at {engineered(hottest.ohms, 'Ω')}",
+            ),
             *_lead_facts(case, ohms),
         )
 

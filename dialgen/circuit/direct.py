@@ -7,8 +7,8 @@ from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from typing import Annotated, ClassVar
 
-from dialgen.circuit.design import COIL, Case, Design, Load, Ohms, Working
-from dialgen.circuit.terminals import Circuit, Terminals
+from dialgen.circuit.design import COIL, Case, Design, Fact, Load, Ohms, Working
+from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
 from dialgen.quantity import engineered
 from dialgen.stage import Affine, Stage
@@ -63,7 +63,23 @@ class Direct(Circuit):
             cases=(Case(name=engineered(full, unit), signal=full, work=_worker(unit, full, coil_ohm or 0.0)),)
             if bare
             else (),
+            facts=_between(terminals.coil, unit, abs(full)),
         )
+
+
+_NEAR_OWN = 0.01
+
+
+def _between(coil: Coil, unit: str, full: float) -> tuple[Fact, ...]:
+    """Return the movement's own full deflection where the scale's is another."""
+    factor = {"A": 1.0, "V": coil.resistance}.get(unit)
+    if coil.current is None or factor is None:
+        return ()
+    own = coil.current * factor
+    if abs(full - own) <= _NEAR_OWN * own:
+        return ()
+    note = f"not {engineered(full, unit)}: an amplifier or sender stands between, and is not designed here"
+    return (Fact(name="the movement takes", value=own, unit=unit, note=note),)
 
 
 _CURRENT_A: Mapping[str, Callable[[float, float], float]] = {

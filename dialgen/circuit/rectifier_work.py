@@ -73,7 +73,8 @@ class RectifierWork:
                 name="error on a square wave",
                 value=100 * (SINE_FORM - 1),
                 unit="%",
-                note=f"of its RMS; on a triangle {triangle} %: the scale is right on a sine alone",
+                note=f"of its RMS with ideal diodes, on a triangle {triangle} %: the scale is right on a "
+                "sine alone",
             ),
             Fact(
                 name="peak diode current",

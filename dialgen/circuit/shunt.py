@@ -210,7 +210,7 @@ def _rating_fact(rated: Rating | None) -> tuple[Fact, ...]:
         return ()
     continuous = engineered(_CONTINUOUS * rated.current_a, "A", 3)
     drop = engineered(rated.drop_v, "V")
-    note = f"drops {drop}; for good at most two thirds of it, {continuous} (common practice)"
+    note = f"drops {drop}; continuously at most two thirds of it, {continuous} (common practice)"
     return (Fact(name=RATED_CURRENT, value=rated.current_a, unit="A", note=note),)
 
 

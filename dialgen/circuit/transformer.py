@@ -23,7 +23,7 @@ _USUAL_A = 5.0
 """The largest secondary that is sold; 1 A is the other usual one (common practice)."""
 
 _EXTENDED = 1.2
-"""What transformers carry for good, of their ratio, unless more is stamped on them (common practice)."""
+"""What transformers carry continuously, of their ratio, unless more is stamped on them (common practice)."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -112,6 +112,7 @@ class CurrentTransformer(Circuit):
         at_full = case.work(secondary.ohms, case.signal)
         burden_va = at_full.drop_v / case.signal * self.ratio.secondary_a**2
         stamped = engineered(self.ratio.secondary_a, "A")
+        counted = "with its" if self.leads else "without the"
         return replace(
             secondary,
             kind=self.kind,
@@ -119,13 +120,13 @@ class CurrentTransformer(Circuit):
             cases=(Case(name=engineered(range_a, "A"), signal=range_a, work=self._stepped(case.work)),),
             stamp=self.ratio.stamp,
             facts=(
-                *secondary.facts,
+                *(replace(fact, name="leads") for fact in secondary.facts),
                 Fact(name=SECONDARY, value=case.signal, unit="A"),
                 Fact(
                     name="burden",
                     value=burden_va,
                     unit="VA",
-                    note=f"at {stamped}, without the leads to the transformer",
+                    note=f"at {stamped}, {counted} leads",
                 ),
             ),
             alternating=True,

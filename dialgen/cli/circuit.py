@@ -92,9 +92,9 @@ def command(
         },
     )
     chosen = _chosen(face, only)
-    if outputs:
-        _draw(face, chosen, outputs)
     bills = [(each, face.bill(each, bench, _progress)) for each in chosen]
+    if outputs:
+        _draw(face, bills, outputs)
     if as_json:
         from dialgen.cli.bill_json import circuit_json
 
@@ -135,11 +135,17 @@ def _progress(part: str) -> Callable[[int, int], None]:
     return tell
 
 
-def _draw(face: Face, chosen: tuple[Designed, ...], outputs: tuple[str, ...]) -> None:
+def _draw(face: Face, bills: Sequence[tuple[Designed, Bill]], outputs: tuple[str, ...]) -> None:
     from dialgen import api
+    from dialgen.errors import InputError
     from dialgen.renderers import render
 
-    drawings = [face.schematic(each) for each in chosen]
+    if any(bill.assessment is None for _, bill in bills):
+        raise InputError(
+            "above 1 kV this program gives no design help, so it draws no schematic; "
+            "give the work to a specialist in high voltage"
+        )
+    drawings = [face.schematic(each) for each, _ in bills]
     files = []
     for path in map(Path, outputs):
         for number, drawing in enumerate(drawings, 1):

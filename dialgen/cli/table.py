@@ -139,7 +139,7 @@ def _scale_text(scale: RuledScale, marks: Sequence[Spot | Mark]) -> str:
             (
                 plain_number(m.value),
                 getattr(m, "label", None) or "",
-                f"{m.drive:.6f}",
+                f"{_rounded(m.drive):.6f}",
                 f"{m.angle_deg:.4f}",
                 f"{m.x:.4f}",
                 f"{m.y:.4f}",

@@ -260,9 +260,10 @@ def _own_current(circuit: Circuit, terminals: Terminals, key: Key) -> tuple[Rema
     full = terminals.signal(terminals.full_value if circuit.full is None else circuit.full)
     if abs(full - own) <= _NEAR_OWN * own:
         return ()
+    mend = "give a circuit, or full" if circuit.full is None else "give the circuit that stands between"
     text = (
         f"full deflection is at {full:.4g} {terminals.unit} but the movement's own is {own:.4g} "
-        f"{terminals.unit}; give a circuit, or full"
+        f"{terminals.unit}; {mend}"
     )
     return (Remark(text, key),)
 

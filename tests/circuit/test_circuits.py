@@ -6,6 +6,7 @@ Instrumentation and Measurements, by the FOSSEE Scilab Textbook Companion 182.
 """
 
 import math
+from dataclasses import replace
 
 import numpy as np
 import pytest
@@ -375,3 +376,11 @@ def test_table_of_circuits_names_each_by_its_kind():
     assert takes["multiplier"] == "V"
     assert takes["series ohmmeter"] == takes["shunt ohmmeter"] == "Ω"
     assert takes["direct"] is None
+
+
+def test_a_bare_movement_with_another_full_scale_has_something_before_it():
+    """A 1 mA, 500 Ω movement takes 0.5 V (Ohm's law); on a scale to 10 V that is told, at 0.5 V nothing."""
+    (fact,) = Direct().design(replace(terminals(), unit="V")).facts
+    assert (fact.value, fact.unit) == (pytest.approx(0.5), "V")
+    assert Direct().design(replace(terminals(full=0.5), unit="V")).facts == ()
+    assert Direct().design(replace(terminals(), unit="")).facts == ()

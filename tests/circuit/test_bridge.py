@@ -143,9 +143,10 @@ def test_pt100_bridge_tells_what_the_bench_needs():
     assert facts["1 Ω of leads, at the scale's end"] == pytest.approx(leads, rel=1e-9)
     sensed_v = {x: nodes_v(1.0, arms_ohm, 1000.0, x)[0] for x in (PT100_0, PT100_100)}
     heat_w = {x: volts**2 / x for x, volts in sensed_v.items()}
-    worst_ohm = max(heat_w, key=heat_w.get)
-    assert facts["sensor self-heating"] == pytest.approx(heat_w[worst_ohm], rel=1e-9)
-    assert facts["sensor current"] == pytest.approx(sensed_v[worst_ohm] / worst_ohm, rel=1e-9)
+    assert facts["sensor self-heating"] == pytest.approx(max(heat_w.values()), rel=1e-9)
+    # The current is largest where the sensor has fewest ohms, at rest; its heat here at the other end.
+    most_a = max(volts / x for x, volts in sensed_v.items())
+    assert facts["sensor current"] == pytest.approx(most_a, rel=1e-9)
 
 
 def test_bridge_whose_scale_ends_at_rest_or_open():

@@ -176,13 +176,23 @@ class Face:
         shown = wiring.indicated(np.array(values))
         return tuple(zip(values, shown.tolist(), strict=True))
 
-    def schematic(self, circuit: Designed) -> Drawing:
-        """Return the picture of one of `circuits` as a display list."""
+    def schematic(self, circuit: Designed, bench: Bench | None = None) -> Drawing:
+        """Return the picture of one of `circuits` as a display list.
+
+        Args:
+            circuit: which one.
+            bench: what the maker has, for what one resistor stands; the file's own where it is left out.
+        """
+        from dialgen.parts.bill import splits_of
+        from dialgen.parts.caution.cautions import cautions
+        from dialgen.parts.caution.situation import situation_of
         from dialgen.schematic import draw
 
         movement, name = self.dial.file.movement, self.dial.file.dial.name
         coil = ((movement.current, "A"), (movement.resistance, "Ω"))
         design = circuit.design
+        splits = splits_of(design, bench or self.bench(), movement.kind)
+        heeded = cautions(situation_of(design, movement.kind))
         if movement.kind == "moving iron":
             # It deflects one way whatever the current's, so its terminals have no poles.
             design = replace(design, alternating=True)
@@ -190,6 +200,8 @@ class Face:
             design,
             title=f"{name}: {design.kind}" if name else design.kind,
             coil=tuple(engineered(value, unit) for value, unit in coil if value is not None),
+            splits={each.part: each.count for each in splits},
+            earthed=any(caution.id == "earthy end" for caution in heeded),
         )
 
     def render(

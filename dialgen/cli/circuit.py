@@ -94,7 +94,7 @@ def command(
     chosen = _chosen(face, only)
     bills = [(each, face.bill(each, bench, _progress)) for each in chosen]
     if outputs:
-        _draw(face, bills, outputs)
+        _draw(face, bills, bench, outputs)
     if as_json:
         from dialgen.cli.bill_json import circuit_json
 
@@ -135,7 +135,7 @@ def _progress(part: str) -> Callable[[int, int], None]:
     return tell
 
 
-def _draw(face: Face, bills: Sequence[tuple[Designed, Bill]], outputs: tuple[str, ...]) -> None:
+def _draw(face: Face, bills: Sequence[tuple[Designed, Bill]], bench: Bench, outputs: tuple[str, ...]) -> None:
     from dialgen import api
     from dialgen.errors import InputError
     from dialgen.renderers import render
@@ -145,7 +145,7 @@ def _draw(face: Face, bills: Sequence[tuple[Designed, Bill]], outputs: tuple[str
             "above 1 kV this program gives no design help, so it draws no schematic; "
             "give the work to a specialist in high voltage"
         )
-    drawings = [face.schematic(each) for each, _ in bills]
+    drawings = [face.schematic(each, bench) for each, _ in bills]
     files = []
     for path in map(Path, outputs):
         for number, drawing in enumerate(drawings, 1):

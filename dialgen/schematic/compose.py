@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
+from types import MappingProxyType
+
 from dialgen.circuit.design import Design
 from dialgen.drawing import Drawing
 from dialgen.errors import InputError
@@ -17,24 +20,34 @@ LEAST_WIDTH_MM = 120.0
 TITLE_MM = 3.0
 _TITLE_GAP_MM = 7.0
 _FURTHER_GAP_MM = 10.0
+_NO_SPLITS: Mapping[str, int] = MappingProxyType({})
 
 Box = tuple[float, float, float, float]
 """Left, bottom, right and top in millimetres."""
 
 
-def draw(design: Design, *, title: str = "", coil: tuple[str, ...] = ()) -> Drawing:
+def draw(
+    design: Design,
+    *,
+    title: str = "",
+    coil: tuple[str, ...] = (),
+    splits: Mapping[str, int] = _NO_SPLITS,
+    earthed: bool = False,
+) -> Drawing:
     """Return the schematic of a design, on a page as large as it needs.
 
     Args:
         design: the circuit.
         title: what is written above it.
         coil: what is written beside the movement, in lines: "1 mA", "75 Ω".
+        splits: of how many equal resistors in series a part is made, by its name; of one where left out.
+        earthed: whether the lower terminal, behind the movement, is marked as the earthed end.
 
     Raises:
-        InputError: no layout is known for the circuit's kind.
+        InputError: no layout is known for the circuit's kind, or a split is of no part or into nothing.
         CharacterError: a text has a character that no font has.
     """
-    pieces = laid(design, coil)
+    pieces = laid(design, coil, splits, earthed)
     left, bottom, right, top = _box(pieces)
     if title:
         heading = Words(title, ((left + right) / 2, top + _TITLE_GAP_MM), (0.5, 0.0), TITLE_MM)
@@ -52,13 +65,15 @@ def draw(design: Design, *, title: str = "", coil: tuple[str, ...] = ()) -> Draw
     ).with_margin(MARGIN_MM)
 
 
-def laid(design: Design, coil: tuple[str, ...]) -> Pieces:
+def laid(
+    design: Design, coil: tuple[str, ...], splits: Mapping[str, int] = _NO_SPLITS, earthed: bool = False
+) -> Pieces:
     """Return the pieces of a design's picture; raises as `draw` does."""
     if design.kind not in LAYOUTS:
         raise InputError(
             f"there is no picture of the circuit {design.kind!r}; one of {', '.join(LAYOUTS)} can be drawn"
         )
-    plan = Plan(design, coil)
+    plan = Plan(design, coil, splits, earthed)
     pieces = LAYOUTS[design.kind](plan)
     return (*pieces, *_further(plan, pieces))
 

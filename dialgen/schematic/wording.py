@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 from dialgen.circuit.design import COIL, Design, Fact, Part
 from dialgen.circuit.names import SHUNT
+from dialgen.errors import InputError
 from dialgen.quantity import engineered
 from dialgen.schematic.pieces import Item, Kind, Label
 
@@ -20,10 +21,25 @@ class Plan:
     Args:
         design: the circuit.
         coil: what is written beside the movement, in lines: its current and resistance.
+        splits: of how many equal resistors in series a part is made, by its name; of one where left out.
+        earthed: whether the lower terminal, behind the movement, is marked as the earthed end.
+
+    Raises:
+        InputError: a split is of no part of the design, or into fewer than one.
     """
 
     design: Design
     coil: tuple[str, ...]
+    splits: Mapping[str, int]
+    earthed: bool
+
+    def __post_init__(self) -> None:
+        names = [part.name for part in self.design.parts]
+        for name, count in self.splits.items():
+            if name not in names:
+                raise InputError(f"there is no part {name!r} to split; there is {', '.join(names) or 'none'}")
+            if count < 1:
+                raise InputError(f"{name} cannot be made of {count}; give 1 or more")
 
     def named(self, *starts: str) -> list[Part]:
         """Return the parts whose names are, or start with a word that is, one of ``starts``."""
@@ -76,7 +92,8 @@ class Plan:
     @property
     def lower(self) -> str:
         """What is written at the lower terminal."""
-        return AC if self.design.alternating else MINUS
+        sign = AC if self.design.alternating else MINUS
+        return f"earthed end {sign}" if self.earthed else sign
 
     def at_plus(self, range_text: str) -> str:
         """Return a range with the sign of its current."""
@@ -91,6 +108,8 @@ class Plan:
     def _values(self, part: Part) -> Iterator[str]:
         if part.name == SHUNT and part.given and self.design.stamp:
             yield self.design.stamp
-        yield engineered(part.ohms, "Ω")
+        count = self.splits.get(part.name, 1)
+        each = engineered(part.ohms / count, "Ω")
+        yield each if count == 1 else f"{count} × {each}"
         if part.built is not None and engineered(part.built, "Ω") != engineered(part.ohms, "Ω"):
             yield f"as built {engineered(part.built, 'Ω')}"

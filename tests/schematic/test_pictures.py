@@ -7,6 +7,7 @@ import math
 import subprocess
 import sys
 from dataclasses import replace
+from pathlib import Path
 
 import numpy as np
 import pypdfium2 as pdfium
@@ -15,12 +16,14 @@ from covered import drawn
 from hypothesis import given, settings
 from hypothesis import strategies as st
 from lxml import etree
+from netlist import Net
 from pictured import COIL_TEXT, DESIGNS, amps, behind, ohms, volts
 from shapely import Polygon, unary_union
 from shapely.geometry import LineString
 from shapely.geometry import Point as Spot
 
-from dialgen.circuit.design import Part
+import dialgen
+from dialgen.circuit.design import COIL, Part
 from dialgen.circuit.kinds import CIRCUITS as KINDS
 from dialgen.circuit.multiplier import Multiplier
 from dialgen.circuit.universal import UniversalShunt
@@ -36,6 +39,8 @@ from dialgen.schematic.library import SIGN_MM
 from dialgen.schematic.pieces import EXTENTS, Kind, Sign
 
 pytestmark = pytest.mark.filterwarnings("ignore::DeprecationWarning")
+
+TEMPLATES = Path(__file__).parents[2] / "templates"
 
 every_design = pytest.mark.parametrize("name", DESIGNS)
 
@@ -131,6 +136,84 @@ def test_a_part_with_no_place_is_set_below():
     others = [piece for piece in pieces if isinstance(piece, Sign) and piece is not sign]
     assert sign.start[1] < min(min(other.start[1], other.end[1]) for other in others)
     assert {"damping resistor", "470 Ω"} <= set(texts(draw(extra, coil=COIL_TEXT)))
+
+
+# --- what its voltage asks for
+
+
+def ac_voltmeter(tmp_path, volts, more=""):
+    """The template of a rectifier voltmeter made one of so many volts."""
+    text = (TEMPLATES / "ac-volts.toml").read_text(encoding="utf-8")
+    text = text.replace('range = "12 V"', f'range = "{volts} V"').replace("to = 12 ", f"to = {volts} ")
+    path = tmp_path / "volts.toml"
+    path.write_text(text.replace("numbered = [0, 2, 4, 6, 8, 10, 12]", 'numbered = "auto"') + more)
+    face = dialgen.load(path)
+    return face, face.circuits[0]
+
+
+@pytest.mark.parametrize(("volts", "rated", "count"), [(300, 250, 2), (300, 150, 3), (170, 250, 1)])
+def test_a_multiplier_is_lettered_as_it_is_to_be_made(tmp_path, volts, rated, count):
+    """At 300 V AC, 424 V of peak, parts for 250 V are two, for 150 V three; at 170 V, 240 V, one does."""
+    face, circuit = ac_voltmeter(tmp_path, volts, f'\n[parts]\nvoltage = "{rated} V"\n')
+    (part,) = circuit.design.parts
+    each = engineered(part.ohms / count, "Ω")
+    written = texts(face.schematic(circuit))
+    assert (f"{count} × {each}" if count > 1 else each) in written
+    assert (engineered(part.ohms, "Ω") in written) == (count == 1)
+
+
+def test_the_bench_of_the_bill_is_that_of_the_picture(tmp_path):
+    """A bench given in place of the file's splits the drawn multiplier as it splits that of the bill."""
+    face, circuit = ac_voltmeter(tmp_path, 300)
+    bench = face.bench({"voltage": "100 V"})
+    (split,) = face.bill(circuit, bench).splits
+    assert split.count == 5
+    assert f"5 × {engineered(split.ohms, 'Ω')}" in texts(face.schematic(circuit, bench))
+
+
+@every_design
+def test_any_split_is_set_clear(name):
+    """Every part of every circuit made of twelve, and an earthed end, crowd no lettering."""
+    design = DESIGNS[name]
+    splits = {part.name: 12 for part in design.parts}
+    drawing = draw(design, title="T", coil=COIL_TEXT, splits=splits, earthed=True)
+    assert sum(text.startswith("12 × ") for text in texts(drawing)) >= len(splits)
+    assert crowded(drawing, 0.45) == []
+
+
+def test_a_split_part_keeps_its_measured_value():
+    """What was measured is that of the whole, whatever it is made of."""
+    design = DESIGNS["rectifier"]
+    written = texts(draw(design, coil=COIL_TEXT, splits={"multiplier": 2}))
+    assert "as built 5.555 kΩ" in written
+    assert f"2 × {engineered(design.ohms['multiplier'] / 2, 'Ω')}" in written
+
+
+@pytest.mark.parametrize(
+    ("splits", "message"),
+    [
+        ({"shunt": 2}, "no part 'shunt' to split; there is multiplier"),
+        ({"multiplier": 0}, "multiplier cannot be made of 0; give 1 or more"),
+    ],
+)
+def test_a_split_that_makes_no_sense_is_refused(splits, message):
+    """A part that is not there and a count of none are told of."""
+    with pytest.raises(InputError, match=message):
+        draw(DESIGNS["multiplier"], coil=COIL_TEXT, splits=splits)
+
+
+@pytest.mark.parametrize(("volts", "marked"), [(40, False), (60, True), (300, True), (1200, False)])
+def test_the_earthed_end_is_marked_where_touch_is_dangerous(tmp_path, volts, marked):
+    """Above 50 V AC (IEC 60364-4-41, from memory) the end behind the movement is named; above 1 kV not."""
+    face, circuit = ac_voltmeter(tmp_path, volts)
+    assert ("earthed end ~" in texts(face.schematic(circuit))) == marked
+
+
+def test_the_earthed_end_is_behind_the_movement():
+    """Of a multiplier's two terminals the one that is joined to the coil itself is named the earthed end."""
+    net = Net(laid(DESIGNS["multiplier"], COIL_TEXT, earthed=True))
+    assert net.terminal("earthed end −") in net.ends_of(COIL)
+    assert net.terminal("10 V +") in net.ends_of("multiplier")
 
 
 # --- how it is set

@@ -132,6 +132,10 @@ def _swamping(bill: Bill) -> Fields | None:
                 "before_percent_per_k": found.before_percent_per_k,
                 "drop": found.drop_v,
                 "before_drop": found.before_drop_v,
+                "parts": [
+                    {"name": each.name, "ohms": _number(each.ohms), "before": _number(each.before_ohm)}
+                    for each in found.remade(bill.design)
+                ],
             }
         case NoSwamping() as found:
             return {
@@ -147,7 +151,7 @@ def _candidate(found: Candidate) -> Fields:
     return {
         "network": found.drawing,
         "ohms": found.ohms,
-        "error": found.error,
+        "error_percent": 100 * found.error,
         "parts": found.parts,
         "worst_share": found.share,
     }

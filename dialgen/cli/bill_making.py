@@ -6,10 +6,9 @@ import math
 from collections.abc import Iterator, Sequence
 
 from dialgen.circuit.design import Design
-from dialgen.circuit.names import SHUNT
-from dialgen.cli.columns import columns, figure, percent, wrapped
+from dialgen.cli.columns import columns, figure, listed, percent, wrapped
 from dialgen.parts.bill import Bill
-from dialgen.parts.drift import NoSwamping, Swamping
+from dialgen.parts.drift import NoSwamping, Remade, Swamping
 from dialgen.parts.stock.search import Candidate, Search
 from dialgen.parts.wire.workshop import advice, objections, summary
 from dialgen.quantity import engineered, plain_number
@@ -21,10 +20,10 @@ _FAR = 0.2
 
 def _trims(bill: Bill) -> Iterator[str]:
     for trim in bill.trims:
-        off, reads = percent(trim.off_percent), percent(trim.reading_percent)
+        off, moved = percent(trim.off_percent), percent(trim.reading_percent)
         yield from wrapped(
-            f"{trim.part} as built: {off} off, which alone reads {reads} at full scale. The marks follow it. "
-            f"To keep a face drawn for the exact value: {trim.advice}."
+            f"{trim.part} as built: {off} off, which alone moves the pointer by {moved} at full scale. "
+            f"The marks follow it. To keep a face drawn for the exact value: {trim.advice}."
         )
 
 
@@ -58,15 +57,18 @@ def _swamped(design: Design, found: Swamping) -> str:
     if found.swamp_ohm == 0:
         return f"not needed, the drift is {before} per kelvin as it is"
     ohms, drop = engineered(found.swamp_ohm, "ohm", 4), engineered(found.drop_v, "V", 4)
-    if any(part.given for part in design.parts if part.name == SHUNT):
-        return (
-            f"the bought shunt leaves {before} per kelvin; {after} takes one that drops {drop} at full "
-            f'scale, with swamp = "{ohms}"'
-        )
+    anew = [_anew(each) for each in found.remade(design)]
+    with_it = f" with {listed(anew)}" if anew else ""
     return (
-        f'swamp = "{ohms}" brings the drift from {before} to {after} per kelvin, and the drop from '
+        f'swamp = "{ohms}"{with_it} brings the drift from {before} to {after} per kelvin, and the drop from '
         f"{engineered(found.before_drop_v, 'V', 4)} to {drop}"
     )
+
+
+def _anew(part: Remade) -> str:
+    numbered = part.name[-1].isdigit()
+    now, before = (engineered(each, "Ω", 4) for each in (part.ohms, part.before_ohm))
+    return f"{'' if numbered else 'a '}{part.name} of {now} in place of {before}"
 
 
 def _searches(bill: Bill) -> Iterator[str]:
@@ -80,14 +82,14 @@ def _search(name: str, found: Search) -> Iterator[str]:
     best = found.candidates[: 1 if abs(found.candidates[0].error) > _FAR else _SHOWN_CANDIDATES]
     near = len(best) > 1
     rows: list[tuple[str, ...]] = [("  network", "value", "error", "parts", "worst part")]
-    for head, listed in (
+    for head, group in (
         ("", best),
         ("  with fewer parts", [each for each in found.simpler if each not in best and near]),
         ("  the best value, with less heat in one part", found.cooler if near else ()),
     ):
-        if head and listed:
+        if head and group:
             rows.append((head, "", "", "", ""))
-        rows += [_candidate(each) for each in listed]
+        rows += [_candidate(each) for each in group]
     yield from columns(rows)
     if not near:
         yield "  Nothing in the drawer comes near."

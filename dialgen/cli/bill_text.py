@@ -75,7 +75,12 @@ def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str
             f"what to buy or make a part for, at least {plain_number(bench.margin)} times that power (common "
             "practice); what is given or built has none."
         )
-        yield "1 % more reads: what a part with 1 % more ohms does to the reading at full scale."
+        yield "1 % more moves it: how far a part with 1 % more ohms moves the pointer at full scale."
+    yield (
+        "How far the pointer moves, errors, tolerance and drift are in percent of the coil's current at full "
+        "scale, which in a moving coil is percent of the pointer's deflection there. On a scale that rises "
+        "evenly from zero that is percent of full scale."
+    )
     copper, others = (
         f"{100 * each:.3g} %" for each in (bench.materials.copper_per_k, bench.materials.others_per_k)
     )
@@ -91,8 +96,8 @@ def _notes(assessments: Sequence[Assessment], *, adjusted: bool) -> Iterator[str
         )
     if adjusted:
         yield (
-            "In an ohmmeter errors are those at half scale once the zero is set, in percent of the whole "
-            "deflection; so is its drift."
+            "In an ohmmeter errors, tolerance, drift and how far the pointer moves are those at half scale, "
+            "once the adjuster is set again, in percent of the whole deflection."
         )
 
 
@@ -104,7 +109,7 @@ def _parts(bill: Bill) -> Iterator[str]:
         yield "Nothing to buy or to make."
         return
     times = plain_number(assessment.bench.overload)
-    heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "rating", "1 % more reads")
+    heads = ("part", "exact", "current", "voltage", "power", f"at {times}×", "rating", "1 % more moves it")
     yield from table(heads, [row for part in assessment.parts for row in _part_rows(part)])
 
 
@@ -188,7 +193,10 @@ def _all_together(together: Sequence[Together], *, alone: bool) -> Iterator[tupl
     if not alone:
         yield ("all fitted", *(percent(each.error_percent) for each in together))
     yield ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in together))
-    yield ("  reads" if alone else "  at worst", *(f"±{figure(each.worst_percent)} %" for each in together))
+    yield (
+        "  moves it" if alone else "  at worst",
+        *(f"±{figure(each.worst_percent)} %" for each in together),
+    )
     if not alone:
         yield ("  likely", *(f"±{figure(each.likely_percent)} %" for each in together))
 

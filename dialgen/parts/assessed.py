@@ -38,8 +38,8 @@ class PartAssessed:
         full: what it carries there at full scale.
         overload: the same at the overload; None where there is no such thing, as in an ohmmeter.
         rating_w: the power rating to buy.
-        sensitivity: percent of the reading at full scale for one percent of the part, of the worst range;
-            None for a whole made up of others, and for what is set and not made to a value.
+        sensitivity: percent of the coil's current at full scale for one percent of the part, of the worst
+            range; None for a whole made up of others, and for what is set and not made to a value.
         fits: the nearest value of every series shown; none for what the file gives.
     """
 

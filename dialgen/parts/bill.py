@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
-from dialgen.circuit.design import Design
+from dialgen.circuit.design import Design, Part
 from dialgen.errors import InputError
-from dialgen.parts.assessed import Assessment, PartAssessed, assess
+from dialgen.parts.assessed import Assessment, assess
 from dialgen.parts.bench import Bench
 from dialgen.parts.caution.cautions import Caution, cautions, split_count
 from dialgen.parts.caution.situation import Situation, situation_of
@@ -15,6 +15,7 @@ from dialgen.parts.drift import NoSwamping, Swamping, swamping
 from dialgen.parts.stock.search import Progress, Search, search
 from dialgen.parts.trimming import Trim, trims
 from dialgen.parts.wire.winding import Winding, wound
+from dialgen.parts.worked import Worked, worked
 
 Reswamped = Callable[[float], Design]
 
@@ -84,7 +85,7 @@ def bill(
         design=design,
         assessment=assessment,
         trims=trims(design),
-        splits=tuple(each for part in made for each in _splits(part, situation)),
+        splits=_splits(design, situation),
         searches=tuple(
             (
                 each.part.name,
@@ -104,16 +105,39 @@ def bill(
     )
 
 
-def _splits(part: PartAssessed, situation: Situation) -> list[Split]:
-    if situation.takes != "V" or part.full.voltage_v is None:
-        return []
-    peak_v = abs(part.full.voltage_v) * situation.peak_factor
+def splits_of(design: Design, bench: Bench, movement: str) -> tuple[Split, ...]:
+    """Return the resistors to be made of several for their voltage, without the rest of the bill.
+
+    Args:
+        design: the circuit; above 1 kV nothing is told of it.
+        bench: what the maker has: what one resistor stands.
+        movement: the movement's kind.
+    """
+    situation = situation_of(design, movement, bench.voltage_v)
+    return () if situation.beyond_help else _splits(design, situation)
+
+
+def _splits(design: Design, situation: Situation) -> tuple[Split, ...]:
+    if situation.takes != "V":
+        return ()
+    ranges = worked(design)
+    found = [_split(part, _most_v(part, ranges), situation) for part in design.parts if part.is_made]
+    return tuple(each for each in found if each.count > 1)
+
+
+def _most_v(part: Part, ranges: Sequence[Worked]) -> float:
+    """Return the voltage over a part in the range in which it has most."""
+    return max(
+        (abs(each.full.loads[part.name].voltage_v) for each in ranges if each.has(part.name)), default=0.0
+    )
+
+
+def _split(part: Part, voltage_v: float, situation: Situation) -> Split:
+    peak_v = voltage_v * situation.peak_factor
     if situation.alternating:
         peak_v = max(peak_v, situation.resistor_peak_v)
     count = split_count(peak_v, situation.resistor_rating_v)
-    if count == 1:
-        return []
-    return [Split(part=part.part.name, count=count, ohms=part.part.ohms / count, voltage_v=peak_v / count)]
+    return Split(part=part.name, count=count, ohms=part.ohms / count, voltage_v=peak_v / count)
 
 
 def _swamping(design: Design, reswamped: Reswamped | None, bench: Bench) -> Swamping | NoSwamping | None:

@@ -1,4 +1,4 @@
-"""What a degree does to the reading: the copper of coil and leads against resistors that stay.
+"""What a degree does to the pointer: the copper of coil and leads against resistors that stay.
 
 Only resistance is counted here.  Magnet and springs drift too, by less, and largely against each
 other (common practice); the diodes of a rectifier are taken as they are.
@@ -6,12 +6,14 @@ other (common practice); the diodes of a rectifier are taken as they are.
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable
 from dataclasses import dataclass
 
 import numpy as np
 
 from dialgen.circuit.design import COIL, Design, Ohms
+from dialgen.circuit.names import SWAMP
 from dialgen.errors import InputError
 from dialgen.parts.wire.materials import MATERIALS
 from dialgen.parts.worked import largest, worked
@@ -20,6 +22,8 @@ from dialgen.roots import Array, bracketed_roots
 COPPER = frozenset({COIL, "leads", "line"})
 _PROBE = 0.01
 _UNMOVED = 1e-6
+_NEAR = 1e-3
+"""A drift within this share of the wanted one is as wanted: resistors are written in four figures."""
 _DOUBLINGS = 30
 
 
@@ -51,7 +55,7 @@ class Materials:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Drift:
-    """How a range's reading at full scale changes for a kelvin, in percent; negative reads low when warm."""
+    """How the coil's current at full scale changes for a kelvin, in percent; negative is less when warm."""
 
     case: str
     percent_per_k: float
@@ -70,23 +74,46 @@ def drifts(design: Design, materials: Materials | None = None) -> tuple[Drift, .
     )
 
 
+@dataclass(frozen=True, slots=True)
+class Remade:
+    """A part that another swamping resistor asks to be made anew: what it is, and what it has to be."""
+
+    name: str
+    before_ohm: float
+    ohms: float
+
+
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Swamping:
     """A swamping resistor for a wanted drift, and what it costs.
 
     Args:
-        swamp_ohm: the resistor, 0 where the circuit is good enough without.
+        design: the circuit with it, its other parts made for it; as it is where it is good enough.
+        swamp_ohm: the resistor, 0 where the circuit is good enough as it is.
         percent_per_k: the drift with it, of the worst range.
         before_percent_per_k: the drift of the circuit as it is.
         drop_v: the voltage across the terminals at full scale with it, of the scale's own range.
         before_drop_v: that of the circuit as it is.
     """
 
+    design: Design
     swamp_ohm: float
     percent_per_k: float
     before_percent_per_k: float
     drop_v: float
     before_drop_v: float
+
+    def remade(self, before: Design) -> tuple[Remade, ...]:
+        """Return the other parts that are no longer what they are in the circuit as it is, as built."""
+        there = before.as_built
+        return tuple(
+            Remade(part.name, there[part.name], part.ohms)
+            for part in self.design.parts
+            if part.is_made
+            and part.name != SWAMP
+            and 0 < there.get(part.name, 0.0) < math.inf
+            and abs(part.ohms / there[part.name] - 1.0) > _NEAR
+        )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -126,7 +153,7 @@ def swamping(
         raise InputError(f"a drift of {wanted_percent_per_k:g} %/K cannot be had; write for example 0.1")
     of = materials or Materials()
     before = _worst(design, of)
-    if abs(before) <= wanted_percent_per_k:
+    if abs(before) <= wanted_percent_per_k * (1.0 + _NEAR):
         return _swamping(design, design, 0.0, of)
     bare = redesign(0.0)
     if not _moves(redesign, bare, of):
@@ -165,6 +192,7 @@ def _enough_ohm(sizes: Callable[[Array], Array], coil_ohm: float, wanted: float)
 def _swamping(swamped: Design, design: Design, swamp_ohm: float, materials: Materials) -> Swamping:
     with_it, without = worked(swamped)[swamped.shown], worked(design)[design.shown]
     return Swamping(
+        design=swamped,
         swamp_ohm=swamp_ohm,
         percent_per_k=_worst(swamped, materials),
         before_percent_per_k=_worst(design, materials),

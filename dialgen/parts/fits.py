@@ -18,7 +18,8 @@ class Fit:
     Args:
         series: its name.
         ohms: the value.
-        error_percent: the error at full scale with it alone, of the worst range; above 0 reads high.
+        error_percent: the error at full scale with it alone, of the worst range; above 0 the pointer goes
+            too far.
         tolerance_percent: the tolerance of the part.
         spread_percent: what that tolerance does to full scale, either way, of the worst range.
     """

@@ -1,4 +1,4 @@
-"""Parts as they were made: what they do to the reading, and what cures them."""
+"""Parts as they were made: what they do to the pointer, and what cures them."""
 
 from __future__ import annotations
 
@@ -9,9 +9,11 @@ from dataclasses import dataclass, replace
 from dialgen.circuit.design import Design, Part
 from dialgen.parts.preferred import LEAST_BOUGHT_OHM
 from dialgen.parts.worked import Worked, largest, worked
-from dialgen.quantity import engineered
+from dialgen.quantity import engineered, plain_number
 
 _SAME = 1e-9
+_TRIMMED_PERCENT = 5.0
+"""What is farther off is not filed, nor brought down by what lies across it (common practice)."""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -23,7 +25,7 @@ class Trim:
         ohms: as designed.
         built: as measured.
         off_percent: how much larger it came out.
-        reading_percent: what that alone does to full scale, of the worst range.
+        reading_percent: what that alone does to the coil's current at full scale, of the worst range.
         parallel_ohm: the resistor across it that brings it down, where it came out too large.
         parallel_w: what that one dissipates at full scale, of the worst range.
         series_ohm: what it lacks, where it came out too small.
@@ -45,16 +47,21 @@ class Trim:
     @property
     def advice(self) -> str:
         """What to do about it, in a line."""
+        bought = self.ohms >= LEAST_BOUGHT_OHM
+        # Of what is bought, any that is missing may stand in series.
+        if abs(self.off_percent) > _TRIMMED_PERCENT and not (bought and self.series_ohm is not None):
+            return f"{'buy' if bought else 'make'} it anew, as this one is too far off to be trimmed"
         if self.parallel_ohm is not None:
             heat = f", which takes {engineered(self.parallel_w, 'W', 2)}" if self.parallel_w else ""
             return f"put {engineered(self.parallel_ohm, 'Ω', 4)} across it{heat}"
         if self.series_ohm is None or self.filed_share is None or self.longer_share is None:
             return "nothing to do"
-        if self.ohms >= LEAST_BOUGHT_OHM:
+        if bought:
             return f"put {engineered(self.series_ohm, 'Ω', 4)} in series with it"
+        filed, longer = (_figure(share * 100) for share in (self.filed_share, self.longer_share))
         return (
-            f"file or scrape {self.filed_share * 100:.2g} % off its cross-section along the whole length "
-            f"between the sense points, or set these {self.longer_share * 100:.2g} % farther apart"
+            f"file or scrape {filed} % off its cross-section along the whole length between the sense "
+            f"points, or set these {longer} % farther apart"
         )
 
 
@@ -69,6 +76,10 @@ def trims(design: Design) -> tuple[Trim, ...]:
         for part in design.parts
         if part.built and not part.sums and 0 < part.ohms < math.inf
     )
+
+
+def _figure(value: float) -> str:
+    return plain_number(float(f"{value:.2g}"))
 
 
 def _trim(part: Part, built: float, ranges: Sequence[Worked]) -> Trim:

@@ -118,7 +118,11 @@ def test_the_drawer_is_in_the_file_or_in_options(file) -> None:
     (search,) = circuits(file(text))[0]["stock"]
     best = search["candidates"][0]
     assert best["network"] == "19k || 19k"
-    assert (best["parts"], best["error"]) == (2, pytest.approx(0.0, abs=1e-9))
+    assert (best["parts"], best["error_percent"]) == (2, pytest.approx(0.0, abs=1e-9))
+    # One 19 kΩ alone is twice the 9.5 kΩ, 100 % too much; the ohms tell the percent of each.
+    for found in search["candidates"]:
+        assert found["error_percent"] == pytest.approx(100 * (found["ohms"] / 9500 - 1), abs=1e-9)
+    assert max(abs(found["error_percent"]) for found in search["candidates"]) > 1
     # Singles a, b; pairs aa and ab, in series or parallel; of a, a, b all in series, b + (a||a), a + (a||b),
     # and the same three with series and parallel changed over: 2 + 4 + 6.
     assert search["searched"] == 12
@@ -159,6 +163,36 @@ def test_swamping_for_a_wanted_drift(file) -> None:
     # Copper's share of the branch times copper's rise over manganin's, to the shunt's share.
     assert (0.00393 - 1.5e-5) * 75 / (75 + swamp) == pytest.approx(0.001, rel=1e-4)
     assert circuit["swamping"]["drop"] == pytest.approx(1e-3 * (75 + swamp), rel=1e-6)
+    # The shunt is another: of the branch's drop over 40 A less the coil's 1 mA (Kirchhoff).
+    (part,) = circuit["swamping"]["parts"]
+    assert (part["name"], part["before"]) == ("shunt", pytest.approx(0.075 / 39.999, rel=1e-9))
+    assert part["ohms"] == pytest.approx(1e-3 * (75 + swamp) / 39.999, rel=1e-9)
+
+
+@pytest.mark.parametrize(("built", "before"), [("", "1.875 mΩ"), ('built = "1.885 mohm"', "1.885 mΩ")])
+def test_swamping_tells_of_the_shunt_that_goes_with_it(file, built, before) -> None:
+    """The sentence names the new shunt and the one that is there; its four figures are then as wanted."""
+    text = BASE + f'[scale.circuit]\nkind = "shunt"\n{built}\n'
+    said = " ".join(run("circuit", file(text), "--drift", "0.1").stdout.split())
+    swamp, shunt = re.search(r'swamp = "(\S+) ohm" with a shunt of (\S+) mΩ in place of', said).groups()
+    assert f"in place of {before} brings the drift" in said
+    # By hand: copper's share of the branch, and the branch's drop over 39.999 A.
+    branch_ohm = (0.00393 - 1.5e-5) * 75 / 0.001
+    assert float(swamp) == pytest.approx(branch_ohm - 75, rel=1e-3)
+    assert float(shunt) == pytest.approx(branch_ohm / 39.999, rel=1e-3)
+    followed = BASE + f'[scale.circuit]\nkind = "shunt"\nswamp = "{swamp} ohm"\n'
+    assert "Swamping: not needed" in run("circuit", file(followed), "--drift", "0.1").stdout
+
+
+def test_figures_are_told_of_the_pointer_and_not_of_the_reading(file) -> None:
+    """On 10 to 15 V with a suppressed zero a percent of deflection is no percent of the reading."""
+    text = BASE.replace('"A"', '"V"').replace("from = 0", "from = 10").replace("to = 40", "to = 15")
+    for dial in (text + 'circuit = { kind = "multiplier", suppress = "10 V" }\n', BUILT):
+        said = " ".join(run("circuit", file(dial)).stdout.split())
+        assert "1 % more moves it" in said
+        assert "percent of the pointer's deflection" in said
+        assert not re.search(r"1 % more reads|alone reads|to the reading", said)
+    assert "which alone moves the pointer by +0.531 % at full scale" in said
 
 
 RATED = """
@@ -377,3 +411,11 @@ def test_a_circuit_that_cannot_be_designed_is_told_at_its_place(file) -> None:
     done = run("circuit", file(text), status=2)
     assert "movement.resistance" in done.stderr
     assert done.stderr.startswith(str(file(text)))
+
+
+def test_above_a_kilovolt_no_schematic_is_drawn(file, tmp_path) -> None:
+    """What the sheet does not advise on the picture does not either: one line, status 2, no file."""
+    text = BASE.replace('"A"', '"V"').replace("to = 40", "to = 5000") + 'circuit = "multiplier"'
+    done = run("circuit", file(text), "-o", tmp_path / "c.svg", status=2)
+    assert "above 1 kV" in done.stderr
+    assert not (tmp_path / "c.svg").exists()

@@ -109,7 +109,7 @@ TABLE = {
     ),
     "125 V DC": (
         Situation(kind="multiplier", takes="V", range=125.0, alternating=False, resistor_peak_v=124.9),
-        (*LIVE, "direct current arc", "earthy end"),
+        (*LIVE, "live leads", "direct current arc", "earthy end"),
     ),
     "600 V DC with resistors that stand 700 V": (
         Situation(
@@ -120,7 +120,7 @@ TABLE = {
             resistor_peak_v=599.9,
             resistor_rating_v=700.0,
         ),
-        (*LIVE, "direct current arc", "earthy end"),
+        (*LIVE, "live leads", "direct current arc", "earthy end"),
     ),
     "200 V DC with resistors that stand 150 V": (
         Situation(
@@ -131,11 +131,11 @@ TABLE = {
             resistor_peak_v=199.9,
             resistor_rating_v=150.0,
         ),
-        (*LIVE, "direct current arc", "earthy end", "split"),
+        (*LIVE, "live leads", "direct current arc", "earthy end", "split"),
     ),
     "600 V DC": (
         Situation(kind="multiplier", takes="V", range=600.0, alternating=False, resistor_peak_v=599.9),
-        (*LIVE, "direct current arc", "earthy end", "split"),
+        (*LIVE, "live leads", "direct current arc", "earthy end", "split"),
     ),
     "10 to 15 V with a suppressed zero": (
         Situation(kind="multiplier", takes="V", range=15.0, alternating=False, suppressed=True),
@@ -145,7 +145,7 @@ TABLE = {
         Situation(
             kind="multiplier", takes="V", range=250.0, ranges=3, alternating=False, resistor_peak_v=249.9
         ),
-        (*LIVE, "direct current arc", "earthy end", "highest range first"),
+        (*LIVE, "live leads", "direct current arc", "earthy end", "highest range first"),
     ),
     "50 V AC": (
         Situation(kind="rectifier", takes="V", range=50.0, alternating=True, resistor_peak_v=70.0),
@@ -153,24 +153,28 @@ TABLE = {
     ),
     "60 V AC": (
         Situation(kind="rectifier", takes="V", range=60.0, alternating=True, resistor_peak_v=84.9),
-        (*LIVE, "earthy end"),
+        (*LIVE, "live leads", "earthy end"),
     ),
     "150 V AC": (
         Situation(kind="rectifier", takes="V", range=150.0, alternating=True, resistor_peak_v=212.1),
-        (*LIVE, "mains", "earthy end"),
+        (*LIVE, "live leads", "earthy end"),
     ),
-    "250 V AC": (AC_VOLTS, (*LIVE, "mains", "split", "earthy end")),
+    "250 V AC": (AC_VOLTS, (*LIVE, "live leads", "split", "earthy end")),
     "a moving iron voltmeter for 300 V": (
         Situation(kind="direct", takes="V", range=300.0, **IRON),
-        (*LIVE, "mains", "direct current arc"),
+        (*LIVE, "live leads", "direct current arc"),
     ),
     "a moving iron with a multiplier for 500 V": (
         Situation(kind="multiplier", takes="V", range=500.0, resistor_peak_v=600.0, **IRON),
-        (*LIVE, "mains", "direct current arc", "split", "earthy end"),
+        (*LIVE, "live leads", "direct current arc", "split", "earthy end"),
+    ),
+    "a moving iron voltmeter for 60 V": (
+        Situation(kind="direct", takes="V", range=60.0, **IRON),
+        (*LIVE, "live leads"),
     ),
     "1 kV AC": (
         Situation(kind="rectifier", takes="V", range=1000.0, alternating=True, resistor_peak_v=1414.0),
-        (*LIVE, "mains", "split", "earthy end"),
+        (*LIVE, "live leads", "split", "earthy end"),
     ),
     "2 kV DC": (
         Situation(kind="multiplier", takes="V", range=2000.0, alternating=False, resistor_peak_v=1999.0),
@@ -222,10 +226,18 @@ def test_each_text_is_short_and_has_a_source(caution):
 def test_what_kills_comes_before_what_burns_and_what_is_only_wrong():
     """The order is gravest first, and the line on codes closes every list."""
     order = [caution.id for caution in CAUTIONS]
-    ranks = ("above 1 kV", "touch", "mains", "shunt before leads", "moving iron with shunt", "codes")
+    ranks = ("above 1 kV", "touch", "live leads", "shunt before leads", "moving iron with shunt", "codes")
     assert [order.index(each) for each in ranks] == sorted(order.index(each) for each in ranks)
     for situation, _ in TABLE.values():
         assert cautions(situation)[-1].id == "codes"
+
+
+def test_the_fuse_in_each_live_lead_says_nothing_of_mains():
+    """The row stands beside a DC supply too, which is no mains."""
+    row = next(caution for caution in CAUTIONS if caution.id == "live leads")
+    assert "fuse in each live lead" in row.text
+    assert "clearance and creepage" in row.text
+    assert "mains" not in row.text
 
 
 def test_the_transformer_names_its_published_source():
@@ -348,7 +360,7 @@ def test_a_rectifier_has_the_peak_of_the_sine():
     found = of(Rectifier(), 250.0, "V")
     assert found.alternating is True
     assert found.resistor_peak_v == pytest.approx(353.5534, rel=1e-6)
-    assert {"mains", "split", "earthy end"} <= {caution.id for caution in cautions(found)}
+    assert {"live leads", "split", "earthy end"} <= {caution.id for caution in cautions(found)}
 
 
 def test_a_direct_scale_may_be_of_any_current():

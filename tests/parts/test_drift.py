@@ -107,6 +107,25 @@ def test_no_swamp_where_the_drift_is_small_enough():
     assert found.drop_v == found.before_drop_v
 
 
+def test_the_shunt_that_goes_with_the_swamp_is_told():
+    """The new shunt carries the branch's drop over range less coil, Im·(Rm + S)/(range - Im) (Kirchhoff)."""
+    found = swamping(swamped(0.0), swamped, 0.1)
+    (part,) = found.remade(swamped(0.0))
+    assert part.name == "shunt"
+    assert part.before_ohm == pytest.approx(0.05 / 99.999, rel=1e-9)
+    assert part.ohms == pytest.approx(1e-3 * (50.0 + found.swamp_ohm) / 99.999, rel=1e-9)
+    (measured,) = found.remade(shunt(100.0, coil_ohm=50.0, built=0.51e-3))
+    assert measured.before_ohm == 0.51e-3
+    assert found.remade(found.design) == ()
+
+
+@pytest.mark.parametrize(("over", "needed"), [(0.0009, False), (0.0011, True)])
+def test_a_drift_within_a_thousandth_is_as_wanted(over, needed):
+    """Advice printed in four figures must not be corrected when it is followed."""
+    wanted = abs(drifts(swamped(100.0))[0].percent_per_k) / (1 + over)
+    assert (swamping(swamped(100.0), swamped, wanted).swamp_ohm > 0) == needed
+
+
 def bought(swamp_ohm=None):
     """A bought shunt of 100 A/75 mV before 1 mA in 20 Ω; its swamp makes up 75 Ω (about)."""
     rated = Rating(current_a=100.0, drop_v=0.075)
@@ -133,6 +152,8 @@ def test_a_bought_shunt_that_drifts_too_much_needs_another():
     assert found.swamp_ohm == pytest.approx(whole_ohm - 20.0, rel=1e-3)
     assert found.drop_v == pytest.approx(1e-3 * whole_ohm, rel=1e-3)
     assert found.before_drop_v == pytest.approx(0.075, rel=1e-4)
+    (part,) = found.remade(bought())
+    assert (part.name, part.before_ohm) == ("shunt", pytest.approx(0.75e-3, rel=1e-12))
 
 
 @pytest.mark.parametrize("range_v", [0.5, 1.0, 10.0])

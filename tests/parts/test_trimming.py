@@ -1,5 +1,7 @@
 """Parts as built: what they do to the reading, and whether the cure cures."""
 
+import re
+
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
@@ -50,7 +52,8 @@ def test_what_lies_across_a_part_too_large_brings_it_down(ohms, over):
     assert parallel(trim.built, trim.parallel_ohm) == pytest.approx(trim.ohms, rel=1e-12)
     assert trim.parallel_w == pytest.approx((9.999 * ohms) ** 2 / trim.parallel_ohm, rel=1e-9)
     assert (trim.series_ohm, trim.filed_share, trim.longer_share) == (None, None, None)
-    assert " across it" in trim.advice
+    assert (" across it" in trim.advice) == (trim.off_percent <= 5)
+    assert ("anew" in trim.advice) == (trim.off_percent > 5)
 
 
 @given(st.floats(1e-4, 1e6), st.floats(1e-6, 0.3))
@@ -62,7 +65,8 @@ def test_what_raises_a_part_too_small(ohms, under):
     assert trim.built / (1 - trim.filed_share) == pytest.approx(ohms, rel=1e-9)
     assert trim.built * (1 + trim.longer_share) == pytest.approx(ohms, rel=1e-9)
     assert trim.parallel_ohm is None
-    assert ("file or scrape" in trim.advice) == (trim.ohms < 1.0)
+    assert ("file or scrape" in trim.advice) == (trim.ohms < 1.0 and trim.off_percent >= -5)
+    assert ("in series with it" in trim.advice) == (trim.ohms >= 1.0)
 
 
 def test_a_part_that_came_out_right_needs_nothing():
@@ -98,3 +102,25 @@ def test_each_section_as_built_has_its_own_row():
     assert first.reading_percent == pytest.approx(100.0 * (alone - 1.0), rel=1e-7)
     both = 10.0 * (exact[0] + built[1]) / (500.0 + exact[0] + built[1])
     assert second.reading_percent == pytest.approx(100.0 * (both - 1.0), rel=1e-7)
+
+
+@pytest.mark.parametrize("times", [0.26, 0.94, 1.06, 1.25])
+def test_a_shunt_far_off_is_not_filed(times):
+    """No one files three quarters off a strip, nor has most of the current go through what lies across it."""
+    (trim,) = trims(shunt(40.0, coil_ohm=75.0, built=times * 75e-3 / 39.999))
+    assert trim.advice == "make it anew, as this one is too far off to be trimmed"
+
+
+def test_a_multiplier_far_off_is_bought_or_gets_what_it_lacks():
+    """Of 9.5 kΩ a 12 kΩ is the wrong part; an 8.2 kΩ (13.7 % short) is right with 1.3 kΩ in series."""
+    (large,) = trims(multiplier(10.0, built=(12e3,)))
+    assert large.advice == "buy it anew, as this one is too far off to be trimmed"
+    (small,) = trims(multiplier(10.0, built=(8.2e3,)))
+    assert small.advice == "put 1.3 kΩ in series with it"
+
+
+@given(st.floats(-8.0, -0.2))
+def test_advice_is_written_in_plain_figures(power):
+    """No figure of the advice has an exponent, however little or much the part lacks."""
+    (trim,) = trims(shunt(40.0, coil_ohm=75.0, built=75e-3 / 39.999 * (1 - 10.0**power)))
+    assert not re.search(r"\de[+-]?\d", trim.advice)

@@ -286,6 +286,15 @@ def test_a_strip_is_filed_and_a_bobbin_shortened():
     assert "140 °C" in bobbin
 
 
+@pytest.mark.parametrize("text", ["manganin 0.5 mm", "manganin 4 x 1 mm"])
+def test_what_is_too_short_to_trim_gets_no_steps(text):
+    """1.875 mΩ of these is below 20 mm: the one word on it is to take more cross-section."""
+    winding = wound(1.875e-3, 40.0, read_wire(text))
+    assert winding.length_mm < 20.0
+    assert workshop.advice(winding) == ()
+    assert "too short to trim" in " ".join(workshop.objections(winding))
+
+
 @pytest.mark.parametrize(
     "text", ["manganin 0.05 mm", "constantan AWG 20", "nichrome 0.3 mm", "copper 1.5 mm2"]
 )

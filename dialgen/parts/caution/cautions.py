@@ -17,7 +17,6 @@ from dialgen.circuit.transformer import CurrentTransformer
 from dialgen.errors import InputError
 from dialgen.parts.caution.situation import TOUCH_DC_V, Situation
 
-_MAINS_V = 100.0
 _HEAVY_A, _WIRED_A = 10.0, 0.1
 _BEHIND_RESISTORS = (Multiplier.kind, Rectifier.kind)
 _PRACTICE = "common practice"
@@ -107,12 +106,12 @@ CAUTIONS: tuple[Caution, ...] = (
         applies=lambda s: s.battery,
     ),
     Caution(
-        id="mains",
+        id="live leads",
         text="Put a fuse in each live lead where it leaves the supply, one that can break the supply's full "
         "fault current. Keep the distances through air and along surfaces (clearance and creepage) that the "
         "local code asks for.",
-        source=_PRACTICE,
-        applies=lambda s: s.helped and s.may_be_ac and s.volts >= _MAINS_V,
+        source=_LIMITS,
+        applies=lambda s: s.helped,
     ),
     Caution(
         id="direct current arc",

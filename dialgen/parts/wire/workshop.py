@@ -21,7 +21,12 @@ _METRES_MM = 1000.0
 
 
 def advice(winding: Winding) -> tuple[str, ...]:
-    """Return how to make and to trim it, in the order of the work; common practice but for the figures."""
+    """Return how to make and to trim it, in the order of the work; common practice but for the figures.
+
+    Nothing where it is too short to be trimmed, as another is to be made then.
+    """
+    if winding.length_mm < _SHORTEST_MM:
+        return ()
     return tuple(text for step in _STEPS if (text := step(winding)))
 
 

@@ -12,9 +12,9 @@ CIRCUITS = LoadedOnUse(
         "universal shunt": "universal:UniversalShunt",
         "current transformer": "transformer:CurrentTransformer",
         "multiplier": "multiplier:Multiplier",
-        "rectifier": "rectifier:Rectifier",
-        "series ohmmeter": "ohmmeter:SeriesOhmmeter",
-        "shunt ohmmeter": "ohmmeter:ShuntOhmmeter",
+        "rectifier": "rectifiers.rectifier:Rectifier",
+        "series ohmmeter": "ohmmeters.ohmmeter:SeriesOhmmeter",
+        "shunt ohmmeter": "ohmmeters.ohmmeter:ShuntOhmmeter",
         "bridge": "bridge:Bridge",
     },
 )

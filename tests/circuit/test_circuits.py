@@ -17,7 +17,7 @@ from kirchhoff import coil_current
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.kinds import CIRCUITS
 from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.ohmmeters.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.shunt import Rating, Shunt, read_rating
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.errors import InputError

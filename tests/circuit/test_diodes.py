@@ -14,9 +14,9 @@ from scipy.integrate import quad
 from scipy.optimize import brentq
 from sine_loops import VT, knee, log_floats, loop_current, quarter_mean
 
-from dialgen.circuit.conduction import Ideal, Threshold
-from dialgen.circuit.diodes import TYPICAL, read_diode
-from dialgen.circuit.junction import THERMAL_V, Exponential
+from dialgen.circuit.rectifiers.conduction import Ideal, Threshold
+from dialgen.circuit.rectifiers.diodes import TYPICAL, read_diode
+from dialgen.circuit.rectifiers.junction import THERMAL_V, Exponential
 
 DIODES = st.one_of(
     st.sampled_from(list(TYPICAL.values())),

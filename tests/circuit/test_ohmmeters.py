@@ -13,10 +13,10 @@ from hypothesis import given
 from hypothesis import strategies as st
 from scipy.optimize import brentq
 
-from dialgen.circuit.cell import adjuster
 from dialgen.circuit.design import COIL
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.circuit.ohmmeter import TIMES, SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.ohmmeters.cell import adjuster
+from dialgen.circuit.ohmmeters.ohmmeter import TIMES, SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.dialfile.fields import list_of
 from dialgen.dialfile.kinds import read_kind

@@ -16,11 +16,11 @@ from hypothesis import strategies as st
 from scipy.optimize import brentq, fsolve
 from sine_loops import VT, knee, log_floats, loop_current, quarter_mean
 
-from dialgen.circuit.connections import CONNECTIONS, Port
 from dialgen.circuit.design import COIL
-from dialgen.circuit.diodes import TYPICAL, read_diode
 from dialgen.circuit.kinds import CIRCUITS
-from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.rectifiers.connections import CONNECTIONS, Port
+from dialgen.circuit.rectifiers.diodes import TYPICAL, read_diode
+from dialgen.circuit.rectifiers.rectifier import Rectifier
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.dial import build
 from dialgen.dialfile import Source, parse

@@ -5,9 +5,9 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from dialgen.circuit.diodes import SILICON, read_diode
 from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.rectifiers.diodes import SILICON, read_diode
+from dialgen.circuit.rectifiers.rectifier import Rectifier
 from dialgen.circuit.shunt import Shunt, read_rating
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.transformer import CurrentTransformer, read_ratio

@@ -14,8 +14,8 @@ from hypothesis import strategies as st
 from parts_designs import behind, multiplier, multipliers, ohm, shunt, universal, volts
 
 from dialgen.circuit.bridge import Bridge
-from dialgen.circuit.diodes import read_diode
-from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.rectifiers.diodes import read_diode
+from dialgen.circuit.rectifiers.rectifier import Rectifier
 from dialgen.errors import InputError
 from dialgen.parts.assessed import assess
 from dialgen.parts.bench import Bench

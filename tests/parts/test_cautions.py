@@ -9,8 +9,8 @@ from hypothesis import strategies as st
 
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
-from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.ohmmeters.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.rectifiers.rectifier import Rectifier
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.circuit.transformer import CurrentTransformer, read_ratio

@@ -11,7 +11,7 @@ from hypothesis import strategies as st
 from scipy.optimize import brentq
 
 from dialgen.circuit.design import COIL
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.ohmmeters.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
 from dialgen.circuit.terminals import Coil, Terminals
 from dialgen.parts.assessed import assess
 from dialgen.parts.drift import Materials, drifts

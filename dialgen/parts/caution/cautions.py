@@ -11,7 +11,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from dialgen.circuit.multiplier import Multiplier
-from dialgen.circuit.rectifier import Rectifier
+from dialgen.circuit.rectifiers.rectifier import Rectifier
 from dialgen.circuit.shunt import Shunt
 from dialgen.circuit.transformer import CurrentTransformer
 from dialgen.errors import InputError

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from dialgen.circuit.design import COIL, Case, Design, Ohms
 from dialgen.circuit.direct import Direct
 from dialgen.circuit.names import SHUNT, SUPPRESS
-from dialgen.circuit.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
+from dialgen.circuit.ohmmeters.ohmmeter import SeriesOhmmeter, ShuntOhmmeter
 from dialgen.parts.ratings import USUAL_RATINGS_V
 
 MOST_HELPED_V = 1000.0

@@ -1,9 +1,9 @@
 """What a sine drives through rectifying junctions and a resistance in series, averaged over a half cycle.
 
-Every connection of a rectifier instrument comes down to this one loop (`dialgen.circuit.connections`): while
-a sine of some peak is positive it drives a current through ``ohms`` and ``count`` junctions.  A moving coil
-follows the mean of that current, heat its square.  A `Junction` says what a diode does in the loop; here
-are the two that have closed forms, the real one is in `dialgen.circuit.junction`.
+Every connection of a rectifier instrument comes down to this one loop (see `connections`): while a sine
+of some peak is positive it drives a current through ``ohms`` and ``count`` junctions.  A moving coil
+follows the mean of that current, heat its square.  A `Junction` says what a diode does in the loop;
+here are the two that have closed forms, the real one is in `junction`.
 """
 
 from __future__ import annotations

@@ -13,11 +13,11 @@ from __future__ import annotations
 import math
 from collections.abc import Callable, Sequence
 
-from dialgen.circuit.cell import Adjuster, life_facts, travel_facts
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
 from dialgen.circuit.names import BATTERY, SERIES, SHUNT, ZERO
 from dialgen.circuit.network import Branch, solve
-from dialgen.circuit.ohm_chain import OhmChain
+from dialgen.circuit.ohmmeters.cell import Adjuster, life_facts, travel_facts
+from dialgen.circuit.ohmmeters.chain import OhmChain
 from dialgen.quantity import plain_number
 
 _ROUND = 1e-9

@@ -21,7 +21,7 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
-from dialgen.circuit.conduction import Averages, Curve, Figure, settled
+from dialgen.circuit.rectifiers.conduction import Averages, Curve, Figure, settled
 from dialgen.stage import Array
 
 if TYPE_CHECKING:

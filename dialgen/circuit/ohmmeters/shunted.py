@@ -11,10 +11,10 @@ import math
 from collections.abc import Callable
 from dataclasses import dataclass
 
-from dialgen.circuit.cell import Adjuster, Cell, adjuster, life_facts, travel_facts
 from dialgen.circuit.design import COIL, Case, Design, Fact, Ohms, Part, Working
 from dialgen.circuit.names import BATTERY, FEED, FULL, SERIES, SHUNT
 from dialgen.circuit.network import Branch, solve
+from dialgen.circuit.ohmmeters.cell import Adjuster, Cell, adjuster, life_facts, travel_facts
 from dialgen.circuit.terminals import RESISTANCE_KEY
 from dialgen.errors import InputError
 from dialgen.quantity import engineered

@@ -9,7 +9,7 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass, replace
 
-from dialgen.circuit.cell import Adjuster, Cell, adjuster
+from dialgen.circuit.ohmmeters.cell import Adjuster, Cell, adjuster
 from dialgen.circuit.terminals import CURRENT_KEY, RESISTANCE_KEY
 from dialgen.errors import InputError
 from dialgen.quantity import engineered

@@ -8,12 +8,12 @@ from typing import Annotated, ClassVar, Literal
 
 import numpy as np
 
-from dialgen.circuit.cell import cell_of, check_cell, undesigned
 from dialgen.circuit.design import COIL, Design
-from dialgen.circuit.ohm_chain import OhmChain
+from dialgen.circuit.ohmmeters.cell import cell_of, check_cell, undesigned
+from dialgen.circuit.ohmmeters.chain import OhmChain
+from dialgen.circuit.ohmmeters.series import range_name, series_design
+from dialgen.circuit.ohmmeters.shunted import Fed, fed, shunt_design
 from dialgen.circuit.ranges import MOST_RANGES
-from dialgen.circuit.series_ohmmeter import range_name, series_design
-from dialgen.circuit.shunt_ohmmeter import Fed, fed, shunt_design
 from dialgen.circuit.terminals import Circuit, Coil, Terminals
 from dialgen.errors import InputError
 from dialgen.quantity import OHM_ABOVE, VOLT_ABOVE, Amount, Listed, Number, engineered

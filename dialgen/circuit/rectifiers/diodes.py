@@ -6,8 +6,8 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from difflib import get_close_matches
 
-from dialgen.circuit.conduction import Ideal, Junction, Threshold
-from dialgen.circuit.junction import Exponential
+from dialgen.circuit.rectifiers.conduction import Ideal, Junction, Threshold
+from dialgen.circuit.rectifiers.junction import Exponential
 from dialgen.quantity import AMPERE, OHM, Measure, Written, engineered, read_number, shown
 
 TYPICAL: Mapping[str, Exponential] = {

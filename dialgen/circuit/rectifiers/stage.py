@@ -6,7 +6,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from dialgen.circuit.conduction import Curve
+from dialgen.circuit.rectifiers.conduction import Curve
 from dialgen.stage import Array, Span
 
 

@@ -13,9 +13,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from dialgen.circuit.conduction import Averages, Junction
-from dialgen.circuit.connections import Connection, Port
 from dialgen.circuit.design import COIL, Fact, Load, Ohms, Working
+from dialgen.circuit.rectifiers.conduction import Averages, Junction
+from dialgen.circuit.rectifiers.connections import Connection, Port
 from dialgen.quantity import engineered, plain_number
 
 _NOTHING = Averages(*[np.zeros(())] * 4)

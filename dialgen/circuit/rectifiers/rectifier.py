@@ -10,12 +10,12 @@ from typing import Annotated, ClassVar, Literal
 import numpy as np
 
 from dialgen.circuit.built import BUILT
-from dialgen.circuit.connections import CONNECTIONS, coil_with_shunt
 from dialgen.circuit.design import COIL, Case, Design, Fact, Part
-from dialgen.circuit.diodes import DIODE, SILICON, Diode
 from dialgen.circuit.names import COIL_SHUNT, LEG, MULTIPLIER
-from dialgen.circuit.rectifier_stage import RectifierStage
-from dialgen.circuit.rectifier_work import RectifierWork
+from dialgen.circuit.rectifiers.connections import CONNECTIONS, coil_with_shunt
+from dialgen.circuit.rectifiers.diodes import DIODE, SILICON, Diode
+from dialgen.circuit.rectifiers.stage import RectifierStage
+from dialgen.circuit.rectifiers.work import RectifierWork
 from dialgen.circuit.slips import Fitted, is_near, refuse_slips, slip_remarks
 from dialgen.circuit.terminals import RESISTANCE_KEY, Circuit, Terminals
 from dialgen.errors import InputError, Remark

@@ -1,0 +1,1 @@
+"""Ohmmeters: the cell, the coil with its adjuster, and their designs."""

@@ -1,0 +1,1 @@
+"""Rectifier instruments: what a diode does, how diodes are connected, and the coil's mean current."""

@@ -182,6 +182,9 @@ class Face:
         Args:
             circuit: which one.
             bench: what the maker has, for what one resistor stands; the file's own where it is left out.
+
+        Raises:
+            InputError: it is for more than 1 kV.
         """
         from dialgen.parts.bill import splits_of
         from dialgen.parts.caution.cautions import cautions
@@ -192,7 +195,12 @@ class Face:
         coil = ((movement.current, "A"), (movement.resistance, "Ω"))
         design = circuit.design
         splits = splits_of(design, bench or self.bench(), movement.kind)
-        heeded = cautions(situation_of(design, movement.kind))
+        situation = situation_of(design, movement.kind)
+        if situation.beyond_help:
+            raise InputError(
+                "above 1 kV this program gives no design help, so it draws no schematic; "
+                "give the work to a specialist in high voltage"
+            )
         if movement.kind == "moving iron":
             # It deflects one way whatever the current's, so its terminals have no poles.
             design = replace(design, alternating=True)
@@ -201,7 +209,7 @@ class Face:
             title=f"{name}: {design.kind}" if name else design.kind,
             coil=tuple(engineered(value, unit) for value, unit in coil if value is not None),
             splits={each.part: each.count for each in splits},
-            earthed=any(caution.id == "earthy end" for caution in heeded),
+            earthed=any(caution.id == "earthy end" for caution in cautions(situation)),
         )
 
     def render(

@@ -137,14 +137,8 @@ def _progress(part: str) -> Callable[[int, int], None]:
 
 def _draw(face: Face, bills: Sequence[tuple[Designed, Bill]], bench: Bench, outputs: tuple[str, ...]) -> None:
     from dialgen import api
-    from dialgen.errors import InputError
     from dialgen.renderers import render
 
-    if any(bill.assessment is None for _, bill in bills):
-        raise InputError(
-            "above 1 kV this program gives no design help, so it draws no schematic; "
-            "give the work to a specialist in high voltage"
-        )
     drawings = [face.schematic(each, bench) for each, _ in bills]
     files = []
     for path in map(Path, outputs):

@@ -204,7 +204,7 @@ def test_a_split_that_makes_no_sense_is_refused(splits, message):
 
 @pytest.mark.parametrize(("volts", "marked"), [(40, False), (60, True), (300, True)])
 def test_the_earthed_end_is_marked_where_touch_is_dangerous(tmp_path, volts, marked):
-    """Above 50 V AC (IEC 60364-4-41, from memory) the end behind the movement is named; above 1 kV not."""
+    """Above 50 V AC (IEC 60364-4-41, from memory) the end behind the movement is named."""
     face, circuit = ac_voltmeter(tmp_path, volts)
     assert ("earthed end ~" in texts(face.schematic(circuit))) == marked
 

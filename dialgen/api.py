@@ -194,8 +194,7 @@ class Face:
         movement, name = self.dial.file.movement, self.dial.file.dial.name
         coil = ((movement.current, "A"), (movement.resistance, "Ω"))
         design = circuit.design
-        splits = splits_of(design, bench or self.bench(), movement.kind)
-        situation = situation_of(design, movement.kind)
+        situation = situation_of(design, movement.kind, (bench or self.bench()).voltage_v)
         if situation.beyond_help:
             raise InputError(
                 "above 1 kV this program gives no design help, so it draws no schematic; "
@@ -208,7 +207,7 @@ class Face:
             design,
             title=f"{name}: {design.kind}" if name else design.kind,
             coil=tuple(engineered(value, unit) for value, unit in coil if value is not None),
-            splits={each.part: each.count for each in splits},
+            splits={each.part: each.count for each in splits_of(circuit.design, situation)},
             earthed=any(caution.id == "earthy end" for caution in cautions(situation)),
         )
 

@@ -15,7 +15,16 @@ from dialgen.circuit.network import Branch, Feed, solve
 from dialgen.circuit.slips import Fitted, refuse_slips, slip_remarks
 from dialgen.circuit.terminals import CURRENT_KEY, Circuit, Terminals
 from dialgen.errors import InputError, Remark
-from dialgen.quantity import AMPERE, OHM, Amount, Measure, Written, engineered, plain_number, shown
+from dialgen.quantity import (
+    AMPERE,
+    OHM,
+    Amount,
+    Measure,
+    Written,
+    engineered,
+    in_figures,
+    shown,
+)
 from dialgen.stage import Affine, Stage
 
 _EQUAL = 1e-12
@@ -142,8 +151,8 @@ class Shunt(Circuit):
         over, shunt_ohm = shunt_a / self.rated.current_a, self.built.value if self.built else ohms[SHUNT]
         text = (
             f"at full deflection this shunt carries {engineered(shunt_a, 'A', 3)} of the "
-            f"{engineered(self.rated.current_a, 'A')} it is made for, and has {_figure(over**2)} times its "
-            f"heat to get rid of, {engineered(shunt_a**2 * shunt_ohm, 'W', 3)}; take one for "
+            f"{engineered(self.rated.current_a, 'A')} it is made for, and has {in_figures(over**2)} times "
+            f"its heat to get rid of, {engineered(shunt_a**2 * shunt_ohm, 'W', 3)}; take one for "
             f"{engineered(shunt_a, 'A', 2)} or more"
         )
         return (Remark(text, ("rated",)),)
@@ -199,10 +208,6 @@ class Shunt(Circuit):
 def _branch_ohm(ohms: Ohms) -> float:
     """Return the resistance of coil, leads and swamping resistor in series."""
     return ohms[COIL] + ohms[SWAMP] + ohms[LEADS]
-
-
-def _figure(value: float) -> str:
-    return plain_number(float(f"{value:.2g}"))
 
 
 def _rating_fact(rated: Rating | None) -> tuple[Fact, ...]:

@@ -12,7 +12,7 @@ from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass
 
 from dialgen.errors import InputError, Key, Remark
-from dialgen.quantity import engineered, plain_number
+from dialgen.quantity import engineered, in_figures
 
 _NEAR = 1.5
 """Within this factor of full deflection, at the end of the range, nothing is said."""
@@ -56,10 +56,10 @@ class Fitted:
         built, designed = (engineered(ohms, "Ω", 4) for ohms in (self.built_ohm, self.designed_ohm))
         off = "where none is needed"
         if 0 < self.designed_ohm < math.inf:
-            off = f"{_figure(self.built_ohm / self.designed_ohm)} times the designed {designed}"
+            off = f"{in_figures(self.built_ohm / self.designed_ohm, 3)} times the designed {designed}"
         return (
-            f"as built {self.name} is {built}, {off}, and drives the coil to {_figure(self.drive)} times "
-            "full deflection at the end of the range"
+            f"as built {self.name} is {built}, {off}, and drives the coil to {in_figures(self.drive, 3)} "
+            "times full deflection at the end of the range"
         )
 
 
@@ -109,7 +109,3 @@ def worst_of(
 
 def _off(ratio: float) -> float:
     return max(ratio, 1.0 / ratio) if ratio > 0 else math.inf
-
-
-def _figure(value: float) -> str:
-    return plain_number(float(f"{value:.3g}"))

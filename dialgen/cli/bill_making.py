@@ -6,12 +6,12 @@ import math
 from collections.abc import Iterator, Sequence
 
 from dialgen.circuit.design import Design
-from dialgen.cli.columns import columns, figure, listed, percent, wrapped
+from dialgen.cli.columns import columns, listed, percent, wrapped
 from dialgen.parts.bill import Bill
 from dialgen.parts.drift import NoSwamping, Remade, Swamping
 from dialgen.parts.stock.search import Candidate, Search
 from dialgen.parts.wire.workshop import advice, objections, summary
-from dialgen.quantity import engineered, plain_number
+from dialgen.quantity import engineered, in_figures, plain_number
 
 _SHOWN_CANDIDATES = 5
 _FAR = 0.2
@@ -41,14 +41,14 @@ def _swamping(bill: Bill) -> Iterator[str]:
             yield from wrapped(f"Swamping: {_swamped(bill.design, found)}.")
         case NoSwamping() as found:
             mend = (
-                f"; with this movement a signal {figure(found.range_factor)} times as large at full scale "
-                "would have the wanted drift"
+                f"; with this movement a signal {in_figures(found.range_factor)} times as large at full "
+                "scale would have the wanted drift"
                 if found.range_factor
                 else ""
             )
             yield from wrapped(
                 "Swamping does not help: full scale and movement fix the whole resistance, of which "
-                f"{figure(100 * found.copper_share)} % is copper{mend}."
+                f"{in_figures(100 * found.copper_share)} % is copper{mend}."
             )
 
 
@@ -101,7 +101,7 @@ def _candidate(found: Candidate) -> tuple[str, ...]:
         engineered(found.ohms, "Ω"),
         percent(100 * found.error),
         str(found.parts),
-        f"{figure(100 * found.share)} % of the power",
+        f"{in_figures(100 * found.share)} % of the power",
     )
 
 
@@ -129,8 +129,8 @@ def old_face_lines(unit: str, whole: float, rows: Sequence[tuple[float, float]])
             *(
                 (
                     plain_number(value),
-                    plain_number(float(f"{shown:.5g}")),
-                    plain_number(float(f"{shown - value:.3g}")),
+                    in_figures(shown, 5),
+                    in_figures(shown - value, 3),
                     percent(100 * (shown - value) / whole) if share else "",
                 )
                 for value, shown in rows

@@ -7,13 +7,13 @@ from collections.abc import Iterator, Sequence
 
 from dialgen.circuit.design import Design, Fact
 from dialgen.cli.bill_making import MAKING
-from dialgen.cli.columns import columns, figure, listed, percent, table, wrapped
+from dialgen.cli.columns import columns, listed, percent, table, wrapped
 from dialgen.parts.assessed import Assessment, Carried, CaseAssessed, PartAssessed
 from dialgen.parts.bill import Bill
 from dialgen.parts.caution.cautions import CAUTIONS
 from dialgen.parts.fits import Together, is_bought, is_there, is_wound
 from dialgen.parts.preferred import LEAST_BOUGHT_OHM
-from dialgen.quantity import engineered, plain_number
+from dialgen.quantity import engineered, in_figures, plain_number
 
 _PREFIXED = ("A", "V", "Ω", "W", "Ω/V")
 
@@ -195,10 +195,10 @@ def _all_together(together: Sequence[Together], *, alone: bool) -> Iterator[tupl
     yield ("tolerance", *(f"±{plain_number(each.tolerance_percent)} %" for each in together))
     yield (
         "  moves it" if alone else "  at worst",
-        *(f"±{figure(each.worst_percent)} %" for each in together),
+        *(f"±{in_figures(each.worst_percent)} %" for each in together),
     )
     if not alone:
-        yield ("  likely", *(f"±{figure(each.likely_percent)} %" for each in together))
+        yield ("  likely", *(f"±{in_figures(each.likely_percent)} %" for each in together))
 
 
 def _wound(bill: Bill) -> Iterator[str]:
@@ -223,7 +223,7 @@ def _fact(fact: Fact) -> str:
     if not math.isfinite(fact.value):
         return fact.note
     # A burden is 0.5 VA in the trade, and a share has no prefix.
-    whole = plain_number(float(f"{fact.value:.3g}"))
+    whole = in_figures(fact.value, 3)
     value = engineered(fact.value, fact.unit, 4) if fact.unit in _PREFIXED else f"{whole} {fact.unit}".strip()
     return f"{value}, {fact.note}" if fact.note else value
 

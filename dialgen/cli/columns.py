@@ -63,8 +63,3 @@ def listed(names: Sequence[str]) -> str:
     """
     *most, last = names
     return f"{', '.join(most)} and {last}" if most else last
-
-
-def figure(value: float) -> str:
-    """Return a number of two figures."""
-    return plain_number(float(f"{value:.2g}"))

@@ -76,13 +76,13 @@ def _fields(symbol: Symbol) -> dict[str, object]:
 
 
 def _print_list() -> None:
+    from dialgen.cli.columns import columns
     from dialgen.symbols import SYMBOLS
 
     heads = ("write", "meaning", "shape", "number", "")
     rows = [heads, *map(_row, SYMBOLS)]
-    widths = [max(map(len, column)) for column in zip(*rows, strict=True)]
-    for row in rows:
-        click.echo("  ".join(cell.ljust(w) for cell, w in zip(row, widths, strict=True)).rstrip())
+    for line in columns(rows, left=len(heads)):
+        click.echo(line)
 
 
 def _row(symbol: Symbol) -> tuple[str, ...]:

@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING
 
 import click
 
+from dialgen.cli.columns import columns
 from dialgen.cli.report import say_lines, say_warnings
 
 if TYPE_CHECKING:
@@ -159,8 +160,7 @@ def _columns(rows: list[tuple[str, ...]]) -> list[str]:
     table = [tuple(_HEADS), tuple(_HEADS.values()), *rows]
     if all(label in ("", value) for value, label, *_ in rows):
         table = [(value, *rest) for value, _, *rest in table]
-    widths = [max(map(len, column)) for column in zip(*table, strict=True)]
-    return ["  ".join(cell.rjust(w) for cell, w in zip(row, widths, strict=True)).rstrip() for row in table]
+    return columns(table, left=0)
 
 
 def _spreads(scales: Mapping[int, RuledScale]) -> list[str]:

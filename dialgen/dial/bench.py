@@ -7,7 +7,6 @@ from typing import TypeVar
 
 import numpy as np
 
-from dialgen.circuit.terminals import Coil
 from dialgen.dialfile.models import Movement, OldScale
 from dialgen.dialfile.readings import Reading
 from dialgen.errors import InputError, Key, Remark
@@ -113,7 +112,7 @@ def _applied(movement: Movement, reading: Reading) -> tuple[bool, float]:
     """Return whether a reading was taken by value, and that value, or else the drive it stands for."""
     if reading.value is not None:
         return True, reading.value
-    coil = Coil(current=movement.current, resistance=movement.resistance)
+    coil = movement.coil
     if reading.current is not None:
         return False, reading.current / coil.current_a("a reading by current")
     drop_v = coil.current_a("a reading by voltage") * coil.resistance_ohm("a reading by voltage")

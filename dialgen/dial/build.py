@@ -62,7 +62,7 @@ def build(file: DialFile) -> Dial:
 def attempt(file: DialFile) -> tuple[Dial, list[InputError]]:
     """Return the dial with the scales that can be made, and what is wrong with the others."""
     errors: list[InputError] = []
-    coil = Coil(current=file.movement.current, resistance=file.movement.resistance)
+    coil = file.movement.coil
     wirings: dict[int, Wiring | None] = {}
     for i, scale in enumerate(file.scale):
         try:

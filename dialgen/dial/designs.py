@@ -84,7 +84,7 @@ def _sameness(circuit: Circuit, design: Design) -> tuple[object, ...]:
 def _circuits(dial: Dial, scale: ScaleDial) -> Iterator[tuple[int, Key, Circuit, Terminals, Wiring | None]]:
     """Yield the circuit of a scale and those of its further rows."""
     file, spec, own = dial.file, scale.spec, scale.wiring
-    coil = Coil(current=file.movement.current, resistance=file.movement.resistance)
+    coil = file.movement.coil
     if own is not None:
         yield 0, own.circuit_key or scale.key, own.circuit, own.terminals, own
     elif (circuit := spec.circuit or file.circuit) is not None:

@@ -7,6 +7,7 @@ from typing import Annotated, Protocol
 
 from pydantic import BeforeValidator, Field, PlainValidator
 
+from dialgen.circuit.terminals import Coil
 from dialgen.dialfile import fields
 from dialgen.dialfile.base import Table, needs, placed
 from dialgen.dialfile.fields import Angle, CurrentA, FaceValue, LengthAbove, ResistanceOhm
@@ -143,6 +144,11 @@ class Movement(Table):
     @needs("reading", "readings")
     def _readings_once(self) -> Iterator[InputError]:
         yield from readings_once(self)
+
+    @property
+    def coil(self) -> Coil:
+        """The movement as a circuit sees it."""
+        return Coil(current=self.current, resistance=self.resistance)
 
     def all_readings(self) -> tuple[Reading, ...]:
         """Return the readings, wherever they stand."""

@@ -85,7 +85,7 @@ def bill(
         design=design,
         assessment=assessment,
         trims=trims(design),
-        splits=_splits(design, situation),
+        splits=splits_of(design, situation),
         searches=tuple(
             (
                 each.part.name,
@@ -105,19 +105,8 @@ def bill(
     )
 
 
-def splits_of(design: Design, bench: Bench, movement: str) -> tuple[Split, ...]:
-    """Return the resistors to be made of several for their voltage, without the rest of the bill.
-
-    Args:
-        design: the circuit; above 1 kV nothing is told of it.
-        bench: what the maker has: what one resistor stands.
-        movement: the movement's kind.
-    """
-    situation = situation_of(design, movement, bench.voltage_v)
-    return () if situation.beyond_help else _splits(design, situation)
-
-
-def _splits(design: Design, situation: Situation) -> tuple[Split, ...]:
+def splits_of(design: Design, situation: Situation) -> tuple[Split, ...]:
+    """Return the resistors to be made of several for their voltage; none of what is no voltmeter."""
     if situation.takes != "V":
         return ()
     ranges = worked(design)

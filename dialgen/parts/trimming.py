@@ -9,7 +9,7 @@ from dataclasses import dataclass, replace
 from dialgen.circuit.design import Design, Part
 from dialgen.parts.preferred import LEAST_BOUGHT_OHM
 from dialgen.parts.worked import Worked, largest, worked
-from dialgen.quantity import engineered, plain_number
+from dialgen.quantity import engineered, in_figures
 
 _SAME = 1e-9
 _TRIMMED_PERCENT = 5.0
@@ -58,7 +58,7 @@ class Trim:
             return "nothing to do"
         if bought:
             return f"put {engineered(self.series_ohm, 'Ω', 4)} in series with it"
-        filed, longer = (_figure(share * 100) for share in (self.filed_share, self.longer_share))
+        filed, longer = (in_figures(share * 100) for share in (self.filed_share, self.longer_share))
         return (
             f"file or scrape {filed} % off its cross-section along the whole length between the sense "
             f"points, or set these {longer} % farther apart"
@@ -76,10 +76,6 @@ def trims(design: Design) -> tuple[Trim, ...]:
         for part in design.parts
         if part.built and not part.sums and 0 < part.ohms < math.inf
     )
-
-
-def _figure(value: float) -> str:
-    return plain_number(float(f"{value:.2g}"))
 
 
 def _trim(part: Part, built: float, ranges: Sequence[Worked]) -> Trim:

@@ -21,7 +21,7 @@ from dialgen.quantity.reading import (
     read_length,
     read_number,
 )
-from dialgen.quantity.showing import engineered, plain_number, shown
+from dialgen.quantity.showing import engineered, in_figures, plain_number, shown
 from dialgen.quantity.temperature import TEMPERATURE, ZERO_CELSIUS_K, meant_degree
 from dialgen.quantity.units import folded_unit, shown_unit, split_unit
 
@@ -43,7 +43,7 @@ __all__ = [
     "Written",
     "bare_number",
     "engineered",
-    "folded_unit",
+    "folded_unit", "in_figures",
     "meant_degree",
     "plain_number",
     "read_length",

@@ -22,6 +22,15 @@ def plain_number(value: float) -> str:
     return text.replace("-", "−") if text != "-0" else "0"
 
 
+def in_figures(value: float, figures: int = 2) -> str:
+    """Return a number of so many figures, as `plain_number` writes it.
+
+    >>> in_figures(0.012345), in_figures(74.6), in_figures(1234.5, 3)
+    ('0.012', '75', '1230')
+    """
+    return plain_number(float(f"{value:.{figures}g}"))
+
+
 def engineered(value: float, unit: str, digits: int = 5) -> str:
     """Return an amount with the SI prefix that leaves one to three figures before the point.
 
@@ -33,7 +42,7 @@ def engineered(value: float, unit: str, digits: int = 5) -> str:
     rounded = float(f"{value:.{digits}g}")
     power = min(max(math.floor(math.log10(abs(rounded)) / 3 + 1e-12), min(_BY_THOUSANDS)), max(_BY_THOUSANDS))
     mantissa = float(f"{rounded:.{digits}g}") / 10.0 ** (3 * power)
-    return f"{plain_number(float(f'{mantissa:.{digits}g}'))} {_BY_THOUSANDS[power]}{unit}"
+    return f"{in_figures(mantissa, digits)} {_BY_THOUSANDS[power]}{unit}"
 
 
 def shown(given: object) -> str:

@@ -8,7 +8,7 @@ from dataclasses import dataclass, replace
 
 from dialgen.parts.wire.gauges import awg_diameter_mm, gauge_name, read_gauge
 from dialgen.parts.wire.materials import MATERIALS, Material, known_materials, meant_material
-from dialgen.quantity import OHM_ABOVE, plain_number, read_length, shown
+from dialgen.quantity import OHM_ABOVE, in_figures, plain_number, read_length, shown
 from dialgen.quantity.units import plain_text
 
 _EXAMPLE = 'write for example "manganin 0.5 mm", "constantan AWG 24" or "manganin 20 x 1 mm"'
@@ -72,7 +72,7 @@ class Wire:
     @property
     def name(self) -> str:
         """What it is, in words."""
-        width = plain_number(float(f"{self.width_mm:.4g}"))
+        width = in_figures(self.width_mm, 4)
         if self.thickness_mm is not None:
             return f"{self.material.name} strip {width} × {plain_number(self.thickness_mm)} mm"
         gauge = "" if self.gauge is None else f", {gauge_name(self.gauge)}"

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable
 
 from dialgen.parts.wire.winding import Winding
-from dialgen.quantity import engineered, plain_number
+from dialgen.quantity import engineered, in_figures
 
 PRECISE_RISE_K, RUINOUS_RISE_K = 60.0, 120.0
 """How warm a precise shunt may get, and what its solder, varnish and ageing do not stand.  Common
@@ -49,15 +49,11 @@ def _length(length_mm: float) -> str:
     return engineered(length_mm / 1000, "m", 3)
 
 
-def _figure(value: float) -> str:
-    return plain_number(float(f"{value:.2g}"))
-
-
 def _batch(winding: Winding) -> str | None:
     wire = winding.wire
     if wire.measured or wire.thickness_mm is not None:
         return None
-    least, most = (plain_number(float(f"{each:.3g}")) for each in (wire.material.least, wire.material.most))
+    least, most = (in_figures(each, 3) for each in (wire.material.least, wire.material.most))
     return (
         f"Measure the ohms of one metre first: {wire.material.name} has {least} to {most} Ω·mm²/m, and a "
         f"diameter wrong by 1 % is 2 % in ohms. "
@@ -75,7 +71,7 @@ def _bifilar(winding: Winding) -> str | None:
         return None
     return (
         "Fold the wire in the middle and wind both halves side by side (bifilar), so that the bobbin has "
-        f"almost no inductance. It takes about {_figure(winding.room_cm3)} cm³ of winding space."
+        f"almost no inductance. It takes about {in_figures(winding.room_cm3)} cm³ of winding space."
     )
 
 
@@ -101,7 +97,7 @@ def _cut(winding: Winding) -> str | None:
 def _four_wire(winding: Winding) -> str | None:
     if winding.ohms > _FOUR_WIRE_OHM:
         return None
-    percent = _figure(100 * winding.ohm_per_mm / winding.ohms)
+    percent = in_figures(100 * winding.ohm_per_mm / winding.ohms)
     return (
         "Measure with four wires: current in at the ends, voltage taken at two points inside them. One "
         f"millimetre between these points is {engineered(winding.ohm_per_mm, 'Ω', 3)}, which is {percent} %."
@@ -140,7 +136,7 @@ def _hot(winding: Winding) -> str | None:
     rise_k = winding.rise_k
     if rise_k <= PRECISE_RISE_K:
         return None
-    about = f"about {_figure(rise_k)} K" if rise_k < 500 else "over 500 K"
+    about = f"about {in_figures(rise_k)} K" if rise_k < 500 else "over 500 K"
     if rise_k > RUINOUS_RISE_K:
         return (
             f"By estimate it would get {about} hotter than the air, which is too hot. "
@@ -164,7 +160,7 @@ def _dense(winding: Winding) -> str | None:
         return None
     built = "close windings" if winding.coiled else "strips"
     return (
-        f"The current density is {_figure(winding.density_a_per_mm2)} A/mm²; {built} are kept below "
+        f"The current density is {in_figures(winding.density_a_per_mm2)} A/mm²; {built} are kept below "
         f"{limit:g} A/mm². Take more cross-section."
     )
 
@@ -175,7 +171,7 @@ def _drifts(winding: Winding) -> str | None:
         return None
     way = "rises" if change > 0 else "falls"
     return (
-        f"Warm from its own current the value {way} by about {_figure(abs(change))} %. "
+        f"Warm from its own current the value {way} by about {in_figures(abs(change))} %. "
         "Take manganin, or more cross-section."
     )
 
@@ -185,8 +181,8 @@ def _copper(winding: Winding) -> str | None:
     if copper.name != "copper":
         return None
     return (
-        f"Copper changes by {_figure(100 * copper.per_k)} % for each kelvin. Take manganin, unless it is to "
-        "follow the movement's coil and stays as cool as the coil."
+        f"Copper changes by {in_figures(100 * copper.per_k)} % for each kelvin. Take manganin, unless it is "
+        "to follow the movement's coil and stays as cool as the coil."
     )
 
 
@@ -197,7 +193,7 @@ def _thermo_emf(winding: Winding) -> str | None:
         return None
     return (
         f"On direct current, {_EMF_DIFFERENCE_K:g} K between its two ends give "
-        f"{engineered(emf_v, 'V', 2)} against copper, {_figure(100 * emf_v / drop_v)} % of its drop. "
+        f"{engineered(emf_v, 'V', 2)} against copper, {in_figures(100 * emf_v / drop_v)} % of its drop. "
         + ("Keep both ends equally warm." if winding.wire.material.name == "manganin" else "Take manganin.")
     )
 
